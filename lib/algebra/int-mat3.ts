@@ -1,0 +1,103 @@
+/** Row-major: entry (i, j) is m[3 * i + j]. */
+export type IntMat3 = readonly [number, number, number, number, number, number, number, number, number];
+/** A column or a row of three integers, as the function says. */
+export type IntVec3 = readonly [number, number, number];
+
+export const IDENTITY: IntMat3 = [1, 0, 0, 0, 1, 0, 0, 0, 1];
+export const MINUS_IDENTITY: IntMat3 = [-1, 0, 0, 0, -1, 0, 0, 0, -1];
+
+/** Matrix product a b. */
+export function multiply(a: IntMat3, b: IntMat3): IntMat3 {
+  const [a0, a1, a2, a3, a4, a5, a6, a7, a8] = a;
+  const [b0, b1, b2, b3, b4, b5, b6, b7, b8] = b;
+  return [
+    a0 * b0 + a1 * b3 + a2 * b6,
+    a0 * b1 + a1 * b4 + a2 * b7,
+    a0 * b2 + a1 * b5 + a2 * b8,
+    a3 * b0 + a4 * b3 + a5 * b6,
+    a3 * b1 + a4 * b4 + a5 * b7,
+    a3 * b2 + a4 * b5 + a5 * b8,
+    a6 * b0 + a7 * b3 + a8 * b6,
+    a6 * b1 + a7 * b4 + a8 * b7,
+    a6 * b2 + a7 * b5 + a8 * b8,
+  ];
+}
+
+/** m v with v a column. */
+export function apply(m: IntMat3, v: IntVec3): IntVec3 {
+  return [
+    m[0] * v[0] + m[1] * v[1] + m[2] * v[2],
+    m[3] * v[0] + m[4] * v[1] + m[5] * v[2],
+    m[6] * v[0] + m[7] * v[1] + m[8] * v[2],
+  ];
+}
+
+/** v m with v a row. */
+export function applyRow(v: IntVec3, m: IntMat3): IntVec3 {
+  return [
+    v[0] * m[0] + v[1] * m[3] + v[2] * m[6],
+    v[0] * m[1] + v[1] * m[4] + v[2] * m[7],
+    v[0] * m[2] + v[1] * m[5] + v[2] * m[8],
+  ];
+}
+
+export function determinant(m: IntMat3): number {
+  return (
+    m[0] * (m[4] * m[8] - m[5] * m[7]) - m[1] * (m[3] * m[8] - m[5] * m[6]) + m[2] * (m[3] * m[7] - m[4] * m[6]) + 0
+  );
+}
+
+export function trace(m: IntMat3): number {
+  return m[0] + m[4] + m[8];
+}
+
+export function transpose(m: IntMat3): IntMat3 {
+  return [m[0], m[3], m[6], m[1], m[4], m[7], m[2], m[5], m[8]];
+}
+
+/** Adjugate: m adj(m) = det(m) 1. */
+export function adjugate(m: IntMat3): IntMat3 {
+  return [
+    m[4] * m[8] - m[5] * m[7] + 0,
+    m[2] * m[7] - m[1] * m[8] + 0,
+    m[1] * m[5] - m[2] * m[4] + 0,
+    m[5] * m[6] - m[3] * m[8] + 0,
+    m[0] * m[8] - m[2] * m[6] + 0,
+    m[2] * m[3] - m[0] * m[5] + 0,
+    m[3] * m[7] - m[4] * m[6] + 0,
+    m[1] * m[6] - m[0] * m[7] + 0,
+    m[0] * m[4] - m[1] * m[3] + 0,
+  ];
+}
+
+/** Entry by entry times k. */
+export function scale(m: IntMat3, k: number): IntMat3 {
+  return m.map((e) => e * k + 0) as unknown as IntMat3;
+}
+
+export function negate(m: IntMat3): IntMat3 {
+  return scale(m, -1);
+}
+
+export function subtract(a: IntMat3, b: IntMat3): IntMat3 {
+  return a.map((e, i) => e - b[i]!) as unknown as IntMat3;
+}
+
+export function add(a: IntMat3, b: IntMat3): IntMat3 {
+  return a.map((e, i) => e + b[i]!) as unknown as IntMat3;
+}
+
+export function equal(a: IntMat3, b: IntMat3): boolean {
+  for (let i = 0; i < 9; i++) if (a[i] !== b[i]) return false;
+  return true;
+}
+
+/**
+ * Inverse of a matrix with determinant 1 or -1, so that it is integer again.
+ * @throws RangeError for any other determinant
+ */
+export function inverseUnimodular(m: IntMat3): IntMat3 {
+  const det = determinant(m);
+  if (det !== 1 && det !== -1) throw new RangeError(`not unimodular, determinant ${det}: ${m.join(" ")}`);
+  return scale(adjugate(m), det);
+}
