@@ -1,0 +1,29 @@
+/** What is true of a space group before any atom is placed. Everything here is exact. */
+export {
+  type AffineExpression,
+  formatExpression,
+  parseTriplet,
+} from "./affine-text.ts";
+export { centringLetter, centringsOf, primitiveBasis } from "./centring.ts";
+export { DECIMAL_TOLERANCE, fractionFromDecimal } from "./fraction-text.ts";
+export { closeGroup, LARGEST_GROUP, type MissingProduct, missingProduct } from "./group-closure.ts";
+export {
+  compose,
+  IDENTITY_OPERATION,
+  invert,
+  type Operation,
+  operationKey,
+  reduce,
+  sameOperation,
+  transformPoint,
+} from "./operation.ts";
+export { formatOperation, parseOperation } from "./operation-text.ts";
+export { rotationIndex, rotationParts, type SpaceGroup, spaceGroup } from "./space-group.ts";
+export {
+  chain,
+  IDENTITY_TRANSFORMATION,
+  reverse,
+  type Transformation,
+  transformOperation,
+} from "./transformation.ts";
+export { formatBasis, formatTransformation, formatVector, parseTransformation } from "./transformation-text.ts";

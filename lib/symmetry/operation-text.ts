@@ -1,0 +1,40 @@
+import { component, determinant, type IntMat3, modOne, vectorOf } from "../algebra/index.ts";
+import { InputProblem } from "../problem.ts";
+import { type AffineExpression, formatExpression, parseTriplet } from "./affine-text.ts";
+import type { Operation } from "./operation.ts";
+
+/**
+ * Reads a symmetry operation in Jones-faithful notation, however written: `-X, 1/2+Y, z-0.5`, `x-y`, `.3333+z`.
+ * A written fraction is taken exactly; a decimal becomes the crystallographic fraction it rounds. The translation is
+ * reduced to [0, 1).
+ * @throws InputProblem `triplet-unreadable`, or `operation-impossible` where the rotation part is not an integer
+ * matrix of determinant 1 or -1
+ */
+export function parseOperation(text: string): Operation {
+  const rows = parseTriplet(text, "xyz");
+  const entries = rows.flatMap((row) => row.coefficients);
+  const W = entries.map((e) => e.n) as unknown as IntMat3;
+  if (entries.some((e) => e.d !== 1)) throw impossible(text, "its rotation part is not integer in this cell");
+  const det = determinant(W);
+  if (Math.abs(det) !== 1) throw impossible(text, `its rotation part has determinant ${det}, not 1 or -1`);
+  return { W, w: modOne(vectorOf(rows[0].constant, rows[1].constant, rows[2].constant)) };
+}
+
+function impossible(text: string, why: string): InputProblem {
+  return new InputProblem(
+    "operation-impossible",
+    `"${text}" is not a symmetry operation: ${why}`,
+    { start: 0, end: text.length },
+    "check its signs and letters against the others in the list",
+  );
+}
+
+/** The operation as text, letters before the constant: `-x,y+1/2,-z`. */
+export function formatOperation(a: Operation): string {
+  return [0, 1, 2].map((i) => formatExpression(rowOf(a, i), "xyz")).join(",");
+}
+
+function rowOf(a: Operation, i: number): AffineExpression {
+  const entry = (j: number) => ({ n: a.W[3 * i + j]!, d: 1 });
+  return { coefficients: [entry(0), entry(1), entry(2)], constant: component(a.w, i) };
+}
