@@ -1,0 +1,51 @@
+import { InputProblem } from "../problem.ts";
+import { SPACE_GROUP_TYPES } from "./tables/space-group-types.ts";
+
+/** One of the 230 space-group types in its reference setting. */
+export interface SpaceGroupType {
+  /** 1 to 230. */
+  readonly number: number;
+  /** `D2h^16`. */
+  readonly schoenflies: string;
+  /** Short symbol with blanks, all directions named for unique axis b: `P 1 21/c 1`, `P n m a`, `F d -3 m`. */
+  readonly hermannMauguin: string;
+  /** Hall symbol of the reference setting. */
+  readonly hall: string;
+  /** What the reference setting chooses: origin `2`, hexagonal axes `H`, or nothing to choose. */
+  readonly choice: "" | "2" | "H";
+}
+
+let decoded: readonly SpaceGroupType[] | null = null;
+
+/** The 230 types in the order of their numbers; decoded once, on first use. */
+export function spaceGroupTypes(): readonly SpaceGroupType[] {
+  decoded ??= SPACE_GROUP_TYPES.trim()
+    .split("\n")
+    .map((line, i): SpaceGroupType => {
+      const [schoenflies = "", symbol = "", hall = ""] = line.split("|");
+      const [hermannMauguin = "", choice = ""] = symbol.split(":");
+      return {
+        number: i + 1,
+        schoenflies,
+        hermannMauguin,
+        hall,
+        choice: choice.toUpperCase() as SpaceGroupType["choice"],
+      };
+    });
+  return decoded;
+}
+
+/**
+ * The type of a number.
+ * @throws InputProblem `space-group-number` outside 1 to 230
+ */
+export function spaceGroupType(number: number): SpaceGroupType {
+  const type = spaceGroupTypes()[number - 1];
+  if (type) return type;
+  throw new InputProblem(
+    "space-group-number",
+    `there is no space-group type ${number}`,
+    null,
+    "space-group types are numbered from 1 to 230",
+  );
+}
