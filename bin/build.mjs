@@ -1,0 +1,105 @@
+/**
+ * Builds dist/: lib/ file by file with declarations (tsc; no Node types, so a Node API in lib/ stops the build), and
+ * the command line bundled into dist/bin with one chunk per command, so that a command loads only what it needs.
+ * Everything is built beside dist/ and moved into place at the end: a failed build leaves the old one whole.
+ */
+import { spawnSync } from "node:child_process";
+import {
+  chmodSync,
+  existsSync,
+  readdirSync,
+  readFileSync,
+  renameSync,
+  rmSync,
+  utimesSync,
+  writeFileSync,
+} from "node:fs";
+import { createRequire } from "node:module";
+import { basename, dirname, join } from "node:path";
+import { fileURLToPath } from "node:url";
+import { build } from "esbuild";
+
+const root = dirname(dirname(fileURLToPath(import.meta.url)));
+const started = new Date();
+const target = join(root, "dist");
+const fresh = `${target}-${process.pid}`;
+
+try {
+  compileLibrary();
+  await bundleCommandLine();
+  rmSync(target, { recursive: true, force: true });
+  renameSync(fresh, target);
+} catch (error) {
+  process.stderr.write(`build failed: ${error instanceof Error ? error.message : String(error)}\n`);
+  process.exitCode = 1;
+} finally {
+  rmSync(fresh, { recursive: true, force: true });
+}
+
+function compileLibrary() {
+  const require = createRequire(import.meta.url);
+  const manifest = require.resolve("typescript/package.json");
+  const tsc = join(dirname(manifest), require(manifest).bin.tsc);
+  const flags = ["-p", join(root, "tsconfig.build.json"), "--outDir", join(fresh, "lib")];
+  const { status } = spawnSync(process.execPath, [tsc, ...flags], {
+    cwd: root,
+    stdio: ["ignore", "inherit", "inherit"],
+  });
+  if (status !== 0) throw new Error("lib/ does not compile, see above");
+  for (const file of readdirSync(join(fresh, "lib"), { recursive: true, encoding: "utf8" })) {
+    if (file.endsWith(".d.ts")) nameEmittedFiles(join(fresh, "lib", file));
+  }
+}
+
+/** tsc renames `./x.ts` to `./x.js` in code but not in declarations, where older compilers and tools stumble over it. */
+function nameEmittedFiles(file) {
+  const text = readFileSync(file, "utf8");
+  writeFileSync(file, text.replace(/((?:from |import\()"\.[^"]*)\.ts"/g, '$1.js"'));
+}
+
+async function bundleCommandLine() {
+  const out = join(fresh, "bin");
+  const { version } = JSON.parse(readFileSync(join(root, "package.json"), "utf8"));
+  const { metafile } = await build({
+    // A worker is a file of its own, so it is an entry too; chunks lie beside it, so that a sibling's URL holds anywhere.
+    entryPoints: readdirSync(join(root, "bin"), { recursive: true, encoding: "utf8" })
+      .filter((file) => file === "main.ts" || file.endsWith("worker.ts"))
+      .map((file) => join(root, "bin", file)),
+    absWorkingDir: root,
+    outdir: out,
+    entryNames: "[name]",
+    chunkNames: "[name]-[hash]",
+    bundle: true,
+    splitting: true,
+    format: "esm",
+    platform: "node",
+    target: "node20",
+    minifySyntax: true,
+    minifyWhitespace: true, // names stay, for readable stacks
+    charset: "utf8",
+    legalComments: "none", // all licences go into one file instead
+    metafile: true,
+    logLevel: "warning",
+    define: { SITEFOLD_VERSION: JSON.stringify(version) },
+  });
+  writeFileSync(join(out, "LICENCES.txt"), licences(Object.keys(metafile.inputs)));
+  const main = join(out, "main.js");
+  const code = readFileSync(main, "utf8");
+  if (!code.startsWith("#!")) writeFileSync(main, `#!/usr/bin/env node\n${code}`);
+  chmodSync(main, 0o755);
+  utimesSync(main, started, started); // what was saved during the build counts as newer than it
+}
+
+/** Licence texts of the packages whose code is in the bundle. */
+function licences(inputs) {
+  const folders = new Set(inputs.flatMap((file) => /^node_modules\/(?:@[^/]+\/)?[^/]+/.exec(file) ?? []));
+  return [...folders]
+    .sort()
+    .map((folder) => {
+      const { name, version, license } = JSON.parse(readFileSync(join(root, folder, "package.json"), "utf8"));
+      const file = readdirSync(join(root, folder)).find((f) => /^licen[cs]e/i.test(basename(f)));
+      const text = file && existsSync(join(root, folder, file)) ? readFileSync(join(root, folder, file), "utf8") : "";
+      return `${name} ${version} (${license})\n\n${text.trim()}\n`;
+    })
+    .join("\n----\n\n");
+}
