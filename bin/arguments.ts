@@ -1,0 +1,108 @@
+import parser from "yargs-parser";
+
+/** One option of a command. */
+export interface OptionSpec {
+  readonly type: "boolean" | "string" | "number";
+  readonly describe: string;
+  readonly alias?: string;
+  /** What stands for the value in the help: `--tolerance ANGSTROM`. */
+  readonly value?: string;
+  /** May be given several times. */
+  readonly many?: boolean;
+}
+
+/** What a command is called, takes and answers; the help is made from it. */
+export interface CommandSpec {
+  readonly name: string;
+  readonly operands: string;
+  readonly summary: string;
+  readonly options: Readonly<Record<string, OptionSpec>>;
+  /** A command line and what it prints, from a real run. */
+  readonly example: { readonly line: string; readonly output: string };
+}
+
+/** Misuse of the command line; ends with status 2. */
+export class UsageProblem extends Error {
+  override readonly name = "UsageProblem";
+}
+
+/** Options that every command takes. */
+export const COMMON_OPTIONS = {
+  block: { type: "string", value: "NAME", describe: "data block to use, by name or by number from 1" },
+  tolerance: {
+    type: "number",
+    value: "ANGSTROM",
+    describe: "positions closer than this are one position (default 0.05)",
+  },
+  strict: { type: "boolean", describe: "refuse a file with any syntax error instead of reading around it" },
+  json: { type: "boolean", describe: "print one JSON document" },
+  output: { type: "string", value: "FILE", alias: "o", describe: "write to FILE instead of the terminal" },
+} as const satisfies Record<string, OptionSpec>;
+
+export interface Arguments {
+  readonly operands: readonly string[];
+  readonly text: (name: string) => string | null;
+  readonly texts: (name: string) => readonly string[];
+  readonly flag: (name: string) => boolean;
+  readonly number: (name: string) => number | null;
+}
+
+/**
+ * Parses the words after the command's name.
+ * @throws UsageProblem for options that are unknown, lack a value, or have one that is no number
+ */
+export function parseArguments(words: readonly string[], spec: CommandSpec): Arguments {
+  const names = Object.keys(spec.options);
+  const ofType = (types: readonly string[]) => names.filter((n) => types.includes(spec.options[n]!.type));
+  const alias = Object.fromEntries(
+    names.flatMap((n) => (spec.options[n]!.alias ? [[n, spec.options[n]!.alias!]] : [])),
+  );
+  const parsed = parser([...words], {
+    boolean: ofType(["boolean"]),
+    string: [...ofType(["string", "number"]), "_"],
+    alias,
+    configuration: {
+      "camel-case-expansion": false,
+      "dot-notation": false,
+      "parse-positional-numbers": false,
+      "short-option-groups": false,
+      "boolean-negation": false,
+    },
+  });
+  const known = new Set(["_", ...names, ...Object.values(alias)]);
+  for (const key of Object.keys(parsed)) if (!known.has(key)) throw unknownOption(key, names, spec);
+  const texts = (name: string): string[] => {
+    const value: unknown = parsed[name];
+    const list = value === undefined ? [] : Array.isArray(value) ? value : [value];
+    if (list.some((v) => typeof v !== "string" || v === "")) throw new UsageProblem(`--${name} needs a value`);
+    return list as string[];
+  };
+  const text = (name: string): string | null => {
+    const list = texts(name);
+    if (list.length > 1) throw new UsageProblem(`--${name} is given ${list.length} times; give it once`);
+    return list[0] ?? null;
+  };
+  const number = (name: string): number | null => {
+    const written = text(name);
+    if (written === null) return null;
+    const value = Number(written);
+    if (!Number.isFinite(value)) throw new UsageProblem(`--${name} takes a number, not "${written}"`);
+    return value;
+  };
+  return { operands: parsed._.map(String), text, texts, flag: (name) => parsed[name] === true, number };
+}
+
+function unknownOption(key: string, names: readonly string[], spec: CommandSpec): UsageProblem {
+  const near = names.find((n) => n.startsWith(key.slice(0, 3)) || key.startsWith(n));
+  const dashes = key.length === 1 ? "-" : "--";
+  return new UsageProblem(`${spec.name} has no option ${dashes}${key}${near ? `; did you mean --${near}?` : ""}`);
+}
+
+/** The single operand of a command. @throws UsageProblem */
+export function onlyOperand(args: Arguments, what: string): string {
+  const [first, ...others] = args.operands;
+  if (first === undefined) throw new UsageProblem(`${what} is missing`);
+  if (others.length > 0)
+    throw new UsageProblem(`one ${what} at a time, not ${args.operands.length}: ${args.operands.join(" ")}`);
+  return first;
+}

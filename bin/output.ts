@@ -1,0 +1,55 @@
+import { rename, rm, writeFile } from "node:fs/promises";
+import { resolve } from "node:path";
+import type { Arguments } from "./arguments.ts";
+import { UsageProblem } from "./arguments.ts";
+import { LocatedProblem } from "./input.ts";
+
+declare const SITEFOLD_VERSION: string;
+
+/** Version of the package, set at build time. */
+export const VERSION: string = SITEFOLD_VERSION;
+
+/** Fields that every JSON document begins with. */
+export interface Heading {
+  readonly command: string;
+  readonly source: { readonly file: string; readonly block: string };
+  readonly notes: readonly string[];
+  readonly tolerance: { readonly position: number };
+}
+
+/** One JSON document: the heading, then the answer. Every number must be finite. */
+export function jsonDocument(heading: Heading, answer: object): string {
+  const document = { sitefold: VERSION, ...heading, ...answer };
+  return `${JSON.stringify(document, refuseNonFinite, 2)}\n`;
+}
+
+function refuseNonFinite(key: string, value: unknown): unknown {
+  if (typeof value === "number" && !Number.isFinite(value)) throw new RangeError(`${key} is ${value}`);
+  return value;
+}
+
+/**
+ * Writes an answer to the terminal, or to --output: first beside it, then moved into place, so that a failure leaves
+ * an older file as it was. @throws UsageProblem if that would overwrite the input
+ */
+export async function deliver(text: string, args: Arguments, input: string | null): Promise<void> {
+  const target = args.text("output");
+  const whole = text.endsWith("\n") ? text : `${text}\n`;
+  if (target === null) {
+    process.stdout.write(whole);
+    return;
+  }
+  if (input !== null && resolve(target) === resolve(input)) {
+    throw new UsageProblem(`--output ${target} is the input itself; choose another name`);
+  }
+  const beside = `${target}.${process.pid}.part`;
+  try {
+    await writeFile(beside, whole);
+    await rename(beside, target);
+  } catch (e) {
+    await rm(beside, { force: true });
+    throw new LocatedProblem(
+      `${target}: could not be written (${(e as NodeJS.ErrnoException).code}); nothing was changed`,
+    );
+  }
+}

@@ -1,0 +1,26 @@
+/** A species and how often it occurs; `marks` are appended in parentheses, such as R or IR. */
+export interface SpeciesTerm {
+  readonly label: string;
+  readonly count: number;
+  readonly marks?: readonly string[];
+}
+
+/** `A1g(R) + 3A2g + 2A1u + 3A2u(IR)`, species with count 0 left out; `0` where nothing is left. */
+export function speciesSum(terms: readonly SpeciesTerm[]): string {
+  const shown = terms.filter((t) => t.count !== 0).map(termText);
+  return shown.length > 0 ? shown.join(" + ") : "0";
+}
+
+function termText({ label, count, marks = [] }: SpeciesTerm): string {
+  return `${count === 1 ? "" : count}${label}${marks.length > 0 ? `(${marks.join(",")})` : ""}`;
+}
+
+const SUBSCRIPTS = "₀₁₂₃₄₅₆₇₈₉";
+
+/** A Mulliken label set for people: digits as subscripts, primes as primes; letters g and u stay on the line. */
+export function typographicLabel(label: string): string {
+  return label
+    .replace(/\d/g, (d) => SUBSCRIPTS[Number(d)]!)
+    .replace(/''/g, "″")
+    .replace(/'/g, "′");
+}

@@ -1,0 +1,174 @@
+import type { CifBlock } from "../cif/index.ts";
+import { InputProblem } from "../problem.ts";
+import { type SpaceGroup, spaceGroup } from "../symmetry/index.ts";
+import { type AtomSite, readAtomSites, readNumber } from "./atom-site.ts";
+import { type Cell, type Metric, metricMisfit, metricOf } from "./cell.ts";
+import { declaredSymmetry, listedGroup } from "./declared-symmetry.ts";
+import { type Image, orbitOf } from "./orbit.ts";
+import { PeriodicPoints } from "./periodic-points.ts";
+import { type SiteSymmetry, siteSymmetry } from "./site-symmetry.ts";
+
+/** Positions closer than this are one position unless the user says otherwise; angstrom. */
+export const POSITION_TOLERANCE = 0.05;
+
+/** Strain of the cell under an operation above which the two are said to disagree; s.u. of cells lie well below. */
+export const METRIC_TOLERANCE = 5e-3;
+
+/** An atom site placed in the crystal: its site symmetry and its images in the cell. */
+export interface CrystalSite extends AtomSite {
+  readonly symmetry: SiteSymmetry;
+  readonly images: readonly Image[];
+  /** Labels of further rows of the list that turned out to be images of this site. */
+  readonly alsoListedAs: readonly string[];
+  /** Index of the first site at the same position (mixed occupancy), null where this is the first. */
+  readonly sharesPositionOf: number | null;
+}
+
+/** A structure as a file gives it: cell, exact symmetry, sites. Plain data. */
+export interface Crystal {
+  readonly name: string;
+  readonly metric: Metric;
+  readonly group: SpaceGroup;
+  readonly sites: readonly CrystalSite[];
+  /** How the answer was obtained, assumptions included; plain sentences. */
+  readonly notes: readonly string[];
+  /** angstrom */
+  readonly tolerance: number;
+}
+
+export interface CrystalOptions {
+  /** Positions closer than this are one position; angstrom. */
+  readonly tolerance?: number;
+}
+
+/**
+ * Builds the crystal from a CIF block.
+ * @throws InputProblem for a missing or impossible cell, symmetry or atom list
+ */
+export function crystalFromBlock(block: CifBlock, options: CrystalOptions = {}): Crystal {
+  const tolerance = checkedTolerance(options.tolerance ?? POSITION_TOLERANCE);
+  const metric = metricOf(readCell(block));
+  const symmetry = readSymmetry(block);
+  const list = readAtomSites(block, metric);
+  const placed = placeSites(symmetry.group, metric, list.sites, tolerance);
+  return {
+    name: block.name,
+    metric,
+    group: symmetry.group,
+    sites: placed.sites,
+    notes: [...symmetry.notes, ...shapeNotes(metric, symmetry.group), ...list.notes, ...placed.notes],
+    tolerance,
+  };
+}
+
+function checkedTolerance(tolerance: number): number {
+  if (Number.isFinite(tolerance) && tolerance >= 0 && tolerance <= 1) return tolerance;
+  throw new InputProblem(
+    "tolerance-impossible",
+    `a tolerance of ${tolerance} angstrom cannot tell atoms apart`,
+    null,
+    "give a length between 0 and 1 angstrom",
+  );
+}
+
+const CELL_ITEMS = ["length_a", "length_b", "length_c", "angle_alpha", "angle_beta", "angle_gamma"] as const;
+
+/** @throws InputProblem `cell-missing` naming the items that are absent or unknown */
+export function readCell(block: CifBlock): Cell {
+  const values = CELL_ITEMS.map((item) => readNumber(block, `_cell.${item}`)?.value ?? null);
+  const absent = CELL_ITEMS.filter((_, i) => values[i] === null);
+  if (absent.length > 0) {
+    throw new InputProblem(
+      "cell-missing",
+      `block "${block.name}" has no value for ${absent.map((item) => `_cell_${item}`).join(", ")}`,
+      block.span,
+      "the whole cell is needed; choose another block with --block if the file has several",
+    );
+  }
+  const [a, b, c, alpha, beta, gamma] = values as [number, number, number, number, number, number];
+  return { a, b, c, alpha, beta, gamma };
+}
+
+function readSymmetry(block: CifBlock): { group: SpaceGroup; notes: readonly string[] } {
+  const listed = listedGroup(declaredSymmetry(block).operations);
+  if (listed) {
+    return {
+      group: spaceGroup(listed.operations),
+      notes: ["symmetry: the operations listed in the file", ...listed.notes],
+    };
+  }
+  throw new InputProblem(
+    "operations-missing",
+    `block "${block.name}" lists no symmetry operations`,
+    block.span,
+    "add a _space_group_symop_operation_xyz loop",
+  );
+}
+
+function shapeNotes(metric: Metric, group: SpaceGroup): string[] {
+  const worst = group.representatives.reduce((m, a) => Math.max(m, metricMisfit(metric, a.W)), 0);
+  if (worst <= METRIC_TOLERANCE) return [];
+  return [`the cell is not invariant under its own operations: they strain it by ${(100 * worst).toFixed(1)} %`];
+}
+
+/** Sites with symmetry and images; rows that repeat an image of an earlier site are folded into it. */
+export function placeSites(
+  group: SpaceGroup,
+  metric: Metric,
+  list: readonly AtomSite[],
+  tolerance: number,
+): { sites: CrystalSite[]; notes: string[] } {
+  const points = new PeriodicPoints(metric, tolerance);
+  const owner: number[] = []; // site of each point
+  const sites: (CrystalSite & { alsoListedAs: string[] })[] = [];
+  for (const atom of list) {
+    const symmetry = siteSymmetry(group.operations, metric, atom.position, tolerance);
+    const here = [...new Set(points.near(symmetry.point).map((p) => owner[p]!))];
+    const twin = here.find((i) => isSameAtom(sites[i]!, atom));
+    if (twin !== undefined) {
+      sites[twin]!.alsoListedAs.push(atom.label);
+      continue;
+    }
+    const images = orbitOf(group, symmetry);
+    for (const image of images) owner[points.add(image.position)] = sites.length;
+    const first = here.length > 0 ? Math.min(...here) : null;
+    const root = first === null ? null : (sites[first]!.sharesPositionOf ?? first);
+    sites.push({ ...atom, symmetry, images, alsoListedAs: [], sharesPositionOf: root });
+  }
+  return { sites, notes: placementNotes(sites, tolerance) };
+}
+
+/** Two rows at one position are one atom listed twice unless their species differ or their occupancies share it. */
+function isSameAtom(site: CrystalSite, atom: AtomSite): boolean {
+  if (site.element !== atom.element || site.charge !== atom.charge) return false;
+  if (site.assembly !== atom.assembly || site.disorderGroup !== atom.disorderGroup) return false;
+  return Math.abs(site.occupancy - atom.occupancy) < 1e-3;
+}
+
+function placementNotes(sites: readonly CrystalSite[], tolerance: number): string[] {
+  const notes: string[] = [];
+  const repeated = sites.filter((s) => s.alsoListedAs.length > 0);
+  if (repeated.length > 0) {
+    const shown = repeated.slice(0, 4).map((s) => `${s.label} (also ${some(s.alsoListedAs)})`);
+    notes.push(`rows that repeat an image of another were folded into it: ${some(shown)}${more(repeated.length - 4)}`);
+  }
+  const moved = sites.filter((s) => s.symmetry.shift > 1e-3);
+  if (moved.length > 0) {
+    const shown = moved.slice(0, 6).map((s) => `${s.label} by ${s.symmetry.shift.toFixed(3)} A`);
+    notes.push(`moved onto a special position within ${tolerance} A: ${shown.join(", ")}${more(moved.length - 6)}`);
+  }
+  const shared = sites.filter((s) => s.sharesPositionOf !== null);
+  if (shared.length > 0) {
+    const shown = shared.slice(0, 6).map((s) => `${s.label} with ${sites[s.sharesPositionOf!]!.label}`);
+    notes.push(`sites that share a position: ${shown.join(", ")}${more(shared.length - 6)}`);
+  }
+  return notes;
+}
+
+function some(labels: readonly string[]): string {
+  return labels.slice(0, 4).join(", ") + (labels.length > 4 ? ` and ${labels.length - 4} more` : "");
+}
+
+function more(count: number): string {
+  return count > 0 ? ` and ${count} more` : "";
+}

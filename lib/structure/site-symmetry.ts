@@ -1,0 +1,112 @@
+import { add, type IntMat3, lcm, type RatMat3, type RatVec3, ratMat3, ratVec3 } from "../algebra/index.ts";
+import { compose, type Operation, operationKey, transformPoint } from "../symmetry/index.ts";
+import { lengthOf, type Metric, type Vec3 } from "./cell.ts";
+
+/** Largest order of a point group of a lattice in three dimensions. */
+const LARGEST_SITE_GROUP = 48;
+
+/**
+ * A point of a crystal with the operations that keep it. `operations` carry exact, unreduced translations, so that
+ * each one fixes `point` as it stands. The fixed points of all of them are x' = projection x + offset for any x.
+ */
+export interface SiteSymmetry {
+  readonly operations: readonly Operation[];
+  readonly projection: RatMat3;
+  readonly offset: RatVec3;
+  /** The point given, carried onto the fixed points: their mean image. Fractional. */
+  readonly point: Vec3;
+  /** How far that moved it, angstrom. */
+  readonly shift: number;
+}
+
+/**
+ * Site-symmetry group of a point: the operations whose image lies within the tolerance of it, closed to a group. Where
+ * they close to none (two centres within the tolerance, say), those that move the point most are left out.
+ * @param x fractional coordinates
+ * @param tolerance angstrom
+ */
+export function siteSymmetry(
+  operations: readonly Operation[],
+  metric: Metric,
+  x: Vec3,
+  tolerance: number,
+): SiteSymmetry {
+  const near = nearOperations(operations, metric, x, tolerance);
+  let kept = near.length;
+  while (kept > 1) {
+    const group = closeAround(near.slice(0, kept).map((n) => n.operation));
+    if (group) {
+      const site = snap(group, metric, x);
+      if (site.shift <= tolerance) return site;
+    }
+    const worst = near[kept - 1]!.distance;
+    // operations that move the point equally far stand or fall together
+    while (kept > 1 && near[kept - 1]!.distance > worst - 1e-6) kept--;
+  }
+  return snap([near[0]!.operation], metric, x);
+}
+
+interface NearOperation {
+  readonly operation: Operation;
+  readonly distance: number; // angstrom
+}
+
+function nearOperations(operations: readonly Operation[], metric: Metric, x: Vec3, tolerance: number): NearOperation[] {
+  const near: NearOperation[] = [];
+  for (const a of operations) {
+    const image = transformPoint(a, x);
+    const t = image.map((e, i) => Math.round(x[i]! - e) + 0) as unknown as [number, number, number];
+    const d: Vec3 = [image[0] + t[0] - x[0], image[1] + t[1] - x[1], image[2] + t[2] - x[2]];
+    // Rounding finds the nearest lattice point only for short vectors; tolerances are short against a cell.
+    const distance = lengthOf(metric, d);
+    if (distance <= tolerance) {
+      const n = a.w.n.map((e, i) => e + t[i]! * a.w.d) as unknown as [number, number, number];
+      near.push({ operation: { W: a.W, w: { n, d: a.w.d } }, distance });
+    }
+  }
+  return near.sort((p, q) => p.distance - q.distance);
+}
+
+/** The finite group of affine operations (not reduced modulo the lattice) that the given ones generate, or null. */
+function closeAround(generators: readonly Operation[]): Operation[] | null {
+  const found = new Map<string, Operation>();
+  const rotations = new Set<string>();
+  const queue: Operation[] = [];
+  const insert = (a: Operation): boolean => {
+    const k = operationKey(a);
+    if (found.has(k)) return true;
+    const r = a.W.join();
+    if (rotations.has(r) || found.size >= LARGEST_SITE_GROUP) return false; // a translation would lie in the group
+    rotations.add(r);
+    found.set(k, a);
+    queue.push(a);
+    return true;
+  };
+  for (const g of generators) if (!insert(g)) return null;
+  for (let i = 0; i < queue.length; i++) {
+    for (const g of generators) if (!insert(compose(queue[i]!, g))) return null;
+  }
+  return queue;
+}
+
+function snap(group: readonly Operation[], metric: Metric, x: Vec3): SiteSymmetry {
+  const { projection, offset } = meanOperation(group);
+  const point =
+    group.length === 1
+      ? x
+      : ([0, 1, 2].map(
+          (i) =>
+            (projection.n[3 * i]! * x[0] + projection.n[3 * i + 1]! * x[1] + projection.n[3 * i + 2]! * x[2]) /
+              projection.d +
+            offset.n[i]! / offset.d,
+        ) as unknown as Vec3);
+  const shift = lengthOf(metric, [point[0] - x[0], point[1] - x[1], point[2] - x[2]]);
+  return { operations: group, projection, offset, point, shift };
+}
+
+function meanOperation(group: readonly Operation[]): { projection: RatMat3; offset: RatVec3 } {
+  const W = group.map((a) => a.W).reduce((s: IntMat3, m) => add(s, m), [0, 0, 0, 0, 0, 0, 0, 0, 0]);
+  const d = group.reduce((m, a) => lcm(m, a.w.d), 1);
+  const w = [0, 1, 2].map((i) => group.reduce((s, a) => s + a.w.n[i]! * (d / a.w.d), 0)) as [number, number, number];
+  return { projection: ratMat3(W, group.length), offset: ratVec3(w, d * group.length) };
+}
