@@ -15,6 +15,8 @@ export interface CifBlock {
   /** Without `data_` or `save_`; empty for a block that has none. */
   readonly name: string;
   readonly span: Span;
+  /** The whole text that spans refer to. */
+  readonly source: string;
   readonly frames: readonly CifBlock[];
   /** Data names as written, in the order of the file, those of loops included. */
   names(): readonly string[];
@@ -40,6 +42,7 @@ export class TokenBlock implements CifBlock {
   readonly name: string;
   readonly frames: TokenBlock[] = [];
   readonly headSpan: Span;
+  readonly source: string;
   span: Span;
   readonly #from: TokenSource;
   readonly #entries = new Map<string, Entry>();
@@ -47,6 +50,7 @@ export class TokenBlock implements CifBlock {
 
   constructor(from: TokenSource, name: string, headSpan: Span) {
     this.#from = from;
+    this.source = from.source;
     this.name = name;
     this.headSpan = headSpan;
     this.span = headSpan;

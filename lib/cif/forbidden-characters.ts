@@ -6,7 +6,8 @@ import type { CifVersion } from "./token-buffer.ts";
 const BEYOND_PRINTABLE_ASCII = /[^\t\n\r -~]/;
 
 /** Characters that neither version allows: controls, lone surrogates, non-characters, byte-order marks in the text. */
-const FORBIDDEN = /[^\t\n\r -~\u{a0}-\u{d7ff}\u{e000}-\u{fdcf}\u{fdf0}-\u{fefe}\u{ff00}-\u{fffd}\u{10000}-\u{10ffff}]+/gu;
+const FORBIDDEN =
+  /[^\t\n\r -~\u{a0}-\u{d7ff}\u{e000}-\u{fdcf}\u{fdf0}-\u{fefe}\u{ff00}-\u{fffd}\u{10000}-\u{10ffff}]+/gu;
 
 /**
  * Reports every run of characters that no CIF may contain, and for CIF 1.1, which is ASCII, the first character beyond.

@@ -4,6 +4,17 @@
  */
 
 export type { CifBlock, CifDocument } from "./block.ts";
+export {
+  aliasesOf,
+  canonicalName,
+  cellOf,
+  columnName,
+  type FoundValue,
+  findLoop,
+  findNumb,
+  findValue,
+  numbInLoop,
+} from "./data-names.ts";
 export { decodeCif } from "./encoding.ts";
 export type { CifLoop } from "./loop.ts";
 export { type Numb, numbOf, parseNumb } from "./numb.ts";

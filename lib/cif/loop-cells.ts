@@ -1,7 +1,7 @@
 import { hasLineEnd } from "./characters.ts";
 import type { LoopCells } from "./loop.ts";
-import * as Kind from "./token-buffer.ts";
 import type { TokenSource } from "./token-buffer.ts";
+import * as Kind from "./token-buffer.ts";
 import { afterValue } from "./value.ts";
 
 /** Cells of a loop, and if its values do not fill its rows, how many there are and where it goes wrong first. */

@@ -8,8 +8,8 @@ import { afterByteOrderMark, skipPrelude, versionOf } from "./prelude.ts";
 import { excerpt, ProblemList } from "./problem-list.ts";
 import { Scanner } from "./scanner.ts";
 import { checkTables } from "./table-check.ts";
-import * as Kind from "./token-buffer.ts";
 import type { TokenSource } from "./token-buffer.ts";
+import * as Kind from "./token-buffer.ts";
 import { afterValue } from "./value.ts";
 
 /**
@@ -86,7 +86,12 @@ class DocumentBuilder {
     const key = name.toLowerCase();
     if (this.#blockNames.has(key)) {
       const message = `a data block named ${excerpt(name)} occurs before`;
-      this.#problems.add("duplicate-block", message, { start: span.start, end: tokens.ends[at]! }, "Rename one of them.");
+      this.#problems.add(
+        "duplicate-block",
+        message,
+        { start: span.start, end: tokens.ends[at]! },
+        "Rename one of them.",
+      );
     }
     this.#begin(new TokenBlock(this.#from, name, span));
     return after;
@@ -127,7 +132,10 @@ class DocumentBuilder {
   #closeInnermost(at: number): void {
     const block = this.#open.pop()!;
     this.#frameNames.pop();
-    block.span = { start: block.headSpan.start, end: Math.max(block.headSpan.end, this.#from.tokens.ends[at - 1] ?? 0) };
+    block.span = {
+      start: block.headSpan.start,
+      end: Math.max(block.headSpan.end, this.#from.tokens.ends[at - 1] ?? 0),
+    };
   }
 
   #frame(at: number): number {

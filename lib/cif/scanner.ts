@@ -255,7 +255,12 @@ export class Scanner {
     for (let open = this.#open.pop(); open !== undefined; open = this.#open.pop()) {
       const list = this.#source.charCodeAt(open) === LEFT_BRACKET;
       const message = `the ${list ? "list" : "table"} that opens here is never closed`;
-      this.#report("unterminated-bracket", message, { start: open, end: open + 1 }, `Close it with ${list ? "]" : "}"}`);
+      this.#report(
+        "unterminated-bracket",
+        message,
+        { start: open, end: open + 1 },
+        `Close it with ${list ? "]" : "}"}`,
+      );
       this.#tokens.push(list ? Kind.LIST_END : Kind.TABLE_END, at, at);
     }
   }

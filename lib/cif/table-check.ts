@@ -1,6 +1,6 @@
 import { excerpt, type ProblemList } from "./problem-list.ts";
-import * as Kind from "./token-buffer.ts";
 import type { TokenSource } from "./token-buffer.ts";
+import * as Kind from "./token-buffer.ts";
 import { textOf } from "./value.ts";
 
 /** One open bracket: the keys met in a table (null in a list), and the key token that waits for its value, or -1. */

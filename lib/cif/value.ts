@@ -2,8 +2,8 @@ import type { Span } from "../problem.ts";
 import { CARRIAGE_RETURN, LINE_FEED } from "./characters.ts";
 import { isTriple } from "./strings.ts";
 import { decodeField, withPlainLineEnds } from "./text-field.ts";
-import * as Kind from "./token-buffer.ts";
 import type { TokenSource } from "./token-buffer.ts";
+import * as Kind from "./token-buffer.ts";
 
 /**
  * A value as written. `unknown` is the unquoted `?`, `inapplicable` the unquoted `.`; the same characters in quotes are

@@ -1,0 +1,871 @@
+/**
+ * Data names that mean the same. A line holds a canonical name, in the dotted form of the current dictionaries, and its
+ * other forms; the canonical name with an underscore in place of its point (`_cell_length_a`) is understood and left
+ * out. Names are compared without regard to capitals. Read by `data-names.ts` only.
+ *
+ * Source: IUCr core CIF dictionary, version 3.4.0 (2026-07-20), and magnetic CIF dictionary, COMCIFS, CC BY 4.0: the
+ * `_definition.id` and `_alias.definition_id` of each save frame. Differing from it: the old `_symmetry_space_group_name_H-M`
+ * and `_symmetry_cell_setting` are put beside the names that replaced them in practice; `_cell.Z_PDB` and two spellings
+ * of the Wyckoff letter met in files are added.
+ */
+export const ALIASES = `
+_cell.angle_alpha
+_cell.angle_alpha_su _cell.angle_alpha_esd
+_cell.angle_beta
+_cell.angle_beta_su _cell.angle_beta_esd
+_cell.angle_gamma
+_cell.angle_gamma_su _cell.angle_gamma_esd
+_cell.atomic_mass
+_cell.convert_Uij_to_betaij
+_cell.convert_Uij_to_betaij_su
+_cell.convert_Uiso_to_Uij
+_cell.convert_Uiso_to_Uij_su
+_cell.diffrn_id
+_cell.formula_units_Z _cell.Z_PDB
+_cell.formula_units_Z_details
+_cell.formula_units_Z_prime
+_cell.formula_units_Z_prime_details
+_cell.length_a
+_cell.length_a_su _cell.length_a_esd
+_cell.length_b
+_cell.length_b_su _cell.length_b_esd
+_cell.length_c
+_cell.length_c_su _cell.length_c_esd
+_cell.metric_tensor
+_cell.orthogonal_matrix
+_cell.reciprocal_angle_alpha
+_cell.reciprocal_angle_alpha_su _cell.reciprocal_angle_alpha_esd
+_cell.reciprocal_angle_beta
+_cell.reciprocal_angle_beta_su _cell.reciprocal_angle_beta_esd
+_cell.reciprocal_angle_gamma
+_cell.reciprocal_angle_gamma_su _cell.reciprocal_angle_gamma_esd
+_cell.reciprocal_length_a
+_cell.reciprocal_length_a_su _cell.reciprocal_length_a_esd
+_cell.reciprocal_length_b
+_cell.reciprocal_length_b_su _cell.reciprocal_length_b_esd
+_cell.reciprocal_length_c
+_cell.reciprocal_length_c_su _cell.reciprocal_length_c_esd
+_cell.reciprocal_metric_tensor
+_cell.reciprocal_metric_tensor_su
+_cell.reciprocal_orthogonal_matrix
+_cell.reciprocal_orthogonal_matrix_su
+_cell.reciprocal_vector_a
+_cell.reciprocal_vector_a_su
+_cell.reciprocal_vector_b
+_cell.reciprocal_vector_b_su
+_cell.reciprocal_vector_c
+_cell.reciprocal_vector_c_su
+_cell.special_details _cell.details
+_cell.vector_a
+_cell.vector_a_su
+_cell.vector_b
+_cell.vector_b_su
+_cell.vector_c
+_cell.vector_c_su
+_cell.volume
+_cell.volume_su _cell.volume_esd
+
+_cell_measurement.condition_id
+_cell_measurement.diffrn_id
+_cell_measurement.pressure
+_cell_measurement.pressure_su _cell_measurement.pressure_esd
+_cell_measurement.radiation
+_cell_measurement.reflns_used
+_cell_measurement.temperature _cell_measurement_temp _cell_measurement.temp
+_cell_measurement.temperature_su _cell_measurement_temp_su _cell_measurement.temp_esd
+_cell_measurement.theta_max
+_cell_measurement.theta_min
+_cell_measurement.wavelength
+_cell_measurement.wavelength_su
+
+_space_group.Bravais_type
+_space_group.centring_type
+_space_group.crystal_system _symmetry_cell_setting _symmetry.cell_setting
+_space_group.IT_coordinate_system_code
+_space_group.IT_number _symmetry.Int_Tables_number _symmetry_Int_Tables_number
+_space_group.Laue_class
+_space_group.multiplicity
+_space_group.name_H-M_alt _symmetry_space_group_name_H-M _symmetry.space_group_name_H-M
+_space_group.name_H-M_alt_description
+_space_group.name_H-M_full
+_space_group.name_H-M_ref
+_space_group.name_Hall _symmetry_space_group_name_Hall _symmetry.space_group_name_Hall
+_space_group.name_Schoenflies
+_space_group.Patterson_name_H-M
+_space_group.point_group_H-M
+_space_group.reference_setting
+_space_group.transform_Pp_abc
+_space_group.transform_Qq_xyz
+
+_space_group_symop.id _symmetry_equiv.pos_site_id _symmetry_equiv_pos_site_id
+_space_group_symop.operation_description
+_space_group_symop.operation_xyz _symmetry_equiv.pos_as_xyz _symmetry_equiv_pos_as_xyz
+_space_group_symop.R
+_space_group_symop.RT
+_space_group_symop.Seitz_matrix
+_space_group_symop.T
+
+_space_group_Wyckoff.coords_xyz
+_space_group_Wyckoff.id
+_space_group_Wyckoff.letter
+_space_group_Wyckoff.multiplicity
+_space_group_Wyckoff.site_symmetry
+
+_space_group_generator.id
+_space_group_generator.xyz
+
+_atom_site.ADP_type _atom_site_thermal_displace_type _atom_site.thermal_displace_type
+_atom_site.attached_hydrogens
+_atom_site.B_equiv_geom_mean
+_atom_site.B_equiv_geom_mean_su _atom_site.B_equiv_geom_mean_esd
+_atom_site.B_iso_or_equiv
+_atom_site.B_iso_or_equiv_su _atom_site.B_iso_or_equiv_esd
+_atom_site.calc_attached_atom
+_atom_site.calc_flag
+_atom_site.Cartn_x
+_atom_site.Cartn_x_su _atom_site.Cartn_x_esd
+_atom_site.Cartn_xyz
+_atom_site.Cartn_xyz_su
+_atom_site.Cartn_y
+_atom_site.Cartn_y_su _atom_site.Cartn_y_esd
+_atom_site.Cartn_z
+_atom_site.Cartn_z_su _atom_site.Cartn_z_esd
+_atom_site.chemical_conn_number
+_atom_site.constraints
+_atom_site.description _atom_site.details
+_atom_site.disorder_assembly
+_atom_site.disorder_group
+_atom_site.fract_symmform
+_atom_site.fract_x
+_atom_site.fract_x_su _atom_site.fract_x_esd
+_atom_site.fract_xyz
+_atom_site.fract_xyz_su
+_atom_site.fract_y
+_atom_site.fract_y_su _atom_site.fract_y_esd
+_atom_site.fract_z
+_atom_site.fract_z_su _atom_site.fract_z_esd
+_atom_site.label _atom_site.id
+_atom_site.label_component_0
+_atom_site.label_component_1
+_atom_site.label_component_2
+_atom_site.label_component_3
+_atom_site.label_component_4
+_atom_site.label_component_5
+_atom_site.label_component_6
+_atom_site.occupancy
+_atom_site.occupancy_su _atom_site.occupancy_esd
+_atom_site.refinement_flags
+_atom_site.refinement_flags_ADP
+_atom_site.refinement_flags_occupancy
+_atom_site.refinement_flags_posn
+_atom_site.restraints
+_atom_site.site_symmetry_multiplicity _atom_site_symmetry_multiplicity _atom_site.symmetry_multiplicity
+_atom_site.site_symmetry_order
+_atom_site.type_symbol
+_atom_site.U_equiv_geom_mean
+_atom_site.U_equiv_geom_mean_su _atom_site.U_equiv_geom_mean_esd
+_atom_site.U_iso_or_equiv
+_atom_site.U_iso_or_equiv_su _atom_site.U_iso_or_equiv_esd
+_atom_site.Wyckoff_symbol _atom_site_Wyckoff_label _atom_site_Wyckoff_letter
+
+_atom_site_aniso.B_11 _atom_site.aniso_B[1][1] _atom_site_anisotrop.B[1][1]
+_atom_site_aniso.B_11_su _atom_site.aniso_B[1][1]_esd _atom_site_anisotrop.B[1][1]_esd
+_atom_site_aniso.B_12 _atom_site.aniso_B[1][2] _atom_site_anisotrop.B[1][2]
+_atom_site_aniso.B_12_su _atom_site.aniso_B[1][2]_esd _atom_site_anisotrop.B[1][2]_esd
+_atom_site_aniso.B_13 _atom_site.aniso_B[1][3] _atom_site_anisotrop.B[1][3]
+_atom_site_aniso.B_13_su _atom_site.aniso_B[1][3]_esd _atom_site_anisotrop.B[1][3]_esd
+_atom_site_aniso.B_22 _atom_site.aniso_B[2][2] _atom_site_anisotrop.B[2][2]
+_atom_site_aniso.B_22_su _atom_site.aniso_B[2][2]_esd _atom_site_anisotrop.B[2][2]_esd
+_atom_site_aniso.B_23 _atom_site.aniso_B[2][3] _atom_site_anisotrop.B[2][3]
+_atom_site_aniso.B_23_su _atom_site.aniso_B[2][3]_esd _atom_site_anisotrop.B[2][3]_esd
+_atom_site_aniso.B_33 _atom_site.aniso_B[3][3] _atom_site_anisotrop.B[3][3]
+_atom_site_aniso.B_33_su _atom_site.aniso_B[3][3]_esd _atom_site_anisotrop.B[3][3]_esd
+_atom_site_aniso.beta_11
+_atom_site_aniso.beta_11_su
+_atom_site_aniso.beta_12
+_atom_site_aniso.beta_12_su
+_atom_site_aniso.beta_13
+_atom_site_aniso.beta_13_su
+_atom_site_aniso.beta_22
+_atom_site_aniso.beta_22_su
+_atom_site_aniso.beta_23
+_atom_site_aniso.beta_23_su
+_atom_site_aniso.beta_33
+_atom_site_aniso.beta_33_su
+_atom_site_aniso.label _atom_site_anisotrop.id
+_atom_site_aniso.matrix_B
+_atom_site_aniso.matrix_B_su
+_atom_site_aniso.matrix_beta _atom_site.tensor_beta
+_atom_site_aniso.matrix_beta_su _atom_site.tensor_beta_su
+_atom_site_aniso.matrix_U
+_atom_site_aniso.matrix_U_su
+_atom_site_aniso.ratio _atom_site_anisotrop.ratio _atom_site.aniso_ratio
+_atom_site_aniso.symmform
+_atom_site_aniso.type_symbol _atom_site_anisotrop.type_symbol
+_atom_site_aniso.U_11 _atom_site.aniso_U[1][1] _atom_site_anisotrop.U[1][1]
+_atom_site_aniso.U_11_su _atom_site.aniso_U[1][1]_esd _atom_site_anisotrop.U[1][1]_esd
+_atom_site_aniso.U_12 _atom_site.aniso_U[1][2] _atom_site_anisotrop.U[1][2]
+_atom_site_aniso.U_12_su _atom_site.aniso_U[1][2]_esd _atom_site_anisotrop.U[1][2]_esd
+_atom_site_aniso.U_13 _atom_site.aniso_U[1][3] _atom_site_anisotrop.U[1][3]
+_atom_site_aniso.U_13_su _atom_site.aniso_U[1][3]_esd _atom_site_anisotrop.U[1][3]_esd
+_atom_site_aniso.U_22 _atom_site.aniso_U[2][2] _atom_site_anisotrop.U[2][2]
+_atom_site_aniso.U_22_su _atom_site.aniso_U[2][2]_esd _atom_site_anisotrop.U[2][2]_esd
+_atom_site_aniso.U_23 _atom_site.aniso_U[2][3] _atom_site_anisotrop.U[2][3]
+_atom_site_aniso.U_23_su _atom_site.aniso_U[2][3]_esd _atom_site_anisotrop.U[2][3]_esd
+_atom_site_aniso.U_33 _atom_site.aniso_U[3][3] _atom_site_anisotrop.U[3][3]
+_atom_site_aniso.U_33_su _atom_site.aniso_U[3][3]_esd _atom_site_anisotrop.U[3][3]_esd
+
+_atom_sites.solution_hydrogens
+_atom_sites.solution_primary
+_atom_sites.solution_secondary
+_atom_sites.special_details
+
+_atom_sites_Cartn_transform.axes _atom_sites.Cartn_transform_axes
+_atom_sites_Cartn_transform.mat_11 _atom_sites_Cartn_tran_matrix_11 _atom_sites.Cartn_transf_matrix[1][1]
+_atom_sites_Cartn_transform.mat_11_su
+_atom_sites_Cartn_transform.mat_12 _atom_sites_Cartn_tran_matrix_12 _atom_sites.Cartn_transf_matrix[1][2]
+_atom_sites_Cartn_transform.mat_12_su
+_atom_sites_Cartn_transform.mat_13 _atom_sites_Cartn_tran_matrix_13 _atom_sites.Cartn_transf_matrix[1][3]
+_atom_sites_Cartn_transform.mat_13_su
+_atom_sites_Cartn_transform.mat_21 _atom_sites_Cartn_tran_matrix_21 _atom_sites.Cartn_transf_matrix[2][1]
+_atom_sites_Cartn_transform.mat_21_su
+_atom_sites_Cartn_transform.mat_22 _atom_sites_Cartn_tran_matrix_22 _atom_sites.Cartn_transf_matrix[2][2]
+_atom_sites_Cartn_transform.mat_22_su
+_atom_sites_Cartn_transform.mat_23 _atom_sites_Cartn_tran_matrix_23 _atom_sites.Cartn_transf_matrix[2][3]
+_atom_sites_Cartn_transform.mat_23_su
+_atom_sites_Cartn_transform.mat_31 _atom_sites_Cartn_tran_matrix_31 _atom_sites.Cartn_transf_matrix[3][1]
+_atom_sites_Cartn_transform.mat_31_su
+_atom_sites_Cartn_transform.mat_32 _atom_sites_Cartn_tran_matrix_32 _atom_sites.Cartn_transf_matrix[3][2]
+_atom_sites_Cartn_transform.mat_32_su
+_atom_sites_Cartn_transform.mat_33 _atom_sites_Cartn_tran_matrix_33 _atom_sites.Cartn_transf_matrix[3][3]
+_atom_sites_Cartn_transform.mat_33_su
+_atom_sites_Cartn_transform.matrix
+_atom_sites_Cartn_transform.matrix_su
+_atom_sites_Cartn_transform.vec_1 _atom_sites_Cartn_tran_vector_1 _atom_sites.Cartn_transf_vector[1]
+_atom_sites_Cartn_transform.vec_1_su
+_atom_sites_Cartn_transform.vec_2 _atom_sites_Cartn_tran_vector_2 _atom_sites.Cartn_transf_vector[2]
+_atom_sites_Cartn_transform.vec_2_su
+_atom_sites_Cartn_transform.vec_3 _atom_sites_Cartn_tran_vector_3 _atom_sites.Cartn_transf_vector[3]
+_atom_sites_Cartn_transform.vec_3_su
+_atom_sites_Cartn_transform.vector
+_atom_sites_Cartn_transform.vector_su
+
+_atom_sites_fract_transform.axes _atom_sites.fract_transform_axes
+_atom_sites_fract_transform.mat_11 _atom_sites_fract_tran_matrix_11 _atom_sites.fract_transf_matrix[1][1]
+_atom_sites_fract_transform.mat_11_su
+_atom_sites_fract_transform.mat_12 _atom_sites_fract_tran_matrix_12 _atom_sites.fract_transf_matrix[1][2]
+_atom_sites_fract_transform.mat_12_su
+_atom_sites_fract_transform.mat_13 _atom_sites_fract_tran_matrix_13 _atom_sites.fract_transf_matrix[1][3]
+_atom_sites_fract_transform.mat_13_su
+_atom_sites_fract_transform.mat_21 _atom_sites_fract_tran_matrix_21 _atom_sites.fract_transf_matrix[2][1]
+_atom_sites_fract_transform.mat_21_su
+_atom_sites_fract_transform.mat_22 _atom_sites_fract_tran_matrix_22 _atom_sites.fract_transf_matrix[2][2]
+_atom_sites_fract_transform.mat_22_su
+_atom_sites_fract_transform.mat_23 _atom_sites_fract_tran_matrix_23 _atom_sites.fract_transf_matrix[2][3]
+_atom_sites_fract_transform.mat_23_su
+_atom_sites_fract_transform.mat_31 _atom_sites_fract_tran_matrix_31 _atom_sites.fract_transf_matrix[3][1]
+_atom_sites_fract_transform.mat_31_su
+_atom_sites_fract_transform.mat_32 _atom_sites_fract_tran_matrix_32 _atom_sites.fract_transf_matrix[3][2]
+_atom_sites_fract_transform.mat_32_su
+_atom_sites_fract_transform.mat_33 _atom_sites_fract_tran_matrix_33 _atom_sites.fract_transf_matrix[3][3]
+_atom_sites_fract_transform.mat_33_su
+_atom_sites_fract_transform.matrix
+_atom_sites_fract_transform.matrix_su
+_atom_sites_fract_transform.vec_1 _atom_sites_fract_tran_vector_1 _atom_sites.fract_transf_vector[1]
+_atom_sites_fract_transform.vec_1_su
+_atom_sites_fract_transform.vec_2 _atom_sites_fract_tran_vector_2 _atom_sites.fract_transf_vector[2]
+_atom_sites_fract_transform.vec_2_su
+_atom_sites_fract_transform.vec_3 _atom_sites_fract_tran_vector_3 _atom_sites.fract_transf_vector[3]
+_atom_sites_fract_transform.vec_3_su
+_atom_sites_fract_transform.vector
+_atom_sites_fract_transform.vector_su
+
+_atom_type.analytical_mass_percent _atom_type_analytical_mass_% _atom_type.analytical_mass_%
+_atom_type.analytical_mass_percent_su
+_atom_type.atomic_mass
+_atom_type.atomic_number
+_atom_type.description
+_atom_type.display_colour
+_atom_type.electron_count
+_atom_type.element_symbol
+_atom_type.mass_number
+_atom_type.number_in_cell
+_atom_type.oxidation_number
+_atom_type.radius_bond
+_atom_type.radius_contact
+_atom_type.symbol
+
+_chemical.absolute_configuration
+_chemical.compound_source
+_chemical.enantioexcess_bulk
+_chemical.enantioexcess_bulk_su
+_chemical.enantioexcess_bulk_technique
+_chemical.enantioexcess_crystal
+_chemical.enantioexcess_crystal_su
+_chemical.enantioexcess_crystal_technique
+_chemical.identifier_InChI
+_chemical.identifier_InChI_key
+_chemical.identifier_InChI_version
+_chemical.melting_point
+_chemical.melting_point_su
+_chemical.melting_point_gt
+_chemical.melting_point_lt
+_chemical.name_common
+_chemical.name_mineral
+_chemical.name_structure_type
+_chemical.name_systematic
+_chemical.optical_rotation
+_chemical.properties_biological
+_chemical.properties_physical
+_chemical.temperature_decomposition
+_chemical.temperature_decomposition_su _chemical.temperature_decomposition_esd
+_chemical.temperature_decomposition_gt
+_chemical.temperature_decomposition_lt
+_chemical.temperature_sublimation
+_chemical.temperature_sublimation_su _chemical.temperature_sublimation_esd
+_chemical.temperature_sublimation_gt
+_chemical.temperature_sublimation_lt
+
+_chemical_formula.analytical
+_chemical_formula.IUPAC
+_chemical_formula.moiety
+_chemical_formula.structural
+_chemical_formula.sum
+_chemical_formula.weight
+_chemical_formula.weight_meas
+_chemical_formula.weight_meas_su
+
+_exptl.crystals_number
+_exptl.method
+_exptl.method_details
+_exptl.method_id_PaNET
+_exptl.special_details _exptl.details
+_exptl.transmission_factor_max
+_exptl.transmission_factor_max_su
+_exptl.transmission_factor_min
+_exptl.transmission_factor_min_su
+
+_exptl_absorpt.coefficient_mu _exptl.absorpt_coefficient_mu
+_exptl_absorpt.coefficient_mu_su
+_exptl_absorpt.correction_T_max _exptl.absorpt_correction_T_max
+_exptl_absorpt.correction_T_min _exptl.absorpt_correction_T_min
+_exptl_absorpt.correction_type _exptl.absorpt_correction_type
+_exptl_absorpt.process_details _exptl.absorpt_process_details
+_exptl_absorpt.special_details
+
+_exptl_crystal.colour
+_exptl_crystal.density_diffrn
+_exptl_crystal.density_diffrn_su
+_exptl_crystal.density_meas
+_exptl_crystal.density_meas_su _exptl_crystal.density_meas_esd
+_exptl_crystal.density_meas_gt
+_exptl_crystal.density_meas_lt
+_exptl_crystal.density_meas_temp
+_exptl_crystal.density_meas_temp_su _exptl_crystal.density_meas_temp_esd
+_exptl_crystal.density_meas_temp_gt
+_exptl_crystal.density_meas_temp_lt
+_exptl_crystal.density_method
+_exptl_crystal.description
+_exptl_crystal.F_000
+_exptl_crystal.mosaic_block_size
+_exptl_crystal.mosaic_block_size_su
+_exptl_crystal.mosaic_method
+_exptl_crystal.mosaicity
+_exptl_crystal.mosaicity_su
+_exptl_crystal.preparation
+_exptl_crystal.pressure_history
+_exptl_crystal.recrystallization_method
+_exptl_crystal.size_length
+_exptl_crystal.size_length_su
+_exptl_crystal.size_max
+_exptl_crystal.size_max_su
+_exptl_crystal.size_mid
+_exptl_crystal.size_mid_su
+_exptl_crystal.size_min
+_exptl_crystal.size_min_su
+_exptl_crystal.size_rad
+_exptl_crystal.size_rad_su
+_exptl_crystal.thermal_history
+
+_diffrn.ambient_environment
+_diffrn.ambient_pressure
+_diffrn.ambient_pressure_su _diffrn.ambient_pressure_esd
+_diffrn.ambient_pressure_gt
+_diffrn.ambient_pressure_lt
+_diffrn.ambient_temperature _diffrn_ambient_temp _diffrn.ambient_temp
+_diffrn.ambient_temperature_su _diffrn_ambient_temp_su _diffrn.ambient_temp_esd
+_diffrn.ambient_temperature_details _diffrn_ambient_temp_details _diffrn.ambient_temp_details
+_diffrn.ambient_temperature_gt _diffrn_ambient_temp_gt _diffrn.ambient_temp_gt
+_diffrn.ambient_temperature_lt _diffrn_ambient_temp_lt _diffrn.ambient_temp_lt
+_diffrn.crystal_support
+_diffrn.crystal_treatment
+_diffrn.flux_density
+_diffrn.id
+_diffrn.measured_fraction_theta_full
+_diffrn.measured_fraction_theta_max
+_diffrn.precession_semi_angle
+_diffrn.precession_semi_angle_su
+_diffrn.special_details _diffrn.details
+_diffrn.symmetry_description
+_diffrn.total_dose
+_diffrn.total_dose_su
+_diffrn.total_exposure_time
+
+_diffrn_radiation.collimation
+_diffrn_radiation.filter_edge
+_diffrn_radiation.illumination_mode
+_diffrn_radiation.inhomogeneity
+_diffrn_radiation.monochromator
+_diffrn_radiation.polarisn_norm
+_diffrn_radiation.polarisn_ratio
+_diffrn_radiation.probe
+_diffrn_radiation.type
+_diffrn_radiation.xray_symbol
+
+_diffrn_radiation_wavelength.details _diffrn_radiation.wavelength_details
+_diffrn_radiation_wavelength.determination _diffrn_radiation.wavelength_determination
+_diffrn_radiation_wavelength.id
+_diffrn_radiation_wavelength.type
+_diffrn_radiation_wavelength.value _diffrn_radiation_wavelength _diffrn_radiation_wavelength.wavelength
+_diffrn_radiation_wavelength.value_su _diffrn_radiation_wavelength_su _diffrn_radiation_wavelength.wavelength_su
+_diffrn_radiation_wavelength.wt
+_diffrn_radiation_wavelength.xray_symbol
+
+_diffrn_refln.angle_chi
+_diffrn_refln.angle_kappa
+_diffrn_refln.angle_omega
+_diffrn_refln.angle_phi
+_diffrn_refln.angle_psi
+_diffrn_refln.angle_theta
+_diffrn_refln.attenuator_code
+_diffrn_refln.class_code
+_diffrn_refln.counts_bg_1
+_diffrn_refln.counts_bg_2
+_diffrn_refln.counts_net
+_diffrn_refln.counts_net_su
+_diffrn_refln.counts_peak
+_diffrn_refln.counts_total
+_diffrn_refln.detect_slit_horiz
+_diffrn_refln.detect_slit_vert
+_diffrn_refln.elapsed_time
+_diffrn_refln.hkl
+_diffrn_refln.id
+_diffrn_refln.index_h
+_diffrn_refln.index_k
+_diffrn_refln.index_l
+_diffrn_refln.intensity_bg_1
+_diffrn_refln.intensity_bg_1_su
+_diffrn_refln.intensity_bg_2
+_diffrn_refln.intensity_bg_2_su
+_diffrn_refln.intensity_net
+_diffrn_refln.intensity_net_su _diffrn_refln_intensity_u _diffrn_refln_intensity_sigma _diffrn_refln.intensity_sigma _diffrn_refln.intensity_u
+_diffrn_refln.intensity_peak
+_diffrn_refln.intensity_peak_su
+_diffrn_refln.intensity_total
+_diffrn_refln.intensity_total_su
+_diffrn_refln.scale_group_code
+_diffrn_refln.scan_mode
+_diffrn_refln.scan_mode_backgd
+_diffrn_refln.scan_rate
+_diffrn_refln.scan_time_backgd
+_diffrn_refln.scan_width
+_diffrn_refln.sin_theta_over_lambda _diffrn_refln_sint/lambda _diffrn_refln_sint_over_lambda _diffrn_refln.sint_over_lambda
+_diffrn_refln.standard_code
+_diffrn_refln.wavelength
+_diffrn_refln.wavelength_id
+
+_diffrn_reflns.av_R_equivalents
+_diffrn_reflns.av_sunetI_over_netI _diffrn_reflns_av_sigmaI/netI _diffrn_reflns.av_unetI/netI _diffrn_reflns_av_unetI/netI _diffrn_reflns.av_sigmaI_over_netI
+_diffrn_reflns.Laue_measured_fraction_full
+_diffrn_reflns.Laue_measured_fraction_max
+_diffrn_reflns.limit_h_max
+_diffrn_reflns.limit_h_min
+_diffrn_reflns.limit_k_max
+_diffrn_reflns.limit_k_min
+_diffrn_reflns.limit_l_max
+_diffrn_reflns.limit_l_min
+_diffrn_reflns.limit_max
+_diffrn_reflns.limit_min
+_diffrn_reflns.number
+_diffrn_reflns.point_measured_fraction_full _diffrn_reflns_point_group_measured_fraction_full
+_diffrn_reflns.point_measured_fraction_max _diffrn_reflns_point_group_measured_fraction_max
+_diffrn_reflns.reduction_process
+_diffrn_reflns.resolution_full
+_diffrn_reflns.resolution_max
+_diffrn_reflns.theta_full
+_diffrn_reflns.theta_max
+_diffrn_reflns.theta_min
+
+_diffrn_reflns_transf_matrix.11 _diffrn_reflns.transf_matrix[1][1]
+_diffrn_reflns_transf_matrix.12 _diffrn_reflns.transf_matrix[1][2]
+_diffrn_reflns_transf_matrix.13 _diffrn_reflns.transf_matrix[1][3]
+_diffrn_reflns_transf_matrix.21 _diffrn_reflns.transf_matrix[2][1]
+_diffrn_reflns_transf_matrix.22 _diffrn_reflns.transf_matrix[2][2]
+_diffrn_reflns_transf_matrix.23 _diffrn_reflns.transf_matrix[2][3]
+_diffrn_reflns_transf_matrix.31 _diffrn_reflns.transf_matrix[3][1]
+_diffrn_reflns_transf_matrix.32 _diffrn_reflns.transf_matrix[3][2]
+_diffrn_reflns_transf_matrix.33 _diffrn_reflns.transf_matrix[3][3]
+_diffrn_reflns_transf_matrix.TIJ
+
+_refln.A_calc
+_refln.A_calc_su
+_refln.A_meas
+_refln.A_meas_su
+_refln.B_calc
+_refln.B_calc_su
+_refln.B_meas
+_refln.B_meas_su
+_refln.class_code
+_refln.d_spacing
+_refln.F_calc
+_refln.F_calc_su
+_refln.F_complex
+_refln.F_complex_su
+_refln.F_meas
+_refln.F_meas_su _refln_F_sigma _refln.F_meas_sigma
+_refln.F_squared_calc
+_refln.F_squared_calc_su
+_refln.F_squared_meas
+_refln.F_squared_meas_su _refln_F_squared_sigma _refln.F_squared_sigma
+_refln.fom
+_refln.form_factor_table
+_refln.hkl
+_refln.id
+_refln.include_status _refln_observed_status _refln.observed_status _refln.status
+_refln.index_h
+_refln.index_k
+_refln.index_l
+_refln.intensity_calc
+_refln.intensity_calc_su
+_refln.intensity_meas
+_refln.intensity_meas_su _refln.intensity_sigma _refln_intensity_sigma
+_refln.Lp_factor
+_refln.mean_path_length_tbar
+_refln.phase_calc
+_refln.phase_calc_su
+_refln.phase_meas
+_refln.phase_meas_su
+_refln.refinement_status
+_refln.scale_group_code
+_refln.sin_theta_over_lambda _refln_sint/lambda _refln.sint_over_lambda
+_refln.symmetry_epsilon
+_refln.symmetry_multiplicity
+_refln.wavelength
+_refln.wavelength_id
+
+_reflns.apply_dispersion_to_Fcalc
+_reflns.d_resolution_high
+_reflns.d_resolution_low
+_reflns.Friedel_coverage
+_reflns.Friedel_fraction_full
+_reflns.Friedel_fraction_max
+_reflns.limit_h_max
+_reflns.limit_h_min
+_reflns.limit_k_max
+_reflns.limit_k_min
+_reflns.limit_l_max
+_reflns.limit_l_min
+_reflns.limit_max
+_reflns.limit_min
+_reflns.number_gt _reflns_number_observed _reflns.number_obs
+_reflns.number_total _reflns_number_all _reflns.number_all
+_reflns.special_details _reflns.details
+_reflns.threshold_expression _reflns_observed_criterion _reflns.observed_criterion
+
+_geom.bond_distance_incr
+_geom.contact_distance_incr
+_geom.min_bond_distance_cutoff
+_geom.min_contact_distance_cutoff
+_geom.special_details _geom.details
+
+_geom_bond.atom_site_label_1 _geom_bond.atom_site_id_1
+_geom_bond.atom_site_label_2 _geom_bond.atom_site_id_2
+_geom_bond.distance _geom_bond.dist
+_geom_bond.distance_su _geom_bond.dist_esd
+_geom_bond.id
+_geom_bond.multiplicity
+_geom_bond.publ_flag
+_geom_bond.site_symmetry_1
+_geom_bond.site_symmetry_2
+_geom_bond.valence
+_geom_bond.valence_su
+
+_geom_angle.atom_site_label_1 _geom_angle.atom_site_id_1
+_geom_angle.atom_site_label_2 _geom_angle.atom_site_id_2
+_geom_angle.atom_site_label_3 _geom_angle.atom_site_id_3
+_geom_angle.distances
+_geom_angle.distances_su
+_geom_angle.id
+_geom_angle.publ_flag
+_geom_angle.site_symmetry_1
+_geom_angle.site_symmetry_2
+_geom_angle.site_symmetry_3
+_geom_angle.value _geom_angle
+_geom_angle.value_su _geom_angle_su _geom_angle.value_esd
+
+_geom_torsion.angle _geom_torsion _geom_torsion.value
+_geom_torsion.angle_su _geom_torsion_su _geom_torsion.value_esd
+_geom_torsion.atom_site_label_1 _geom_torsion.atom_site_id_1
+_geom_torsion.atom_site_label_2 _geom_torsion.atom_site_id_2
+_geom_torsion.atom_site_label_3 _geom_torsion.atom_site_id_3
+_geom_torsion.atom_site_label_4 _geom_torsion.atom_site_id_4
+_geom_torsion.distances
+_geom_torsion.distances_su
+_geom_torsion.id
+_geom_torsion.publ_flag
+_geom_torsion.site_symmetry_1
+_geom_torsion.site_symmetry_2
+_geom_torsion.site_symmetry_3
+_geom_torsion.site_symmetry_4
+
+_geom_contact.atom_site_label_1 _geom_contact.atom_site_id_1
+_geom_contact.atom_site_label_2 _geom_contact.atom_site_id_2
+_geom_contact.distance _geom_contact.dist
+_geom_contact.distance_su _geom_contact.dist_esd
+_geom_contact.id
+_geom_contact.publ_flag
+_geom_contact.site_symmetry_1
+_geom_contact.site_symmetry_2
+
+_geom_hbond.angle_DHA
+_geom_hbond.angle_DHA_su _geom_hbond.angle_DHA_esd
+_geom_hbond.atom_site_label_A _geom_hbond.atom_site_id_A
+_geom_hbond.atom_site_label_D _geom_hbond.atom_site_id_D
+_geom_hbond.atom_site_label_H _geom_hbond.atom_site_id_H
+_geom_hbond.distance_DA _geom_hbond.dist_DA
+_geom_hbond.distance_DA_su _geom_hbond.dist_DA_esd
+_geom_hbond.distance_DH _geom_hbond.dist_DH
+_geom_hbond.distance_DH_su _geom_hbond.dist_DH_esd
+_geom_hbond.distance_HA _geom_hbond.dist_HA
+_geom_hbond.distance_HA_su _geom_hbond.dist_HA_esd
+_geom_hbond.id
+_geom_hbond.publ_flag
+_geom_hbond.site_symmetry_A
+_geom_hbond.site_symmetry_D
+_geom_hbond.site_symmetry_H
+
+_refine.diffraction_theory
+_refine.diffraction_theory_details
+_refine.special_details _refine.details
+
+_refine_diff.density_max _refine.diff_density_max
+_refine_diff.density_max_su _refine.diff_density_max_esd
+_refine_diff.density_min _refine.diff_density_min
+_refine_diff.density_min_su _refine.diff_density_min_esd
+_refine_diff.density_RMS _refine.diff_density_RMS
+_refine_diff.density_RMS_su _refine.diff_density_RMS_esd
+_refine_diff.potential_max
+_refine_diff.potential_max_su
+_refine_diff.potential_min
+_refine_diff.potential_min_su
+_refine_diff.potential_RMS
+_refine_diff.potential_RMS_su
+
+_refine_ls.abs_structure_details _refine.ls_abs_structure_details
+_refine_ls.abs_structure_Flack _refine.ls_abs_structure_Flack
+_refine_ls.abs_structure_Flack_su _refine.ls_abs_structure_Flack_esd
+_refine_ls.abs_structure_Rogers _refine.ls_abs_structure_Rogers
+_refine_ls.abs_structure_Rogers_su _refine.ls_abs_structure_Rogers_esd
+_refine_ls.abs_structure_z-score
+_refine_ls.d_res_high _refine.ls_d_res_high
+_refine_ls.d_res_low _refine.ls_d_res_low
+_refine_ls.extinction_coef _refine.ls_extinction_coef
+_refine_ls.extinction_coef_su _refine.ls_extinction_coef_esd
+_refine_ls.extinction_expression _refine.ls_extinction_expression
+_refine_ls.extinction_method _refine.ls_extinction_method
+_refine_ls.F_calc_details
+_refine_ls.F_calc_formula
+_refine_ls.F_calc_precision
+_refine_ls.F_calc_precision_su
+_refine_ls.goodness_of_fit_all _refine.ls_goodness_of_fit_all
+_refine_ls.goodness_of_fit_all_su _refine.ls_goodness_of_fit_all_esd
+_refine_ls.goodness_of_fit_gt _refine_ls_goodness_of_fit_obs _refine.ls_goodness_of_fit_obs _refine.ls_goodness_of_fit_gt
+_refine_ls.goodness_of_fit_gt_su _refine.ls_goodness_of_fit_gt_esd _refine.ls_goodness_of_fit_obs_esd
+_refine_ls.goodness_of_fit_ref _refine.ls_goodness_of_fit_ref
+_refine_ls.goodness_of_fit_ref_su
+_refine_ls.hydrogen_treatment _refine.ls_hydrogen_treatment
+_refine_ls.matrix_type _refine.ls_matrix_type
+_refine_ls.number_constraints _refine.ls_number_constraints
+_refine_ls.number_parameters _refine.ls_number_parameters
+_refine_ls.number_reflns _refine.ls_number_reflns_all
+_refine_ls.number_reflns_gt _refine.ls_number_reflns_obs
+_refine_ls.number_restraints _refine.ls_number_restraints
+_refine_ls.R_factor_all _refine.ls_R_factor_all
+_refine_ls.R_factor_gt _refine_ls_R_factor_obs _refine.ls_R_factor_obs _refine.ls_R_factor_gt
+_refine_ls.R_Fsqd_factor _refine.ls_R_Fsqd_factor_obs
+_refine_ls.R_I_factor _refine.ls_R_I_factor_obs
+_refine_ls.restrained_S_all _refine.ls_restrained_S_all
+_refine_ls.restrained_S_all_su
+_refine_ls.restrained_S_gt _refine_ls_restrained_S_obs _refine.ls_restrained_S_obs
+_refine_ls.restrained_S_gt_su
+_refine_ls.sample_shape_details
+_refine_ls.sample_shape_expression
+_refine_ls.sample_thickness
+_refine_ls.sample_thickness_su
+_refine_ls.shift_over_su_max _refine.ls_shift_over_esd_max _refine.ls_shift_over_su_max _refine_ls_shift/su_max _refine_ls_shift/esd_max
+_refine_ls.shift_over_su_max_lt _refine_ls_shift/su_max_lt _refine.ls_shift_over_su_max_lt
+_refine_ls.shift_over_su_mean _refine.ls_shift_over_esd_mean _refine.ls_shift_over_su_mean _refine_ls_shift/su_mean _refine_ls_shift/esd_mean
+_refine_ls.shift_over_su_mean_lt _refine_ls_shift/su_mean_lt _refine.ls_shift_over_su_mean_lt
+_refine_ls.structure_factor_coef _refine.ls_structure_factor_coef
+_refine_ls.weighting_details _refine.ls_weighting_details
+_refine_ls.weighting_scheme _refine.ls_weighting_scheme
+_refine_ls.wR_factor_all _refine.ls_wR_factor_all
+_refine_ls.wR_factor_gt _refine_ls_wR_factor_obs _refine.ls_wR_factor_obs
+_refine_ls.wR_factor_ref
+
+_database_code.AMCSD
+_database_code.BIncStrDB
+_database_code.CAS _database.code_CAS
+_database_code.COD _database.code_COD
+_database_code.CSD _database.code_CSD
+_database_code.depnum_CCDC_archive _database.code_depnum_CCDC_archive
+_database_code.depnum_CCDC_fiz _database.code_depnum_CCDC_fiz
+_database_code.depnum_CCDC_journal _database.code_depnum_CCDC_journal
+_database_code.ICSD _database.code_ICSD
+_database_code.MDF _database.code_MDF
+_database_code.NBS _database.code_NBS
+_database_code.PDB _database.code_PDB
+_database_code.PDF _database.code_PDF
+
+_atom_site_moment.Cartn
+_atom_site_moment.Cartn_su
+_atom_site_moment.Cartn_x
+_atom_site_moment.Cartn_x_su
+_atom_site_moment.Cartn_y
+_atom_site_moment.Cartn_y_su
+_atom_site_moment.Cartn_z
+_atom_site_moment.Cartn_z_su
+_atom_site_moment.crystalaxis
+_atom_site_moment.crystalaxis_su
+_atom_site_moment.crystalaxis_x
+_atom_site_moment.crystalaxis_x_su
+_atom_site_moment.crystalaxis_y
+_atom_site_moment.crystalaxis_y_su
+_atom_site_moment.crystalaxis_z
+_atom_site_moment.crystalaxis_z_su
+_atom_site_moment.label
+_atom_site_moment.magnitude
+_atom_site_moment.magnitude_su
+_atom_site_moment.modulation_flag
+_atom_site_moment.refinement_flags_magnetic
+_atom_site_moment.spherical_azimuthal
+_atom_site_moment.spherical_azimuthal_su
+_atom_site_moment.spherical_modulus
+_atom_site_moment.spherical_modulus_su
+_atom_site_moment.spherical_polar
+_atom_site_moment.spherical_polar_su
+_atom_site_moment.symmform
+
+_parent_space_group.child_transform_Pp_abc
+_parent_space_group.IT_number
+_parent_space_group.name_H-M_alt
+_parent_space_group.reference_setting
+_parent_space_group.transform_Pp_abc
+
+_space_group_magn.Hall_symbol
+_space_group_magn.name_BNS
+_space_group_magn.name_OG
+_space_group_magn.name_UNI
+_space_group_magn.number_BNS
+_space_group_magn.number_OG
+_space_group_magn.OG_wavevector_kxkykz
+_space_group_magn.point_group_name_H-M _space_group_magn.point_group_name
+_space_group_magn.point_group_name_UNI
+_space_group_magn.point_group_number_Litvin _space_group_magn.point_group_number
+_space_group_magn.ssg_name
+_space_group_magn.ssg_number
+_space_group_magn.transform_BNS_Pp
+_space_group_magn.transform_BNS_Pp_abc
+_space_group_magn.transform_OG_Pp
+_space_group_magn.transform_OG_Pp_abc
+
+_space_group_symop_magn_centering.description
+_space_group_symop_magn_centering.id
+_space_group_symop_magn_centering.xyz
+
+_space_group_symop_magn_operation.description
+_space_group_symop_magn_operation.id _space_group_symop_magn.id
+_space_group_symop_magn_operation.xyz
+
+_atom_type_scat.Cromer_Mann_a1 _atom_type.scat_Cromer_Mann_a1
+_atom_type_scat.Cromer_Mann_a2 _atom_type.scat_Cromer_Mann_a2
+_atom_type_scat.Cromer_Mann_a3 _atom_type.scat_Cromer_Mann_a3
+_atom_type_scat.Cromer_Mann_a4 _atom_type.scat_Cromer_Mann_a4
+_atom_type_scat.Cromer_Mann_as
+_atom_type_scat.Cromer_Mann_b1 _atom_type.scat_Cromer_Mann_b1
+_atom_type_scat.Cromer_Mann_b2 _atom_type.scat_Cromer_Mann_b2
+_atom_type_scat.Cromer_Mann_b3 _atom_type.scat_Cromer_Mann_b3
+_atom_type_scat.Cromer_Mann_b4 _atom_type.scat_Cromer_Mann_b4
+_atom_type_scat.Cromer_Mann_bs
+_atom_type_scat.Cromer_Mann_c _atom_type.scat_Cromer_Mann_c
+_atom_type_scat.dispersion
+_atom_type_scat.dispersion_imag _atom_type.scat_dispersion_imag
+_atom_type_scat.dispersion_imag_Cu
+_atom_type_scat.dispersion_imag_Mo
+_atom_type_scat.dispersion_real _atom_type.scat_dispersion_real
+_atom_type_scat.dispersion_real_Cu
+_atom_type_scat.dispersion_real_Mo
+_atom_type_scat.dispersion_source _atom_type.scat_dispersion_source
+_atom_type_scat.exponential_polynomial_coefs
+_atom_type_scat.exponential_polynomial_coefs_su
+_atom_type_scat.exponential_polynomial_lower_limit
+_atom_type_scat.exponential_polynomial_upper_limit
+_atom_type_scat.Gaussian_as
+_atom_type_scat.Gaussian_as_su
+_atom_type_scat.Gaussian_bs
+_atom_type_scat.Gaussian_bs_su
+_atom_type_scat.Gaussian_c
+_atom_type_scat.Gaussian_c_su
+_atom_type_scat.Gaussian_lower_limit
+_atom_type_scat.Gaussian_upper_limit
+_atom_type_scat.hi_ang_Fox_c0
+_atom_type_scat.hi_ang_Fox_c1
+_atom_type_scat.hi_ang_Fox_c2
+_atom_type_scat.hi_ang_Fox_c3
+_atom_type_scat.hi_ang_Fox_coefs
+_atom_type_scat.inv_Mott_Bethe_as
+_atom_type_scat.inv_Mott_Bethe_as_su
+_atom_type_scat.inv_Mott_Bethe_bs
+_atom_type_scat.inv_Mott_Bethe_bs_su
+_atom_type_scat.inv_Mott_Bethe_c
+_atom_type_scat.inv_Mott_Bethe_c_su
+_atom_type_scat.inv_Mott_Bethe_lower_limit
+_atom_type_scat.inv_Mott_Bethe_upper_limit
+_atom_type_scat.length_neutron _atom_type.scat_length_neutron
+_atom_type_scat.source _atom_type.scat_source
+_atom_type_scat.symbol
+_atom_type_scat.versus_stol_list _atom_type.scat_versus_stol_list
+_atom_type_scat.neutron_magnetic_j0_A1
+_atom_type_scat.neutron_magnetic_j0_a2
+_atom_type_scat.neutron_magnetic_j0_B1
+_atom_type_scat.neutron_magnetic_j0_b2
+_atom_type_scat.neutron_magnetic_j0_C1
+_atom_type_scat.neutron_magnetic_j0_c2
+_atom_type_scat.neutron_magnetic_j0_D
+_atom_type_scat.neutron_magnetic_j0_e
+_atom_type_scat.neutron_magnetic_j2_A1
+_atom_type_scat.neutron_magnetic_j2_a2
+_atom_type_scat.neutron_magnetic_j2_B1
+_atom_type_scat.neutron_magnetic_j2_b2
+_atom_type_scat.neutron_magnetic_j2_C1
+_atom_type_scat.neutron_magnetic_j2_c2
+_atom_type_scat.neutron_magnetic_j2_D
+_atom_type_scat.neutron_magnetic_j2_e
+_atom_type_scat.neutron_magnetic_j4_A1
+_atom_type_scat.neutron_magnetic_j4_a2
+_atom_type_scat.neutron_magnetic_j4_B1
+_atom_type_scat.neutron_magnetic_j4_b2
+_atom_type_scat.neutron_magnetic_j4_C1
+_atom_type_scat.neutron_magnetic_j4_c2
+_atom_type_scat.neutron_magnetic_j4_D
+_atom_type_scat.neutron_magnetic_j4_e
+_atom_type_scat.neutron_magnetic_j6_A1
+_atom_type_scat.neutron_magnetic_j6_a2
+_atom_type_scat.neutron_magnetic_j6_B1
+_atom_type_scat.neutron_magnetic_j6_b2
+_atom_type_scat.neutron_magnetic_j6_C1
+_atom_type_scat.neutron_magnetic_j6_c2
+_atom_type_scat.neutron_magnetic_j6_D
+_atom_type_scat.neutron_magnetic_j6_e
+_atom_type_scat.neutron_magnetic_source
+`;
