@@ -1,0 +1,23 @@
+/** Point groups, their classes, species and labels; products, subduction and induction; tensors. Knows no crystals. */
+
+export { type CharacterTable, type ConjugacyClass, characterOf, type Irrep, irrepIndex } from "./character-table.ts";
+export { crystalMatrices, orientedSymbols } from "./crystal-matrices.ts";
+export {
+  antisymmetricSquare,
+  composeCharacters,
+  decompose,
+  directProduct,
+  symmetricSquare,
+} from "./decomposition.ts";
+export type { AxisFrame } from "./direction.ts";
+export { type PointGroup, pointGroup } from "./point-group.ts";
+export type { ReferenceAxes } from "./reference-axes.ts";
+export { type CrystalClass, type CrystalSystem, crystalClasses } from "./schoenflies.ts";
+export { embedding, induce, induceBy, subduce, subduceBy } from "./subduction.ts";
+export {
+  axialCharacter,
+  hyperRamanGeneralCharacter,
+  symmetricCubeCharacter,
+  symmetricSquareCharacter,
+  vectorCharacter,
+} from "./tensor-characters.ts";

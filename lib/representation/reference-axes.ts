@@ -1,0 +1,95 @@
+import { apply, type IntMat3, type IntVec3, inverseUnimodular, negate, subtract } from "../algebra/index.ts";
+import type { AxialElement, CrystalElement, CrystalElements } from "./crystal-element.ts";
+import { formatDirection, opposite, toFrame, triple } from "./direction.ts";
+import type { Orientation } from "./orientation.ts";
+
+/** The directions to which labels refer, as [uvw] in terms of the frame. */
+export interface ReferenceAxes {
+  /** Mutually perpendicular and right-handed; null where the group does not fix them (as x and y of 2/m). */
+  readonly x: IntVec3 | null;
+  readonly y: IntVec3 | null;
+  readonly z: IntVec3 | null;
+  /** Symmetry directions perpendicular to z: C2' axes along them, sigma_v normal to them. */
+  readonly secondary: readonly IntVec3[];
+  /** C2'' axes along them, sigma_d normal to them; in D2d, D3h and C_nv of odd n, the directions of the other kind. */
+  readonly tertiary: readonly IntVec3[];
+  /** The same in words. */
+  readonly text: string;
+}
+
+/**
+ * The reference axes of a group with a chosen orientation. For a principal axis of order 3, 4 or 6, x is a of the
+ * frame if it is perpendicular to z, else the first secondary direction, else a projected along z.
+ * @param back adjugate of the frame matrix
+ */
+export function referenceAxes(
+  description: CrystalElements,
+  axial: readonly AxialElement[],
+  orientation: Orientation,
+  frameX: IntVec3,
+  back: IntMat3,
+): ReferenceAxes {
+  const { axes } = description;
+  const uvw = (i: number) => axes[i]!.uvw;
+  const secondary = orientation.secondary.map(uvw);
+  const tertiary = orientation.tertiary.map(uvw);
+  const z = orientation.z < 0 ? null : uvw(orientation.z);
+  let [x, y]: [IntVec3 | null, IntVec3 | null] = [null, null];
+  if (orientation.x >= 0 && z) {
+    x = uvw(orientation.x);
+    y = uvw(orientation.y);
+    if (triple(x, y, z) < 0) y = opposite(y);
+  } else if (orientation.z >= 0) {
+    [x, y] = planeAxes(description, axial, orientation, frameX, back) ?? [null, null];
+  }
+  return { x, y, z, secondary, tertiary, text: describe(x, y, z) };
+}
+
+/** x and y perpendicular to a principal axis of order 3, 4 or 6; null for an axis of lower order. */
+function planeAxes(
+  description: CrystalElements,
+  axial: readonly AxialElement[],
+  orientation: Orientation,
+  frameX: IntVec3,
+  back: IntMat3,
+): [IntVec3, IntVec3] | null {
+  const { elements, axes } = description;
+  const first = axial.findIndex((e, i) => !e.reflects && e.turn > 0 && e.turn < 6 && elements[i]!.order > 2);
+  if (first < 0) return null;
+  const R = rotationPart(elements[first]!);
+  const choice = orientation.secondary[0];
+  let x = project(frameX, R, elements[first]!.order);
+  const xInPlane = toFrame(x, back);
+  const isFrameX = xInPlane[1] === 0 && xInPlane[2] === 0;
+  if (!isFrameX && choice !== undefined) x = axes[choice]!.vector;
+  const X = toFrame(x, back);
+  const z = axes[orientation.z]!.uvw;
+  const y = toFrame(apply(subtract(R, inverseUnimodular(R)), x), back);
+  return [X, triple(X, y, z) < 0 ? opposite(y) : y];
+}
+
+function rotationPart(e: CrystalElement): IntMat3 {
+  return e.proper ? e.W : negate(e.W);
+}
+
+/** n v minus the sum of the images of v under the powers of R, of order n: perpendicular to the axis of R. */
+function project(v: IntVec3, R: IntMat3, n: number): IntVec3 {
+  let [sx, sy, sz]: IntVec3 = [0, 0, 0];
+  let image = v;
+  for (let k = 0; k < n; k++) {
+    sx += image[0];
+    sy += image[1];
+    sz += image[2];
+    image = apply(R, image);
+  }
+  return [n * v[0] - sx, n * v[1] - sy, n * v[2] - sz];
+}
+
+function describe(x: IntVec3 | null, y: IntVec3 | null, z: IntVec3 | null): string {
+  const named: [string, IntVec3 | null][] = [
+    ["x", x],
+    ["y", y],
+    ["z", z],
+  ];
+  return named.flatMap(([name, v]) => (v ? [`${name} along ${formatDirection(v)}`] : [])).join(", ");
+}

@@ -1,0 +1,67 @@
+/**
+ * Generators of the crystal classes in every conventional orientation, by International symbol; in conventional axes
+ * (hexagonal axes for 3 and 6). Letters name the matrices of `MATRICES`; a leading minus is the matrix times -1.
+ * Source: International Tables for Crystallography A (2016), section 3.2.1 (choice of generators is ours); a test
+ * recomputes order and symbol of every entry.
+ */
+export const GENERATORS: Readonly<Record<string, string>> = {
+  "1": "",
+  "-1": "-e",
+  "2": "2y",
+  m: "-2y",
+  "2/m": "2y -e",
+  "112": "2z",
+  "11m": "-2z",
+  "112/m": "2z -e",
+  "211": "2x",
+  m11: "-2x",
+  "2/m11": "2x -e",
+  "222": "2z 2x",
+  mm2: "2z -2x",
+  "2mm": "2x -2y",
+  m2m: "2y -2x",
+  mmm: "2z 2x -e",
+  "4": "4z",
+  "-4": "-4z",
+  "4/m": "4z -e",
+  "422": "4z 2x",
+  "4mm": "4z -2x",
+  "-42m": "-4z 2x",
+  "-4m2": "-4z -2x",
+  "4/mmm": "4z 2x -e",
+  "3": "3z",
+  "-3": "3z -e",
+  "321": "3z 2h",
+  "312": "3z 2k",
+  "3m1": "3z -2h",
+  "31m": "3z -2k",
+  "-3m1": "3z 2h -e",
+  "-31m": "3z 2k -e",
+  "6": "6z",
+  "-6": "-6z",
+  "6/m": "6z -e",
+  "622": "6z 2h",
+  "6mm": "6z -2h",
+  "-62m": "-6z 2h",
+  "-6m2": "-6z -2h",
+  "6/mmm": "6z 2h -e",
+  "23": "2z 2x 3d",
+  "m-3": "2z 2x 3d -e",
+  "432": "4z 3d",
+  "-43m": "-4z 3d",
+  "m-3m": "4z 3d -e",
+};
+
+/** Row-major; `h` and `k` are twofold about [100] and [1-10] of hexagonal axes, `d` about [111]. */
+export const MATRICES: Readonly<Record<string, string>> = {
+  e: "1 0 0 0 1 0 0 0 1",
+  "2x": "1 0 0 0 -1 0 0 0 -1",
+  "2y": "-1 0 0 0 1 0 0 0 -1",
+  "2z": "-1 0 0 0 -1 0 0 0 1",
+  "4z": "0 -1 0 1 0 0 0 0 1",
+  "3z": "0 -1 0 1 -1 0 0 0 1",
+  "6z": "1 -1 0 1 0 0 0 0 1",
+  "2h": "1 -1 0 0 -1 0 0 0 -1",
+  "2k": "0 -1 0 -1 0 0 0 0 -1",
+  "3d": "0 0 1 1 0 0 0 1 0",
+};
