@@ -55,3 +55,11 @@ export function isLineStart(source: string, at: number): boolean {
   const before = source.charCodeAt(at - 1);
   return isLineEnd(before) || (at === 1 && before === BYTE_ORDER_MARK);
 }
+
+export function isBracket(code: number): boolean {
+  return code === LEFT_BRACKET || code === LEFT_BRACE || isCloser(code);
+}
+
+export function isCloser(code: number): boolean {
+  return code === RIGHT_BRACKET || code === RIGHT_BRACE;
+}

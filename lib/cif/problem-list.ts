@@ -11,6 +11,13 @@ export function excerpt(text: string): string {
   return JSON.stringify(cut);
 }
 
+/** The word at `at`, for a message; looks no further ahead than it shows. */
+export function excerptWord(source: string, at: number): string {
+  const ahead = source.slice(at, at + LONGEST_EXCERPT + 1);
+  const blank = ahead.search(/\s/);
+  return excerpt(blank < 0 ? ahead : ahead.slice(0, blank));
+}
+
 /** Faults as they are met; handed out in the order of the text. */
 export class ProblemList {
   readonly #problems: InputProblem[] = [];

@@ -1,10 +1,12 @@
-import type { Span } from "../problem.ts";
+import { Brackets } from "./brackets.ts";
 import {
   blankFrom,
   COLON,
   DOLLAR,
   DOUBLE_QUOTE,
   HASH,
+  isBracket,
+  isCloser,
   isLineStart,
   LEFT_BRACE,
   LEFT_BRACKET,
@@ -17,7 +19,7 @@ import {
   UNDERSCORE,
 } from "./characters.ts";
 import { keywordKind, structuralLine } from "./keywords.ts";
-import { excerpt, type ProblemList } from "./problem-list.ts";
+import { excerpt, excerptWord, type ProblemList } from "./problem-list.ts";
 import { FieldEnds, isTriple, quoteEnd11, quoteEnd20, swallowedFrom, tripleEnd } from "./strings.ts";
 import * as Kind from "./token-buffer.ts";
 import { type CifVersion, TokenBuffer } from "./token-buffer.ts";
@@ -39,13 +41,14 @@ function firstCharacters(version: CifVersion): Uint8Array {
 /** One pass over the text, token after token; what is not well formed is reported and read as far as it makes sense. */
 export class Scanner {
   readonly #source: string;
-  readonly #two: boolean;
   readonly #version: CifVersion;
+  readonly #two: boolean;
   readonly #problems: ProblemList;
   readonly #tokens = new TokenBuffer();
   readonly #fields: FieldEnds;
-  /** Offsets of the brackets open at this point, innermost last; always empty in CIF 1.1. */
-  readonly #open: number[] = [];
+  readonly #brackets: Brackets;
+  /** Up to here no quote is followed by a blank; keeps a line full of `'a'b` from being searched once per string. */
+  #looseQuotesTo = 0;
 
   constructor(source: string, version: CifVersion, problems: ProblemList) {
     this.#source = source;
@@ -53,6 +56,7 @@ export class Scanner {
     this.#two = version === "2.0";
     this.#problems = problems;
     this.#fields = new FieldEnds(source);
+    this.#brackets = new Brackets(source, this.#tokens, problems);
   }
 
   /** Tokens of the text from offset `from` on. Time and memory linear in its length. */
@@ -75,30 +79,27 @@ export class Scanner {
         at = end;
       } else at = role === MAYBE_KEYWORD ? this.#word(at) : this.#special(c, at);
     }
-    if (this.#open.length > 0) this.#closeBrackets(length);
+    this.#brackets.closeAll(length);
     return tokens;
   }
 
-  #report(code: string, message: string, span: Span, hint: string): void {
-    this.#problems.add(code, message, span, hint);
-  }
-
-  /** End of an unquoted value. In CIF 2.0 brackets end it: silently inside brackets, else they are read as part of it. */
+  /** End of an unquoted value in CIF 2.0. Inside brackets any bracket ends it; elsewhere it is read as part of it. */
   #wordEnd20(at: number): number {
     const source = this.#source;
+    const inside = this.#brackets.depth > 0;
     let end = at + 1;
     let bracket = false;
     for (; end < source.length; end++) {
       const c = source.charCodeAt(end);
       if (c <= SPACE) break;
-      if (c !== LEFT_BRACKET && c !== RIGHT_BRACKET && c !== LEFT_BRACE && c !== RIGHT_BRACE) continue;
+      if (c < LEFT_BRACKET || !isBracket(c)) continue;
+      if (inside && isCloser(c)) return end;
       bracket = true;
-      if (this.#open.length > 0) break;
+      if (inside) break;
     }
-    if (bracket && !(this.#open.length > 0 && isCloser(source.charCodeAt(end)))) {
-      const word = source.slice(at, this.#open.length > 0 ? end + 1 : end);
-      const message = `the unquoted value ${excerpt(word)} contains a bracket, which CIF 2.0 keeps for lists and tables`;
-      this.#report("bracket-in-word", message, { start: at, end }, "Put the value in quotes.");
+    if (bracket) {
+      const message = `the unquoted value ${excerptWord(source, at)} holds a bracket, which CIF 2.0 keeps for lists and tables`;
+      this.#problems.add("bracket-in-word", message, { start: at, end }, "Put the value in quotes.");
     }
     return end;
   }
@@ -113,7 +114,7 @@ export class Scanner {
   }
 
   #structure(kind: number, start: number, end: number): number {
-    if (this.#open.length > 0) this.#closeBrackets(start);
+    this.#brackets.closeAll(start);
     this.#tokens.push(kind, start, end);
     return end;
   }
@@ -128,16 +129,18 @@ export class Scanner {
       case DOUBLE_QUOTE:
         return this.#two && isTriple(this.#source, at) ? this.#triple(at) : this.#quoted(at);
       case SEMICOLON:
-        if (isLineStart(this.#source, at)) return this.#field(at);
-        return this.#word(at);
+        return isLineStart(this.#source, at) ? this.#field(at) : this.#word(at);
       case LEFT_BRACKET:
       case LEFT_BRACE:
-        if (this.#two) return this.#openBracket(c, at);
-        return this.#reserved(at);
+        if (!this.#two) return this.#reserved(at);
+        this.#brackets.open(at);
+        return at + 1;
       case RIGHT_BRACKET:
       case RIGHT_BRACE:
-        if (this.#two) return this.#closeBracket(c, at);
-        return this.#reserved(at);
+        if (!this.#two) return this.#reserved(at);
+        this.#brackets.close(at);
+        this.#checkSeparation(at + 1);
+        return at + 1;
       default:
         return this.#reserved(at);
     }
@@ -145,15 +148,16 @@ export class Scanner {
 
   /** An unquoted value that begins with a character the version reserves; kept as a value. */
   #reserved(at: number): number {
-    const start = this.#source.charCodeAt(at);
-    const end = start === DOLLAR && this.#two ? this.#wordEnd20(at) : blankFrom(this.#source, at);
-    const word = excerpt(this.#source.slice(at, end));
-    const message = `the unquoted value ${word} begins with ${this.#source[at]}, which CIF ${this.#version} reserves`;
+    const source = this.#source;
+    const end = this.#two ? this.#wordEnd20(at) : blankFrom(source, at);
+    const word = excerpt(source.slice(at, end));
+    const message = `the unquoted value ${word} begins with ${source[at]}, which CIF ${this.#version} reserves`;
+    const quote = "Put the value in quotes";
     const hint =
-      start === DOLLAR
-        ? "Put the value in quotes."
-        : "Put the value in quotes, or, if a list is meant, begin the file with #\\#CIF_2.0.";
-    this.#report("reserved-character", message, { start: at, end }, hint);
+      source.charCodeAt(at) === DOLLAR
+        ? `${quote}.`
+        : `${quote}, or, if a list is meant, begin the file with #\\#CIF_2.0.`;
+    this.#problems.add("reserved-character", message, { start: at, end }, hint);
     this.#tokens.push(Kind.WORD, at, end);
     return end;
   }
@@ -165,59 +169,48 @@ export class Scanner {
       end = lineEndFrom(source, at);
       while (source.charCodeAt(end - 1) <= SPACE) end--;
       const message = `the quote that opens ${excerpt(source.slice(at, end))} is not closed on its line`;
-      this.#report("unterminated-quote", message, { start: at, end }, "Close the quote, or use a text field.");
+      this.#problems.add("unterminated-quote", message, { start: at, end }, "Close the quote, or use a text field.");
       this.#tokens.push(Kind.OPEN_QUOTED, at, end);
       return end;
     }
-    if (this.#two && this.#open.length === 0 && source.charCodeAt(end) > SPACE) end = this.#quoteInside(at, end);
+    if (this.#two && this.#brackets.depth === 0 && !this.#brackets.separates(end)) end = this.#quoteInside(at, end);
     return this.#string(Kind.QUOTED, at, end);
   }
 
   /** A CIF 2.0 string that goes on after its quote (`'don't'`) is read as CIF 1.1 would, if that closes it. */
   #quoteInside(at: number, end: number): number {
+    if (at < this.#looseQuotesTo) return end;
     const later = quoteEnd11(this.#source, at);
-    if (later <= end) return end;
+    if (later < 0) {
+      this.#looseQuotesTo = lineEndFrom(this.#source, at);
+      return end;
+    }
     const message = `${excerpt(this.#source.slice(at, later))} contains its own quote, which ends a string in CIF 2.0`;
-    this.#report("quote-inside", message, { start: end - 1, end }, "Use the other quote, or three of them.");
+    this.#problems.add("quote-inside", message, { start: end - 1, end }, "Use the other quote, or three of them.");
     return later;
   }
 
   #triple(at: number): number {
-    const source = this.#source;
-    const end = tripleEnd(source, at);
+    const end = tripleEnd(this.#source, at);
     if (end >= 0) return this.#string(Kind.TRIPLE, at, end);
-    const message = `the three quotes that open ${excerpt(source.slice(at, at + 40))} are never closed`;
-    this.#report("unterminated-quote", message, { start: at, end: at + 3 }, "Close the string with three quotes.");
+    const message = `the three quotes that open ${excerpt(this.#source.slice(at, at + 40))} are never closed`;
+    this.#problems.add(
+      "unterminated-quote",
+      message,
+      { start: at, end: at + 3 },
+      "Close the string with three quotes.",
+    );
     return this.#unclosed(Kind.OPEN_TRIPLE, at);
   }
 
-  /** A closed string: a table key if a colon follows inside brackets, else a value that must be followed by a blank. */
-  #string(kind: number, at: number, end: number): number {
-    const next = end < this.#source.length ? this.#source.charCodeAt(end) : SPACE;
-    const inside = this.#open.length > 0;
-    if (inside && next === COLON) {
-      this.#tokens.push(Kind.KEY, at, end);
-      return end + 1;
-    }
-    this.#tokens.push(kind, at, end);
-    if (next > SPACE && !(inside && isCloser(next))) this.#missingSpace(end);
-    return end;
-  }
-
-  #missingSpace(at: number): void {
-    const rest = this.#source.slice(at, Math.min(at + 60, blankFrom(this.#source, at)));
-    const message = `no blank separates ${excerpt(rest)} from the value before it`;
-    this.#report("missing-space", message, { start: at, end: at + 1 }, "Put a blank or a line end between them.");
-  }
-
   #field(at: number): number {
-    const source = this.#source;
     const close = this.#fields.after(at);
-    const swallowed = close < 0 ? -1 : swallowedFrom(source, at, close);
+    const swallowed = close < 0 ? -1 : swallowedFrom(this.#source, at, close);
     if (close >= 0 && swallowed < 0) return this.#string(Kind.FIELD, at, close + 2);
-    const head = excerpt(source.slice(at, lineEndFrom(source, at)));
+    const head = excerpt(this.#source.slice(at, lineEndFrom(this.#source, at)));
     const message = `the text field that opens with ${head} is never closed`;
-    this.#report("unterminated-text-field", message, { start: at, end: at + 1 }, "Close it with a line that is ;");
+    const hint = "Close it with a semicolon at the beginning of a line.";
+    this.#problems.add("unterminated-text-field", message, { start: at, end: at + 1 }, hint);
     return this.#unclosed(Kind.OPEN_FIELD, at);
   }
 
@@ -229,43 +222,21 @@ export class Scanner {
     return end;
   }
 
-  #openBracket(c: number, at: number): number {
-    this.#open.push(at);
-    this.#tokens.push(c === LEFT_BRACKET ? Kind.LIST : Kind.TABLE, at, at + 1);
-    return at + 1;
-  }
-
-  #closeBracket(c: number, at: number): number {
-    const open = this.#open[this.#open.length - 1];
-    const wanted = open === undefined ? 0 : this.#source.charCodeAt(open) + 2;
-    if (wanted !== c) {
-      const message = `the bracket ${this.#source[at]} closes nothing`;
-      const hint = wanted === 0 ? "Remove it, or put the value in quotes." : `Expected ${String.fromCharCode(wanted)}.`;
-      this.#report("bracket-mismatch", message, { start: at, end: at + 1 }, hint);
-      return at + 1;
+  /** A closed string: a table key if a colon follows inside brackets, else a value. */
+  #string(kind: number, at: number, end: number): number {
+    if (kind !== Kind.FIELD && this.#brackets.depth > 0 && this.#source.charCodeAt(end) === COLON) {
+      this.#tokens.push(Kind.KEY, at, end);
+      return end + 1;
     }
-    this.#open.pop();
-    this.#tokens.push(c === RIGHT_BRACKET ? Kind.LIST_END : Kind.TABLE_END, at, at + 1);
-    const next = at + 1 < this.#source.length ? this.#source.charCodeAt(at + 1) : SPACE;
-    if (next > SPACE && !(this.#open.length > 0 && isCloser(next))) this.#missingSpace(at + 1);
-    return at + 1;
+    this.#tokens.push(kind, at, end);
+    this.#checkSeparation(end);
+    return end;
   }
 
-  #closeBrackets(at: number): void {
-    for (let open = this.#open.pop(); open !== undefined; open = this.#open.pop()) {
-      const list = this.#source.charCodeAt(open) === LEFT_BRACKET;
-      const message = `the ${list ? "list" : "table"} that opens here is never closed`;
-      this.#report(
-        "unterminated-bracket",
-        message,
-        { start: open, end: open + 1 },
-        `Close it with ${list ? "]" : "}"}`,
-      );
-      this.#tokens.push(list ? Kind.LIST_END : Kind.TABLE_END, at, at);
-    }
+  #checkSeparation(at: number): void {
+    if (this.#brackets.separates(at)) return;
+    const message = `no blank separates ${excerptWord(this.#source, at)} from what stands before it`;
+    const hint = "Put a blank or a line end between them.";
+    this.#problems.add("missing-space", message, { start: at, end: at + 1 }, hint);
   }
-}
-
-function isCloser(code: number): boolean {
-  return code === RIGHT_BRACKET || code === RIGHT_BRACE;
 }
