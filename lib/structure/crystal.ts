@@ -41,24 +41,39 @@ export interface CrystalOptions {
   readonly tolerance?: number;
 }
 
+/** What a crystal is made from. */
+export interface CrystalParts {
+  readonly name: string;
+  readonly metric: Metric;
+  readonly group: SpaceGroup;
+  readonly sites: readonly AtomSite[];
+  readonly notes?: readonly string[];
+  /** angstrom; default POSITION_TOLERANCE */
+  readonly tolerance?: number;
+}
+
+/**
+ * A crystal from its parts: sites are snapped onto special positions, expanded, and merged where they coincide.
+ * @throws InputProblem `tolerance-impossible`
+ */
+export function crystalOf(parts: CrystalParts): Crystal {
+  const { name, metric, group } = parts;
+  const tolerance = checkedTolerance(parts.tolerance ?? POSITION_TOLERANCE);
+  const placed = placeSites(group, metric, parts.sites, tolerance);
+  const notes = [...(parts.notes ?? []), ...shapeNotes(metric, group), ...placed.notes];
+  return { name, metric, group, sites: placed.sites, notes, tolerance };
+}
+
 /**
  * Builds the crystal from a CIF block.
  * @throws InputProblem for a missing or impossible cell, symmetry or atom list
  */
 export function crystalFromBlock(block: CifBlock, options: CrystalOptions = {}): Crystal {
-  const tolerance = checkedTolerance(options.tolerance ?? POSITION_TOLERANCE);
   const metric = metricOf(readCell(block));
   const symmetry = readSymmetry(block);
   const list = readAtomSites(block, metric);
-  const placed = placeSites(symmetry.group, metric, list.sites, tolerance);
-  return {
-    name: block.name,
-    metric,
-    group: symmetry.group,
-    sites: placed.sites,
-    notes: [...symmetry.notes, ...shapeNotes(metric, symmetry.group), ...list.notes, ...placed.notes],
-    tolerance,
-  };
+  const notes = [...symmetry.notes, ...list.notes];
+  return crystalOf({ name: block.name, metric, group: symmetry.group, sites: list.sites, notes, ...options });
 }
 
 function checkedTolerance(tolerance: number): number {

@@ -16,8 +16,10 @@ export {
 export {
   type Crystal,
   type CrystalOptions,
+  type CrystalParts,
   type CrystalSite,
   crystalFromBlock,
+  crystalOf,
   METRIC_TOLERANCE,
   POSITION_TOLERANCE,
   placeSites,
@@ -34,4 +36,5 @@ export type { DisplacementTensor } from "./displacement.ts";
 export { type Element, element, readLabel, readTypeSymbol, type SpeciesReading } from "./elements.ts";
 export { type Image, multiplicityOf, orbitOf, wrap } from "./orbit.ts";
 export { nearestDistance, PeriodicPoints } from "./periodic-points.ts";
+export { type Position, type PositionsAnswer, positionsAnswer } from "./positions-answer.ts";
 export { type SiteSymmetry, siteSymmetry } from "./site-symmetry.ts";

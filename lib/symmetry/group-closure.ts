@@ -5,9 +5,10 @@ import { compose, IDENTITY_OPERATION, type Operation, operationKey, reduce } fro
 /** More operations than any crystal lists, a 4 x 4 x 4 cell of a face-centred cubic group included. */
 export const LARGEST_GROUP = 192 * 64;
 
+/** An operation by the index of its rotation part, and its translation over the common denominator, in [0, d). */
 interface Member {
-  readonly W: IntMat3;
-  readonly w: readonly [number, number, number]; // over the common denominator
+  readonly r: number;
+  readonly w: readonly [number, number, number];
 }
 
 /**
@@ -17,56 +18,95 @@ interface Member {
  */
 export function closeGroup(generators: readonly Operation[], limit: number = LARGEST_GROUP): Operation[] {
   const d = generators.reduce((m, g) => lcm(m, g.w.d), 1);
-  const given = generators.map((g) => member(g, d));
-  const found = new Map<string, Member>();
+  const rotations = new RotationTable(limit);
+  const identity: Member = { r: rotations.add(IDENTITY), w: [0, 0, 0] };
+  const given = generators.map((g) => memberOf(g, d, rotations));
+  const found = new Map<number | string, Member>();
   const insert = (m: Member) => {
-    const k = key(m);
+    const k = keyOf(m, d);
     if (found.has(k)) return;
     if (found.size >= limit) throw endless(limit);
     found.set(k, m);
   };
-  insert({ W: IDENTITY, w: [0, 0, 0] });
-  for (const g of given) insert(g);
+  for (const m of [identity, ...given]) insert(m);
   const chosen: Member[] = [];
-  const spanned = new Set<string>([key({ W: IDENTITY, w: [0, 0, 0] })]);
+  let spanned = new Set<number | string>([keyOf(identity, d)]);
   for (const g of given) {
-    if (spanned.has(key(g))) continue;
+    if (spanned.has(keyOf(g, d))) continue;
     chosen.push(g);
-    span(spanned, chosen, d, insert);
+    spanned = span(identity, chosen, d, rotations, insert);
   }
-  return [...found.values()].map((m) => ({ W: m.W, w: ratVec3(m.w, d) }));
+  return [...found.values()].map((m) => ({ W: rotations.at(m.r), w: ratVec3(m.w, d) }));
 }
 
 /** Right products by the chosen generators, from the identity outwards, until nothing new appears. */
-function span(spanned: Set<string>, chosen: readonly Member[], d: number, insert: (m: Member) => void): void {
-  spanned.clear();
-  const identity: Member = { W: IDENTITY, w: [0, 0, 0] };
-  spanned.add(key(identity));
+function span(
+  identity: Member,
+  chosen: readonly Member[],
+  d: number,
+  rotations: RotationTable,
+  insert: (m: Member) => void,
+): Set<number | string> {
+  const spanned = new Set<number | string>([keyOf(identity, d)]);
   const queue = [identity];
   for (let i = 0; i < queue.length; i++) {
     for (const g of chosen) {
-      const product = times(queue[i]!, g, d);
-      const k = key(product);
+      const a = queue[i]!;
+      const v = apply(rotations.at(a.r), g.w);
+      const w = [mod(v[0] + a.w[0], d), mod(v[1] + a.w[1], d), mod(v[2] + a.w[2], d)] as const;
+      const product: Member = { r: rotations.product(a.r, g.r), w };
+      const k = keyOf(product, d);
       if (spanned.has(k)) continue;
       insert(product);
       spanned.add(k);
       queue.push(product);
     }
   }
+  return spanned;
 }
 
-function member(g: Operation, d: number): Member {
+function memberOf(g: Operation, d: number, rotations: RotationTable): Member {
   const f = d / g.w.d;
-  return { W: g.W, w: [mod(g.w.n[0] * f, d), mod(g.w.n[1] * f, d), mod(g.w.n[2] * f, d)] };
+  return { r: rotations.add(g.W), w: [mod(g.w.n[0] * f, d), mod(g.w.n[1] * f, d), mod(g.w.n[2] * f, d)] };
 }
 
-function times(a: Member, b: Member, d: number): Member {
-  const v = apply(a.W, b.w);
-  return { W: multiply(a.W, b.W), w: [mod(v[0] + a.w[0], d), mod(v[1] + a.w[1], d), mod(v[2] + a.w[2], d)] };
+/** Largest denominator whose cube, times the number of rotation parts, is still a safe integer. */
+const LARGEST_PACKED = 8192;
+
+function keyOf({ r, w }: Member, d: number): number | string {
+  return d <= LARGEST_PACKED ? ((r * d + w[0]) * d + w[1]) * d + w[2] : `${r}|${w.join()}`;
 }
 
-function key(m: Member): string {
-  return `${m.W.join()}|${m.w.join()}`;
+/** Rotation parts by index, with their products worked out once. */
+class RotationTable {
+  private readonly limit: number;
+  private readonly matrices: IntMat3[] = [];
+  private readonly index = new Map<string, number>();
+  private readonly products: number[][] = [];
+
+  constructor(limit: number) {
+    this.limit = limit;
+  }
+
+  add(W: IntMat3): number {
+    const k = W.join();
+    const known = this.index.get(k);
+    if (known !== undefined) return known;
+    if (this.matrices.length >= this.limit) throw endless(this.limit);
+    this.index.set(k, this.matrices.length);
+    this.products.push([]);
+    return this.matrices.push(W) - 1;
+  }
+
+  at(r: number): IntMat3 {
+    return this.matrices[r]!;
+  }
+
+  product(a: number, b: number): number {
+    const row = this.products[a]!;
+    row[b] ??= this.add(multiply(this.at(a), this.at(b)));
+    return row[b];
+  }
 }
 
 function endless(limit: number): InputProblem {

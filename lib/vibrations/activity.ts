@@ -25,11 +25,7 @@ export interface Activity {
 
 /** Activity of each species of a point group, in the order of its irreps. */
 export function activities(group: PointGroup): Activity[] {
-  const holds = (character: (W: IntMat3) => number) =>
-    decompose(
-      group,
-      group.classes.map((c) => character(group.elements[c.members[0]!]!)),
-    );
+  const holds = (character: (W: IntMat3) => number) => decompose(group, group.elements.map(character));
   const infrared = holds(vectorCharacter);
   const raman = holds(symmetricSquareCharacter);
   const hyper = holds(symmetricCubeCharacter);

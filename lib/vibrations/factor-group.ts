@@ -73,10 +73,7 @@ export function factorGroupModes(crystal: Crystal, frame?: AxisFrame): FactorGro
   const total = group.irreps.map((_, i) => sites.reduce((s, site) => s + site.contributions[i]!, 0));
   const characters = countedCharacters(crystal, vibrating);
   compareWays(group, total, characters);
-  const acoustic = decompose(
-    group,
-    group.classes.map((c) => vectorCharacter(group.elements[c.members[0]!]!)),
-  );
+  const acoustic = decompose(group, group.elements.map(vectorCharacter));
   const activity = activities(group);
   const species = group.irreps.map((irrep, i) => {
     const act = activity[i]!;
@@ -97,10 +94,7 @@ function correlator(group: PointGroup, frame: AxisFrame | undefined): (v: Vibrat
     let found = known.get(key);
     if (!found) {
       const siteGroup = pointGroup(rotations, frame);
-      const siteSpecies = decompose(
-        siteGroup,
-        siteGroup.classes.map((c) => vectorCharacter(siteGroup.elements[c.members[0]!]!)),
-      );
+      const siteSpecies = decompose(siteGroup, siteGroup.elements.map(vectorCharacter));
       const induced = induce(siteGroup, group);
       const perSite = group.irreps.map((_, i) => siteSpecies.reduce((s, n, j) => s + n * induced[j]![i]!, 0));
       found = { siteGroup, siteSpecies, perSite };
@@ -111,8 +105,7 @@ function correlator(group: PointGroup, frame: AxisFrame | undefined): (v: Vibrat
 }
 
 function compareWays(group: PointGroup, total: readonly number[], characters: readonly number[]): void {
-  const perClass = group.classes.map((c) => characters[c.members[0]!]!);
-  const direct = decompose(group, perClass);
+  const direct = decompose(group, characters);
   if (direct.every((n, i) => n === total[i])) return;
   const show = (numbers: readonly number[]) => group.irreps.map((r, i) => `${numbers[i]} ${r.label}`).join(" ");
   throw new RangeError(`site correlation gives ${show(total)}, the direct count ${show(direct)}`);

@@ -8,4 +8,5 @@ export {
   type ModeTotals,
   type SiteModes,
 } from "./factor-group.ts";
+export { type IrrepAnswer, type ModesAnswer, modesAnswer, type SiteModesAnswer } from "./modes-answer.ts";
 export { type VibratingSite, vibratingSites } from "./vibrating-sites.ts";

@@ -1,0 +1,7 @@
+/** Results as text. Takes finished result objects; computes nothing. */
+export { formatNumber } from "./format-number.ts";
+export { modesText } from "./modes-text.ts";
+export { positionsText } from "./positions-text.ts";
+export { problemText } from "./problem-text.ts";
+export { type SpeciesTerm, speciesSum, typographicLabel } from "./species.ts";
+export { type Column, textTable, wrapText } from "./table.ts";

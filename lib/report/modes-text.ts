@@ -1,0 +1,94 @@
+import type { IrrepAnswer, ModesAnswer } from "../vibrations/index.ts";
+import { type SpeciesTerm, speciesSum, typographicLabel } from "./species.ts";
+import { type Column, textTable, wrapText } from "./table.ts";
+
+const WIDTH = 110;
+
+/** The whole answer of `modes` for a person, below the heading. */
+export function modesText(answer: ModesAnswer): string {
+  return [sums(answer), speciesTable(answer), siteTable(answer), countsText(answer)].join("\n\n");
+}
+
+/** Species and activity as papers write them. */
+function sums(answer: ModesAnswer): string {
+  const line = (name: string, pick: (s: IrrepAnswer) => number, marked = false) => {
+    const text = `Γ(${name}) = ${speciesSum(answer.irreps.map((s) => term(s, pick(s), marked)))}`;
+    return wrapText(text, WIDTH, "    ");
+  };
+  const only = (keep: (s: IrrepAnswer) => boolean) => (s: IrrepAnswer) => (keep(s) ? s.optic : 0);
+  return [
+    line("total", (s) => s.total),
+    line("acoustic", (s) => s.acoustic),
+    line("optic", (s) => s.optic, true),
+    line(
+      "Raman",
+      only((s) => s.raman),
+    ),
+    line(
+      "infrared",
+      only((s) => s.infrared),
+    ),
+    line(
+      "silent",
+      only((s) => s.silent),
+    ),
+  ].join("\n");
+}
+
+function term(s: IrrepAnswer, count: number, marked: boolean): SpeciesTerm {
+  const marks = marked ? [...(s.raman ? ["R"] : []), ...(s.infrared ? ["IR"] : [])] : [];
+  return { label: typographicLabel(s.label), count, marks };
+}
+
+function speciesTable(answer: ModesAnswer): string {
+  const right = { align: "right" } as const;
+  const columns: Column[] = [
+    { heading: "species" },
+    { heading: "dim", ...right },
+    { heading: "total", ...right },
+    { heading: "acoustic", ...right },
+    { heading: "optic", ...right },
+    { heading: "first order" },
+    { heading: "hyper-Raman" },
+  ];
+  const rows = answer.irreps.map((s) => [
+    typographicLabel(s.label),
+    String(s.dimension),
+    String(s.total),
+    String(s.acoustic),
+    String(s.optic),
+    [...(s.infrared ? ["infrared"] : []), ...(s.raman ? ["Raman"] : [])].join(", ") || "silent",
+    s.hyperRaman ? "yes" : s.hyperRamanGeneral ? "general tensor only" : "no",
+  ]);
+  return textTable(columns, rows);
+}
+
+/** Which species each site reaches, one column per species of the factor group. */
+function siteTable(answer: ModesAnswer): string {
+  const columns: Column[] = [
+    { heading: "site" },
+    { heading: "symmetry" },
+    { heading: "atoms", align: "right" },
+    { heading: "displacement in the site group" },
+    ...answer.irreps.map((s): Column => ({ heading: typographicLabel(s.label), align: "right" })),
+  ];
+  const rows = answer.sites.map((site) => [
+    site.label,
+    `${site.siteSymmetry} (${site.schoenflies})`,
+    String(site.atoms),
+    speciesSum(Object.entries(site.siteSpecies).map(([label, count]) => ({ label: typographicLabel(label), count }))),
+    ...answer.irreps.map((s) => String(site.contributions[s.label] ?? ".")),
+  ]);
+  return textTable(columns, rows);
+}
+
+function countsText({ totals, irreps }: ModesAnswer): string {
+  const optic = irreps.reduce((n, s) => n + s.optic, 0);
+  const coincidence = totals.mutualExclusion
+    ? "no species is active in both (mutual exclusion)"
+    : `${totals.coincident} of them active in both`;
+  return [
+    `Bands (a degenerate species is one band): ${optic} optic, from ${totals.opticModes} modes`,
+    `  infrared ${totals.infraredBands}, Raman ${totals.ramanBands}; ${coincidence}; silent in both ${totals.silent}`,
+  ].join("\n");
+}

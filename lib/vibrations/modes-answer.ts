@@ -1,0 +1,93 @@
+import type { AxisFrame } from "../representation/index.ts";
+import type { Crystal } from "../structure/index.ts";
+import { type FactorGroupModes, factorGroupModes, type ModeTotals } from "./factor-group.ts";
+
+/** A species of the factor group as the JSON contract lays it out. */
+export interface IrrepAnswer {
+  readonly label: string;
+  readonly dimension: number;
+  readonly total: number;
+  readonly acoustic: number;
+  readonly optic: number;
+  readonly infrared: boolean;
+  readonly raman: boolean;
+  readonly hyperRaman: boolean;
+  readonly hyperRamanGeneral: boolean;
+  readonly silent: boolean;
+  /** Character by rotation matrix, row-major in the basis of the file. */
+  readonly characters: Readonly<Record<string, number>>;
+  /** Number of modes from each site. */
+  readonly sites: Readonly<Record<string, number>>;
+}
+
+export interface SiteModesAnswer {
+  readonly label: string;
+  readonly siteSymmetry: string;
+  readonly schoenflies: string;
+  readonly order: number;
+  readonly atoms: number;
+  /** Species of the displacement in the site group. */
+  readonly siteSpecies: Readonly<Record<string, number>>;
+  readonly contributions: Readonly<Record<string, number>>;
+}
+
+export interface ModesAnswer {
+  readonly atomsInPrimitiveCell: number;
+  /** How many primitive cells the cell of the file holds. */
+  readonly primitiveCellsInCell: number;
+  readonly factorGroup: { readonly hermannMauguin: string; readonly schoenflies: string; readonly axes: string };
+  readonly classes: readonly { readonly name: string; readonly size: number; readonly directions: readonly string[] }[];
+  readonly irreps: readonly IrrepAnswer[];
+  readonly sites: readonly SiteModesAnswer[];
+  readonly totals: ModeTotals;
+}
+
+/** Species, activities and counts of the modes of a crystal at k = 0, as plain data. */
+export function modesAnswer(crystal: Crystal, frame?: AxisFrame): ModesAnswer {
+  const modes = factorGroupModes(crystal, frame);
+  const { group } = modes;
+  return {
+    atomsInPrimitiveCell: modes.atomsInPrimitiveCell,
+    primitiveCellsInCell: crystal.group.centrings.length,
+    factorGroup: {
+      hermannMauguin: group.hermannMauguin,
+      schoenflies: group.schoenflies,
+      axes: group.axes.text,
+    },
+    classes: group.classes.map(({ name, size, directions }) => ({ name, size, directions })),
+    irreps: modes.species.map((s, i) => ({
+      label: s.label,
+      dimension: s.dimension,
+      total: s.total,
+      acoustic: s.acoustic,
+      optic: s.optic,
+      infrared: s.infrared,
+      raman: s.raman,
+      hyperRaman: s.hyperRaman,
+      hyperRamanGeneral: s.hyperRamanGeneral,
+      silent: s.silent,
+      characters: charactersByMatrix(modes, i),
+      sites: Object.fromEntries(modes.sites.map((site) => [site.label, site.contributions[i]!])),
+    })),
+    sites: modes.sites.map((site) => ({
+      label: site.label,
+      siteSymmetry: site.group.hermannMauguin,
+      schoenflies: site.group.schoenflies,
+      order: site.group.order,
+      atoms: site.count,
+      siteSpecies: byLabel(site.group.irreps, site.siteSpecies),
+      contributions: byLabel(group.irreps, site.contributions),
+    })),
+    totals: modes.totals,
+  };
+}
+
+function byLabel(irreps: readonly { readonly label: string }[], numbers: readonly number[]): Record<string, number> {
+  return Object.fromEntries(irreps.flatMap((irrep, i) => (numbers[i]! > 0 ? [[irrep.label, numbers[i]!]] : [])));
+}
+
+function charactersByMatrix({ group }: FactorGroupModes, irrep: number): Record<string, number> {
+  return Object.fromEntries(
+    group.elements.map((W, e) => [W.join(), group.irreps[irrep]!.characters[group.classOf[e]!]!]),
+  );
+}
