@@ -1,3 +1,8 @@
+/**
+ * Integer matrices and vectors, unchecked for speed: exact as long as sums of products stay below 2^53, which holds for
+ * symmetry operations and for the basis changes between cells. The rational matrices check.
+ */
+
 /** Row-major: entry (i, j) is m[3 * i + j]. */
 export type IntMat3 = readonly [number, number, number, number, number, number, number, number, number];
 /** A column or a row of three integers, as the function says. */
@@ -6,38 +11,38 @@ export type IntVec3 = readonly [number, number, number];
 export const IDENTITY: IntMat3 = [1, 0, 0, 0, 1, 0, 0, 0, 1];
 export const MINUS_IDENTITY: IntMat3 = [-1, 0, 0, 0, -1, 0, 0, 0, -1];
 
-/** Matrix product a b. */
+/** Matrix product a b. Here and below + 0 turns -0 into 0. */
 export function multiply(a: IntMat3, b: IntMat3): IntMat3 {
   const [a0, a1, a2, a3, a4, a5, a6, a7, a8] = a;
   const [b0, b1, b2, b3, b4, b5, b6, b7, b8] = b;
   return [
-    a0 * b0 + a1 * b3 + a2 * b6,
-    a0 * b1 + a1 * b4 + a2 * b7,
-    a0 * b2 + a1 * b5 + a2 * b8,
-    a3 * b0 + a4 * b3 + a5 * b6,
-    a3 * b1 + a4 * b4 + a5 * b7,
-    a3 * b2 + a4 * b5 + a5 * b8,
-    a6 * b0 + a7 * b3 + a8 * b6,
-    a6 * b1 + a7 * b4 + a8 * b7,
-    a6 * b2 + a7 * b5 + a8 * b8,
+    a0 * b0 + a1 * b3 + a2 * b6 + 0,
+    a0 * b1 + a1 * b4 + a2 * b7 + 0,
+    a0 * b2 + a1 * b5 + a2 * b8 + 0,
+    a3 * b0 + a4 * b3 + a5 * b6 + 0,
+    a3 * b1 + a4 * b4 + a5 * b7 + 0,
+    a3 * b2 + a4 * b5 + a5 * b8 + 0,
+    a6 * b0 + a7 * b3 + a8 * b6 + 0,
+    a6 * b1 + a7 * b4 + a8 * b7 + 0,
+    a6 * b2 + a7 * b5 + a8 * b8 + 0,
   ];
 }
 
 /** m v with v a column. */
 export function apply(m: IntMat3, v: IntVec3): IntVec3 {
   return [
-    m[0] * v[0] + m[1] * v[1] + m[2] * v[2],
-    m[3] * v[0] + m[4] * v[1] + m[5] * v[2],
-    m[6] * v[0] + m[7] * v[1] + m[8] * v[2],
+    m[0] * v[0] + m[1] * v[1] + m[2] * v[2] + 0,
+    m[3] * v[0] + m[4] * v[1] + m[5] * v[2] + 0,
+    m[6] * v[0] + m[7] * v[1] + m[8] * v[2] + 0,
   ];
 }
 
 /** v m with v a row. */
 export function applyRow(v: IntVec3, m: IntMat3): IntVec3 {
   return [
-    v[0] * m[0] + v[1] * m[3] + v[2] * m[6],
-    v[0] * m[1] + v[1] * m[4] + v[2] * m[7],
-    v[0] * m[2] + v[1] * m[5] + v[2] * m[8],
+    v[0] * m[0] + v[1] * m[3] + v[2] * m[6] + 0,
+    v[0] * m[1] + v[1] * m[4] + v[2] * m[7] + 0,
+    v[0] * m[2] + v[1] * m[5] + v[2] * m[8] + 0,
   ];
 }
 
@@ -48,7 +53,7 @@ export function determinant(m: IntMat3): number {
 }
 
 export function trace(m: IntMat3): number {
-  return m[0] + m[4] + m[8];
+  return m[0] + m[4] + m[8] + 0;
 }
 
 export function transpose(m: IntMat3): IntMat3 {
@@ -80,11 +85,11 @@ export function negate(m: IntMat3): IntMat3 {
 }
 
 export function subtract(a: IntMat3, b: IntMat3): IntMat3 {
-  return a.map((e, i) => e - b[i]!) as unknown as IntMat3;
+  return a.map((e, i) => e - b[i]! + 0) as unknown as IntMat3;
 }
 
 export function add(a: IntMat3, b: IntMat3): IntMat3 {
-  return a.map((e, i) => e + b[i]!) as unknown as IntMat3;
+  return a.map((e, i) => e + b[i]! + 0) as unknown as IntMat3;
 }
 
 export function equal(a: IntMat3, b: IntMat3): boolean {

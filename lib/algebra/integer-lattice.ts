@@ -1,9 +1,10 @@
-import { gcd } from "./rational.ts";
+import { exact, gcd } from "./rational.ts";
 
 /**
  * Row echelon form by unimodular row operations (Hermite form): positive pivots, entries above a pivot reduced to
  * [0, pivot), zero rows dropped. The rows returned span the same lattice as the rows given.
  * @param rows integer rows, each of length m
+ * @throws RangeError if an intermediate entry leaves the safe integers (so everywhere in this file)
  * Source: H. Cohen, A Course in Computational Algebraic Number Theory (1993), section 2.4 (method).
  */
 export function hermiteRows(rows: readonly (readonly number[])[]): number[][] {
@@ -43,7 +44,7 @@ function clearColumn(work: number[][], column: number): number[] | null {
 }
 
 function subtractMultiple(row: number[], by: readonly number[], k: number): void {
-  if (k !== 0) for (let j = 0; j < row.length; j++) row[j] = row[j]! - k * by[j]! + 0;
+  if (k !== 0) for (let j = 0; j < row.length; j++) row[j] = exact(row[j]! - exact(k * by[j]!)) + 0;
 }
 
 /** The row divided by the gcd of its entries; the zero row is returned as it is. */
@@ -155,7 +156,7 @@ function swapColumns(m: number[][], v: number[][], i: number, j: number): void {
 }
 
 function subtractColumn(m: number[][], j: number, by: number, k: number): void {
-  if (k !== 0) for (const row of m) row[j] = row[j]! - k * row[by]! + 0;
+  if (k !== 0) for (const row of m) row[j] = exact(row[j]! - exact(k * row[by]!)) + 0;
 }
 
 function negateRow(row: number[]): void {

@@ -24,6 +24,16 @@ export function mod(a: number, m: number): number {
 }
 
 /**
+ * The number itself, if it is exact. Products and sums of safe integers that leave the safe range round to numbers
+ * outside it, so checking each intermediate result is enough.
+ * @throws RangeError if it is not a safe integer
+ */
+export function exact(n: number): number {
+  if (!Number.isSafeInteger(n)) throw new RangeError(`beyond exact integers: ${n}`);
+  return n;
+}
+
+/**
  * The rational n/d in lowest terms.
  * @throws RangeError if d is 0, or if n or d is not a safe integer: exactness would be lost silently
  */
@@ -37,8 +47,9 @@ export function rational(n: number, d = 1): Rational {
 
 export const ZERO: Rational = { n: 0, d: 1 };
 
+/** @throws RangeError if exactness is lost, as all arithmetic here does */
 export function addRational(a: Rational, b: Rational): Rational {
-  return rational(a.n * b.d + b.n * a.d, a.d * b.d);
+  return rational(exact(a.n * b.d) + exact(b.n * a.d), a.d * b.d);
 }
 
 export function negateRational(a: Rational): Rational {
@@ -54,9 +65,9 @@ export function divideRational(a: Rational, b: Rational): Rational {
   return rational(a.n * b.d, a.d * b.n);
 }
 
-/** Negative, 0 or positive as a is below, equal to or above b. */
+/** Negative, 0 or positive as a is below, equal to or above b. @throws RangeError if exactness is lost */
 export function compareRational(a: Rational, b: Rational): number {
-  return a.n * b.d - b.n * a.d;
+  return exact(a.n * b.d) - exact(b.n * a.d);
 }
 
 /** `1/2`, `-3/4`, `2`. */
