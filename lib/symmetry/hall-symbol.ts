@@ -79,6 +79,11 @@ const HALL_LATTICES: Readonly<Record<HallLattice, readonly IntVec3[]>> = {
   H: [[4, 2, 0]],
 };
 
+/** Pure translations in [0, 1) of a lattice letter on conventional axes, 0 first; R, S and T on hexagonal axes. */
+export function latticeTranslations(letter: HallLattice): RatVec3[] {
+  return closeGroup(HALL_LATTICES[letter].map((n) => ({ W: IDENTITY, w: ratVec3(n, 6) }))).map((a) => a.w);
+}
+
 function keepsLattice(change: Transformation, centrings: readonly RatVec3[]): boolean {
   const lattice = closeGroup(centrings.map((w) => ({ W: IDENTITY, w }))).map((a) => a.w);
   const known = new Set(lattice.map((v) => `${v.n.join()}/${v.d}`));
@@ -142,7 +147,7 @@ function turned(m: IntMat3, to: "x" | "y" | "z"): IntMat3 {
 const FROM_Z = { x: 2, y: 1, z: 0 } as const;
 
 /** Shortest vector along the axis of a rotation, for its screw part. */
-function axisVector(r: HallRotation): IntVec3 {
+export function hallAxisVector(r: Pick<HallRotation, "axis" | "principal">): IntVec3 {
   if (r.axis === "*") return [1, 1, 1];
   const along = r.axis === "'" ? [1, -1, 0] : r.axis === '"' ? [1, 1, 0] : [0, 0, 1];
   const to = r.axis === "x" || r.axis === "y" ? r.axis : r.principal;
@@ -161,9 +166,14 @@ const LETTERS: Readonly<Record<string, IntVec3>> = {
   d: [1, 1, 1],
 };
 
+/** The translation that a letter a b c n u v w d stands for. */
+export function hallLetterVector(letter: string): RatVec3 {
+  return ratVec3(LETTERS[letter]!, 4);
+}
+
 function hallRotation(r: HallRotation): Operation {
-  const [x, y, z] = axisVector(r);
+  const [x, y, z] = hallAxisVector(r);
   const screw = ratVec3([x * r.screw, y * r.screw, z * r.screw], r.order);
-  const w = [...r.translations].reduce((sum, letter) => addVectors(sum, ratVec3(LETTERS[letter]!, 4)), screw);
+  const w = [...r.translations].reduce((sum, letter) => addVectors(sum, hallLetterVector(letter)), screw);
   return { W: hallRotationMatrix(r), w };
 }

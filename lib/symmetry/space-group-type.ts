@@ -9,6 +9,8 @@ export interface SpaceGroupType {
   readonly schoenflies: string;
   /** Short symbol with blanks, all directions named for unique axis b: `P 1 21/c 1`, `P n m a`, `F d -3 m`. */
   readonly hermannMauguin: string;
+  /** Full symbol with blanks: `P 21/n 21/m 21/a`, `F 41/d -3 2/m`. */
+  readonly fullHermannMauguin: string;
   /** Hall symbol of the reference setting. */
   readonly hall: string;
   /** What the reference setting chooses: origin `2`, hexagonal axes `H`, or nothing to choose. */
@@ -22,12 +24,13 @@ export function spaceGroupTypes(): readonly SpaceGroupType[] {
   decoded ??= SPACE_GROUP_TYPES.trim()
     .split("\n")
     .map((line, i): SpaceGroupType => {
-      const [schoenflies = "", symbol = "", hall = ""] = line.split("|");
+      const [schoenflies = "", symbol = "", hall = "", full] = line.split("|");
       const [hermannMauguin = "", choice = ""] = symbol.split(":");
       return {
         number: i + 1,
         schoenflies,
         hermannMauguin,
+        fullHermannMauguin: full ?? hermannMauguin,
         hall,
         choice: choice.toUpperCase() as SpaceGroupType["choice"],
       };
