@@ -7,11 +7,11 @@ import {
   integerNullspace,
   multiply,
   negate,
-  primitiveRow,
   trace,
   transpose,
 } from "../algebra/index.ts";
 import type { CrystalFamily } from "./geometric-class.ts";
+import { axisOf, powerSum } from "./rotation-axis.ts";
 
 /**
  * Axes of a conventional cell read off the rotation parts: columns of the result, in the basis that the rotation parts
@@ -42,22 +42,6 @@ export function conventionalAxes(rotations: readonly IntMat3[], family: CrystalF
     default:
       return family satisfies never;
   }
-}
-
-/** Primitive lattice vector along the axis of a proper rotation of order n: any column of 1 + R + ... + R^(n-1). */
-function axisOf(R: IntMat3, n: number): IntVec3 {
-  const sum = [...IDENTITY];
-  let power = R;
-  for (let k = 1; k < n; k++) {
-    for (let i = 0; i < 9; i++) sum[i]! += power[i]!;
-    power = multiply(power, R);
-  }
-  for (let j = 0; j < 3; j++) {
-    if (sum[j] || sum[3 + j] || sum[6 + j]) {
-      return primitiveRow([sum[j]!, sum[3 + j]!, sum[6 + j]!]) as unknown as IntVec3;
-    }
-  }
-  throw new RangeError(`no rotation of order ${n}: ${R.join(" ")}`);
 }
 
 /** The metric averaged over the group (times its order): invariant under every rotation part. */
@@ -95,12 +79,7 @@ function uniaxialAxes(R: IntMat3, order: 3 | 4, metric: IntMat3): IntMat3 {
 
 /** Basis of the lattice vectors normal to the axis: those that 1 + R + ... + R^(n-1) destroys. */
 function planeAcross(R: IntMat3, n: number): [IntVec3, IntVec3] {
-  const sum = [...IDENTITY];
-  let power = R;
-  for (let k = 1; k < n; k++) {
-    for (let i = 0; i < 9; i++) sum[i]! += power[i]!;
-    power = multiply(power, R);
-  }
+  const sum = powerSum(R, n);
   const rows = [sum.slice(0, 3), sum.slice(3, 6), sum.slice(6, 9)];
   return integerNullspace(rows, 3) as unknown as [IntVec3, IntVec3];
 }

@@ -1,0 +1,109 @@
+import { type AffineForm, formatForm, imageOfForm, isFixedBy, parseForm } from "./affine-form.ts";
+import { arithmeticClassOf } from "./arithmetic-class.ts";
+import { crystalFamily } from "./geometric-class.ts";
+import { type DirectionSets, orientedSymbol } from "./oriented-site-symmetry.ts";
+import { referenceGroup } from "./reference-group.ts";
+import { WYCKOFF_1_74 } from "./tables/wyckoff-1-74.ts";
+import { WYCKOFF_75_142 } from "./tables/wyckoff-75-142.ts";
+import { WYCKOFF_143_230 } from "./tables/wyckoff-143-230.ts";
+
+/** A Wyckoff position in the reference setting. */
+export interface WyckoffPosition {
+  /** `a` to `z`; the letter after z, a Greek alpha in print, is `A`. */
+  readonly letter: string;
+  /** Points per conventional cell. */
+  readonly multiplicity: number;
+  /** Oriented symbol: `.m.`, `4/mm.m`, `2`. */
+  readonly siteSymmetry: string;
+  /** Order of the site-symmetry group. */
+  readonly order: number;
+  /** The first triplet: `x,1/4,z`. */
+  readonly representative: string;
+  /** All triplets in the printed order, modulo the centring translations. */
+  readonly coordinates: readonly string[];
+  /** The first triplet as a form. */
+  readonly form: AffineForm;
+  /** Indices, into the representatives of the reference group, of the operations that fix it point by point. */
+  readonly stabiliser: readonly number[];
+}
+
+const cache: (readonly WyckoffPosition[])[] = [];
+
+/**
+ * Wyckoff positions of a space-group type (1 to 230) in the reference setting, in the order of their letters, the
+ * general position last. Only letters and first triplets are tabulated; all else is computed from the operations.
+ * @throws RangeError outside 1 to 230
+ */
+export function wyckoffPositions(number: number): readonly WyckoffPosition[] {
+  const known = cache[number];
+  if (known) return known;
+  const sets = directionSets(number);
+  const fresh = tabulated(number).map((entry) => position(number, entry, sets));
+  cache[number] = fresh;
+  return fresh;
+}
+
+/** Sets of symmetry directions that the site-symmetry symbols of a type name. */
+export function directionSets(number: number): DirectionSets {
+  const { centring, geometric } = arithmeticClassOf(number);
+  return centring === "R" ? "rhombohedral" : crystalFamily(geometric);
+}
+
+/** One entry of the table, as it was written down. */
+export interface TabulatedPosition {
+  readonly multiplicity: number;
+  readonly letter: string;
+  readonly siteSymmetry: string;
+  readonly representative: string;
+}
+
+/** The table's entries of a type; its multiplicities and symbols serve only to check it. */
+export function tabulated(number: number): TabulatedPosition[] {
+  const line =
+    number < 75 ? WYCKOFF_1_74[number - 1] : number < 143 ? WYCKOFF_75_142[number - 75] : WYCKOFF_143_230[number - 143];
+  if (line === undefined) throw new RangeError(`there is no space-group type ${number}`);
+  const [name, ...entries] = line.split("|");
+  if (name !== String(number)) throw new RangeError(`the table of Wyckoff positions has ${name} at ${number}`);
+  return entries.map((entry) => {
+    const [label = "", siteSymmetry = "", representative = ""] = entry.split(" ");
+    return { multiplicity: Number.parseInt(label, 10), letter: label.at(-1)!, siteSymmetry, representative };
+  });
+}
+
+function position(number: number, entry: TabulatedPosition, sets: DirectionSets): WyckoffPosition {
+  const group = referenceGroup(number);
+  const form = parseForm(entry.representative);
+  const stabiliser: number[] = [];
+  const count = group.representatives.length;
+  group.operations.forEach((a, i) => {
+    if (isFixedBy(a, form)) stabiliser.push(i % count);
+  });
+  const rotations = stabiliser.map((i) => group.representatives[i]!.W);
+  return {
+    letter: entry.letter,
+    multiplicity: group.operations.length / stabiliser.length,
+    siteSymmetry: orientedSymbol(rotations, sets)!,
+    order: stabiliser.length,
+    representative: entry.representative,
+    coordinates: coordinates(number, form),
+    form,
+    stabiliser: stabiliser.sort((a, b) => a - b),
+  };
+}
+
+/** Images under the representatives in their order, each once modulo the centring translations. */
+function coordinates(number: number, form: AffineForm): string[] {
+  const group = referenceGroup(number);
+  const seen = new Set<string>();
+  const found: string[] = [];
+  group.representatives.forEach((a) => {
+    const image = imageOfForm(a, form);
+    const text = formatForm(image);
+    if (seen.has(text)) return;
+    found.push(text);
+    for (const t of group.centrings) seen.add(formatForm(imageOfForm({ W: UNIT, w: t }, image)));
+  });
+  return found;
+}
+
+const UNIT = [1, 0, 0, 0, 1, 0, 0, 0, 1] as const;
