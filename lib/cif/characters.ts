@@ -56,10 +56,6 @@ export function isLineStart(source: string, at: number): boolean {
   return isLineEnd(before) || (at === 1 && before === BYTE_ORDER_MARK);
 }
 
-export function isBracket(code: number): boolean {
-  return code === LEFT_BRACKET || code === LEFT_BRACE || isCloser(code);
-}
-
 export function isCloser(code: number): boolean {
   return code === RIGHT_BRACKET || code === RIGHT_BRACE;
 }

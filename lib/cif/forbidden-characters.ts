@@ -1,6 +1,7 @@
+import { InputProblem } from "../problem.ts";
 import { BYTE_ORDER_MARK } from "./characters.ts";
 import { afterByteOrderMark } from "./prelude.ts";
-import type { ProblemList } from "./problem-list.ts";
+import { excerpt, type ProblemList } from "./problem-list.ts";
 import type { CifVersion } from "./token-buffer.ts";
 
 const BEYOND_PRINTABLE_ASCII = /[^\t\n\r -~]/;
@@ -18,7 +19,6 @@ export function reportCharacters(source: string, version: CifVersion, problems: 
   const body = from === 0 ? source : source.slice(from);
   const first = body.search(BEYOND_PRINTABLE_ASCII);
   if (first < 0) return;
-  let beyondAscii = -1;
   for (const match of body.slice(first).matchAll(FORBIDDEN)) {
     const start = from + first + match.index;
     const name = codeName(match[0]);
@@ -27,7 +27,7 @@ export function reportCharacters(source: string, version: CifVersion, problems: 
     problems.add("forbidden-character", message, { start, end: start + match[0].length }, hint);
   }
   if (version === "2.0") return;
-  beyondAscii = source.slice(from + first).search(/[^\0-\x7f]/u);
+  const beyondAscii = source.slice(from + first).search(/[^\0-\x7f]/u);
   if (beyondAscii < 0) return;
   const start = from + first + beyondAscii;
   const character = String.fromCodePoint(source.codePointAt(start)!);
@@ -39,4 +39,17 @@ export function reportCharacters(source: string, version: CifVersion, problems: 
 function codeName(text: string): string {
   const code = text.codePointAt(0) ?? BYTE_ORDER_MARK;
   return `U+${code.toString(16).toUpperCase().padStart(4, "0")}`;
+}
+
+/**
+ * Refuses text that the version has no characters for.
+ * @throws InputProblem naming the first such character
+ */
+export function requireCharacters(text: string, version: CifVersion): void {
+  const at = text.search(version === "1.1" ? BEYOND_PRINTABLE_ASCII : FORBIDDEN);
+  if (at < 0) return;
+  const character = codeName(text.slice(at));
+  const hint = version === "1.1" ? "Write CIF 2.0, or use CIF's backslash codes." : "Remove the character.";
+  const message = `no CIF ${version} can hold ${excerpt(text)}: it contains the character ${character}`;
+  throw new InputProblem("forbidden-character", message, null, hint);
 }

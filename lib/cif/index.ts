@@ -21,3 +21,5 @@ export { type Numb, numbOf, parseNumb } from "./numb.ts";
 export { readCif } from "./reader.ts";
 export type { CifVersion } from "./token-buffer.ts";
 export type { CifValue } from "./value.ts";
+export type { WritableValue } from "./write-value.ts";
+export { type WritableBlock, type WritableItem, writeCif } from "./writer.ts";

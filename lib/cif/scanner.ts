@@ -5,7 +5,6 @@ import {
   DOLLAR,
   DOUBLE_QUOTE,
   HASH,
-  isBracket,
   isCloser,
   isLineStart,
   LEFT_BRACE,
@@ -44,7 +43,7 @@ export class Scanner {
   readonly #version: CifVersion;
   readonly #two: boolean;
   readonly #problems: ProblemList;
-  readonly #tokens = new TokenBuffer();
+  readonly #tokens: TokenBuffer;
   readonly #fields: FieldEnds;
   readonly #brackets: Brackets;
   /** Up to here no quote is followed by a blank; keeps a line full of `'a'b` from being searched once per string. */
@@ -55,6 +54,7 @@ export class Scanner {
     this.#version = version;
     this.#two = version === "2.0";
     this.#problems = problems;
+    this.#tokens = new TokenBuffer(source.length >> 4);
     this.#fields = new FieldEnds(source);
     this.#brackets = new Brackets(source, this.#tokens, problems);
   }
@@ -92,7 +92,7 @@ export class Scanner {
     for (; end < source.length; end++) {
       const c = source.charCodeAt(end);
       if (c <= SPACE) break;
-      if (c < LEFT_BRACKET || !isBracket(c)) continue;
+      if (c !== LEFT_BRACKET && c !== RIGHT_BRACKET && c !== LEFT_BRACE && c !== RIGHT_BRACE) continue;
       if (inside && isCloser(c)) return end;
       bracket = true;
       if (inside) break;

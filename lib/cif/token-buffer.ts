@@ -28,13 +28,21 @@ export const OPEN_FIELD = 17;
 export const LIST = 18;
 export const TABLE = 19;
 
-const FIRST_CAPACITY = 1024;
+const SMALLEST_CAPACITY = 256;
 
 export class TokenBuffer {
-  kinds = new Uint8Array(FIRST_CAPACITY);
-  starts = new Int32Array(FIRST_CAPACITY);
-  ends = new Int32Array(FIRST_CAPACITY);
+  kinds: Uint8Array;
+  starts: Int32Array;
+  ends: Int32Array;
   length = 0;
+
+  /** @param expected tokens to make room for at first; more are taken in by doubling */
+  constructor(expected: number) {
+    const capacity = Math.max(SMALLEST_CAPACITY, expected);
+    this.kinds = new Uint8Array(capacity);
+    this.starts = new Int32Array(capacity);
+    this.ends = new Int32Array(capacity);
+  }
 
   push(kind: number, start: number, end: number): void {
     const at = this.length;
