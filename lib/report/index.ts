@@ -1,7 +1,9 @@
 /** Results as text. Takes finished result objects; computes nothing. */
 export { formatNumber } from "./format-number.ts";
+export { groupName, type HeadingData, headingText } from "./heading.ts";
 export { modesText } from "./modes-text.ts";
 export { positionsText } from "./positions-text.ts";
 export { problemText } from "./problem-text.ts";
+export { sitesText } from "./sites-text.ts";
 export { type SpeciesTerm, speciesSum, typographicLabel } from "./species.ts";
 export { type Column, textTable, wrapText } from "./table.ts";

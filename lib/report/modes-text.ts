@@ -6,7 +6,22 @@ const WIDTH = 110;
 
 /** The whole answer of `modes` for a person, below the heading. */
 export function modesText(answer: ModesAnswer): string {
-  return [sums(answer), speciesTable(answer), siteTable(answer), countsText(answer)].join("\n\n");
+  return [subject(answer), sums(answer), speciesTable(answer), siteTable(answer), countsText(answer)].join("\n\n");
+}
+
+/** What was reduced, and the axes of the labels. */
+function subject(answer: ModesAnswer): string {
+  const { factorGroup, primitiveCellsInCell: cells, labelsInReference } = answer;
+  const reduced = cells === 1 ? "the cell is primitive" : `the cell of the file holds ${cells} primitive cells`;
+  const axes =
+    answer.labelAxes === "file" ? "axes of the file" : "axes of the reference setting (the file's cell is skew)";
+  const lines = [
+    `${answer.atomsInPrimitiveCell} vibrating atoms in the primitive cell (${reduced})`,
+    `factor group ${factorGroup.hermannMauguin} (${factorGroup.schoenflies}); labels in the ${axes}${factorGroup.axes ? `: ${factorGroup.axes}` : ""}`,
+  ];
+  const swaps = Object.entries(labelsInReference).map(([a, b]) => `${typographicLabel(a)} is ${typographicLabel(b)}`);
+  if (swaps.length > 0) lines.push(`in the axes of the reference setting ${swaps.join(", ")}`);
+  return lines.map((line) => wrapText(line, WIDTH, "    ")).join("\n");
 }
 
 /** Species and activity as papers write them. */

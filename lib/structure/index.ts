@@ -38,3 +38,4 @@ export { type Image, multiplicityOf, orbitOf, wrap } from "./orbit.ts";
 export { nearestDistance, PeriodicPoints } from "./periodic-points.ts";
 export { type Position, type PositionsAnswer, positionsAnswer } from "./positions-answer.ts";
 export { type SiteSymmetry, siteSymmetry } from "./site-symmetry.ts";
+export { type SiteAnswer, type SitesAnswer, sitesAnswer } from "./sites-answer.ts";

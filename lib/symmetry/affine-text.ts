@@ -1,5 +1,5 @@
 import P from "parsimmon";
-import { addRational, multiplyRational, type Rational, rational, ZERO } from "../algebra/index.ts";
+import { addRational, type Rational, rational, ZERO } from "../algebra/index.ts";
 import { InputProblem } from "../problem.ts";
 import { fractionFromDecimal } from "./fraction-text.ts";
 
@@ -17,49 +17,52 @@ interface Term {
 type Letters = "xyz" | "abc" | "hkl" | "uvw";
 const parsers = new Map<Letters, P.Parser<AffineExpression[]>>();
 
-const blank = P.regexp(/[\s_]*/);
-const token = <T>(p: P.Parser<T>): P.Parser<T> => p.skip(blank);
-const sign = token(P.regexp(/[+\-\u2212]/)).map((s) => (s === "+" ? 1 : -1));
+const BLANK = "[\\s_]*";
+const NUMBER = `\\d+${BLANK}/${BLANK}\\d+|\\d+\\.?\\d*|\\.\\d+`;
 
-const fraction = P.seq(token(P.regexp(/\d+/)), token(P.string("/")), token(P.regexp(/\d+/))).chain(([n, , d]) =>
-  Number(d) === 0 ? P.fail("a denominator other than 0") : P.succeed(rational(Number(n), Number(d))),
-);
-const decimal = token(P.regexp(/\d+\.\d*|\.\d+|\d+/)).chain((text) => {
-  const value = fractionFromDecimal(Number(text));
-  return value
-    ? P.succeed(value)
-    : P.fail("a decimal within 0.002 of a fraction with denominator 1, 2, 3, 4, 6, 8, 12 or 24");
-});
-const number = P.alt(fraction, decimal);
+/**
+ * One term with its sign, `-x`, `+1/2`, `2x`, `x/2`, read by one regular expression: a grammar of smaller pieces costs
+ * thirty times as much, and every command reads a hundred operations before it answers.
+ */
+function termParser(letters: Letters, sign: "?" | ""): P.Parser<Term> {
+  const source = `([+\\-\u2212])${sign}${BLANK}(?:(${NUMBER})${BLANK}(?:\\*?${BLANK}([${letters}]))?|([${letters}])(?:${BLANK}/${BLANK}([1-9]\\d*))?)${BLANK}`;
+  const term = new RegExp(source, "iy");
+  return P((input, i) => {
+    term.lastIndex = i;
+    const m = term.exec(input);
+    if (!m) return P.makeFailure(i, "a term");
+    const [whole, minus, number, factorOf, letter, divisor] = m;
+    const size = number === undefined ? rational(1, Number(divisor ?? 1)) : readNumber(number);
+    const end = i + whole.search(/[\d.]/) + (number?.length ?? 0); // the complaint looks back from here
+    if (typeof size === "string") return P.makeFailure(end, size);
+    const at = letters.indexOf((factorOf ?? letter ?? "?").toLowerCase());
+    const value = minus === undefined || minus === "+" ? size : { n: -size.n + 0, d: size.d };
+    return P.makeSuccess(i + whole.length, { letter: at, value });
+  });
+}
+
+/** The exact number, or what was expected in its place. */
+function readNumber(text: string): Rational | string {
+  const [n, d] = text.split("/");
+  if (d === undefined) {
+    const wanted = "a decimal within 0.002 of a fraction with denominator 1, 2, 3, 4, 6, 8, 12 or 24";
+    return fractionFromDecimal(Number(text)) ?? wanted;
+  }
+  const denominator = Number(d.replace(/_/g, ""));
+  return denominator === 0 ? "a denominator other than 0" : rational(Number(n!.replace(/_/g, "")), denominator);
+}
 
 function tripletParser(letters: Letters): P.Parser<AffineExpression[]> {
   const known = parsers.get(letters);
   if (known) return known;
-  const letter = token(P.regexp(new RegExp(`[${letters}]`, "i"))).map((c) => letters.indexOf(c.toLowerCase()));
-  const product = P.alt(
-    P.seqMap(number, token(P.string("*")).atMost(1), letter, (value, _, l): Term => ({ letter: l, value })),
-    P.seqMap(
-      letter,
-      token(P.string("/")),
-      token(P.regexp(/[1-9]\d*/)),
-      (l, _, d): Term => ({
-        letter: l,
-        value: rational(1, Number(d)),
-      }),
-    ),
-    number.map((value): Term => ({ letter: -1, value })),
-    letter.map((l): Term => ({ letter: l, value: rational(1) })),
+  const sum = P.seqMap(termParser(letters, "?"), termParser(letters, "").many(), (first, rest) =>
+    collect([first, ...rest]),
   );
-  const signed = P.seqMap(
-    sign,
-    product,
-    (s, t): Term => ({ letter: t.letter, value: rational(s * t.value.n, t.value.d) }),
-  );
-  const sum = P.seqMap(P.alt(signed, product), signed.many(), (first, rest) => collect([first, ...rest]));
-  const comma = token(P.string(","));
-  const triplet = blank.then(P.seqMap(sum, comma, sum, comma, sum, (a, _, b, __, c) => [a, b, c])).skip(P.eof);
-  parsers.set(letters, triplet);
-  return triplet;
+  const comma = P.regexp(/,[\s_]*/);
+  const triplet = P.regexp(/[\s_]*/).then(P.seqMap(sum, comma, sum, comma, sum, (a, _, b, __, c) => [a, b, c]));
+  const whole = triplet.skip(P.eof);
+  parsers.set(letters, whole);
+  return whole;
 }
 
 function collect(terms: readonly Term[]): AffineExpression {
@@ -73,31 +76,58 @@ function collect(terms: readonly Term[]): AffineExpression {
 
 /**
  * Reads three comma-separated affine expressions in the given letters: signs, blanks, capitals, fractions, rounded
- * decimals, products such as `2x` or `x/2`. Exact.
- * @throws InputProblem `triplet-unreadable` with the span of the first character that does not fit
+ * decimals, products such as `2x` or `x/2`, the whole in quotes or not. Exact.
+ * @throws InputProblem `triplet-unreadable` with the span of the first character or number that does not fit, or
+ * `number-too-long` where the numbers cannot be kept exact
  */
 export function parseTriplet(
   text: string,
   letters: Letters,
 ): readonly [AffineExpression, AffineExpression, AffineExpression] {
-  const bare = /^\s*(['"])(.*)\1\s*$/.exec(text); // whole triplet in quotes
-  const inner = bare ? bare[2]! : text;
-  const offset = bare ? text.indexOf(inner) : 0;
-  const result = tripletParser(letters).parse(inner);
+  const bare = /^(\s*)(['"])(.*)\2\s*$/.exec(text); // whole triplet in quotes
+  const inner = bare ? bare[3]! : text;
+  const offset = bare ? bare[1]!.length + 1 : 0;
+  const result = keepExact(text, () => tripletParser(letters).parse(inner));
   if (result.status) return result.value as [AffineExpression, AffineExpression, AffineExpression];
-  const start = result.index.offset + offset;
-  throw new InputProblem(
-    "triplet-unreadable",
-    `"${text}" is not three expressions in ${[...letters].join(", ")}: ${complaint(text, start, result.expected)}`,
-    { start, end: Math.min(start + 1, text.length) },
-    `write it like ${letters === "abc" ? "a-b,a+b,c" : "-x,y+1/2,-z"}`,
-  );
+  throw misfit(text, result.index.offset + offset, result.expected, letters);
 }
 
-function complaint(text: string, at: number, expected: readonly string[]): string {
-  const worded = expected.find((e) => e.startsWith("a d"));
-  if (worded) return `expected ${worded} before character ${at + 1}`;
-  return at >= text.length ? "it ends too early" : `character ${at + 1}, "${text[at]}", does not fit`;
+/**
+ * The result of an exact computation on what was read.
+ * @throws InputProblem `number-too-long` in place of its RangeError
+ */
+export function keepExact<T>(text: string, compute: () => T): T {
+  try {
+    return compute();
+  } catch (error) {
+    if (!(error instanceof RangeError)) throw error;
+    throw new InputProblem(
+      "number-too-long",
+      `"${text}" has numbers too long to be kept exact`,
+      { start: 0, end: text.length },
+      "write fractions with small denominators such as 1/2 or 2/3",
+    );
+  }
+}
+
+function misfit(text: string, at: number, expected: readonly string[], letters: Letters): InputProblem {
+  const what = `"${text}" is not three expressions in ${[...letters].join(", ")}`;
+  const fraction = expected.find((e) => e.startsWith("a d")); // the number before the place is the culprit
+  if (fraction) {
+    const number = /[\d./\s]*$/.exec(text.slice(0, at))![0].trim();
+    const start = text.lastIndexOf(number, at);
+    const why = `${number} was found where ${fraction} belongs`;
+    const hint = "write the fraction itself, such as 1/3";
+    return new InputProblem("triplet-unreadable", `${what}: ${why}`, { start, end: start + number.length }, hint);
+  }
+  const why = at >= text.length ? "it ends too early" : `character ${at + 1}, "${text[at]}", does not fit`;
+  const hint = `write it like ${letters === "abc" ? "a-b,a+b,c" : `${letters[0]},${letters[1]}+1/2,-${letters[2]}`}`;
+  return new InputProblem(
+    "triplet-unreadable",
+    `${what}: ${why}`,
+    { start: at, end: Math.min(at + 1, text.length) },
+    hint,
+  );
 }
 
 /** `x-y+1/2` in the letters given; `0` for nothing at all. Letters first, the constant last. */
@@ -120,13 +150,4 @@ function magnitude(r: Rational): string {
 
 function factor(r: Rational): string {
   return r.d === 1 && Math.abs(r.n) === 1 ? "" : magnitude(r);
-}
-
-/** Coefficients times k, for callers that carry an expression through a basis change. */
-export function scaleExpression(e: AffineExpression, k: Rational): AffineExpression {
-  const [a, b, c] = e.coefficients;
-  return {
-    coefficients: [multiplyRational(a, k), multiplyRational(b, k), multiplyRational(c, k)],
-    constant: multiplyRational(e.constant, k),
-  };
 }

@@ -7,6 +7,9 @@ export {
 export { centringLetter, centringsOf, primitiveBasis } from "./centring.ts";
 export { DECIMAL_TOLERANCE, fractionFromDecimal } from "./fraction-text.ts";
 export { closeGroup, LARGEST_GROUP, type MissingProduct, missingProduct } from "./group-closure.ts";
+export { type Identification, identify } from "./identification.ts";
+export { type LabelFrames, ownFrame, referenceFrame } from "./label-frame.ts";
+export { matchingSetting } from "./matching-setting.ts";
 export {
   compose,
   IDENTITY_OPERATION,
@@ -19,6 +22,7 @@ export {
 } from "./operation.ts";
 export { formatOperation, parseOperation } from "./operation-text.ts";
 export { rotationIndex, rotationParts, type SpaceGroup, spaceGroup } from "./space-group.ts";
+export { type IdentifiedGroup, identifyGroup, type SpaceGroupSummary } from "./summary.ts";
 export {
   chain,
   IDENTITY_TRANSFORMATION,

@@ -1,5 +1,6 @@
-import type { AxisFrame } from "../representation/index.ts";
+import { type PointGroup, pointGroup } from "../representation/index.ts";
 import type { Crystal } from "../structure/index.ts";
+import type { IdentifiedGroup } from "../symmetry/index.ts";
 import { type FactorGroupModes, factorGroupModes, type ModeTotals } from "./factor-group.ts";
 
 /** A species of the factor group as the JSON contract lays it out. */
@@ -36,6 +37,10 @@ export interface ModesAnswer {
   /** How many primitive cells the cell of the file holds. */
   readonly primitiveCellsInCell: number;
   readonly factorGroup: { readonly hermannMauguin: string; readonly schoenflies: string; readonly axes: string };
+  /** Which axes the labels refer to: those of the file's cell, or of the reference setting if the cell is skew. */
+  readonly labelAxes: "file" | "reference";
+  /** Labels in the axes of the reference setting, by label used here; empty where none differs. */
+  readonly labelsInReference: Readonly<Record<string, string>>;
   readonly classes: readonly { readonly name: string; readonly size: number; readonly directions: readonly string[] }[];
   readonly irreps: readonly IrrepAnswer[];
   readonly sites: readonly SiteModesAnswer[];
@@ -43,8 +48,8 @@ export interface ModesAnswer {
 }
 
 /** Species, activities and counts of the modes of a crystal at k = 0, as plain data. */
-export function modesAnswer(crystal: Crystal, frame?: AxisFrame): ModesAnswer {
-  const modes = factorGroupModes(crystal, frame);
+export function modesAnswer(crystal: Crystal, { frames }: IdentifiedGroup): ModesAnswer {
+  const modes = factorGroupModes(crystal, frames.own ?? frames.reference);
   const { group } = modes;
   return {
     atomsInPrimitiveCell: modes.atomsInPrimitiveCell,
@@ -54,6 +59,8 @@ export function modesAnswer(crystal: Crystal, frame?: AxisFrame): ModesAnswer {
       schoenflies: group.schoenflies,
       axes: group.axes.text,
     },
+    labelAxes: frames.own ? "file" : "reference",
+    labelsInReference: changedLabels(group, pointGroup(group.elements, frames.reference)),
     classes: group.classes.map(({ name, size, directions }) => ({ name, size, directions })),
     irreps: modes.species.map((s, i) => ({
       label: s.label,
@@ -89,5 +96,17 @@ function byLabel(irreps: readonly { readonly label: string }[], numbers: readonl
 function charactersByMatrix({ group }: FactorGroupModes, irrep: number): Record<string, number> {
   return Object.fromEntries(
     group.elements.map((W, e) => [W.join(), group.irreps[irrep]!.characters[group.classOf[e]!]!]),
+  );
+}
+
+/** Labels of the same species in another frame, where they differ: species are matched by their characters. */
+function changedLabels(group: PointGroup, other: PointGroup): Record<string, string> {
+  const row = (g: PointGroup, irrep: number) => g.classOf.map((k) => g.irreps[irrep]!.characters[k]!).join();
+  const labels = new Map(other.irreps.map((irrep, i) => [row(other, i), irrep.label]));
+  return Object.fromEntries(
+    group.irreps.flatMap(({ label }, i) => {
+      const there = labels.get(row(group, i))!;
+      return there === label ? [] : [[label, there]];
+    }),
   );
 }

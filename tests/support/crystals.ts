@@ -3,6 +3,7 @@ import fc from "fast-check";
 import {
   adjugate,
   determinant,
+  IDENTITY,
   type IntMat3,
   multiply,
   ratMat3,
@@ -96,14 +97,11 @@ export function inSetting(crystal: Crystal, t: Transformation): Crystal | null {
 
 /** Translations of the old lattice in the new basis: those that a larger cell turns into centrings. */
 function latticeOf(t: Transformation): Operation[] {
-  const det = determinant(t.P.n);
-  const inverse = ratMat3(scale(adjugate(t.P.n), t.P.d), det);
-  return [0, 1, 2]
-    .map((j) => ({
-      W: [1, 0, 0, 0, 1, 0, 0, 0, 1],
-      w: ratVec3([inverse.n[j]!, inverse.n[3 + j]!, inverse.n[6 + j]!], inverse.d),
-    }))
-    .map((a) => reduce(a as Operation));
+  const inverse = ratMat3(scale(adjugate(t.P.n), t.P.d), determinant(t.P.n));
+  return [0, 1, 2].map((j) => {
+    const w = ratVec3([inverse.n[j]!, inverse.n[3 + j]!, inverse.n[6 + j]!], inverse.d);
+    return reduce({ W: IDENTITY, w });
+  });
 }
 
 function transposed(m: Mat3): Mat3 {

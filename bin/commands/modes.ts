@@ -1,0 +1,18 @@
+import { modesText } from "../../lib/report/index.ts";
+import { modesAnswer } from "../../lib/vibrations/index.ts";
+import { COMMON_OPTIONS, type CommandSpec } from "../arguments.ts";
+import { answerQuestion, askCrystal } from "../ask.ts";
+
+export const spec: CommandSpec = {
+  name: "modes",
+  operands: "FILE",
+  summary: "Species of all modes at k = 0 with their infrared, Raman and hyper-Raman activity.",
+  options: COMMON_OPTIONS,
+  example: { line: "sitefold modes fixtures/calcite.cif", output: "" },
+};
+
+export async function run(words: readonly string[]): Promise<number> {
+  const question = await askCrystal(words, spec);
+  const answer = modesAnswer(question.crystal, question.identified);
+  return answerQuestion(question, answer, () => modesText(answer));
+}
