@@ -1,4 +1,4 @@
-import { modOne, type RatVec3, ratVec3, subtractVectors } from "../algebra/index.ts";
+import { equalVectors, modOne, type RatVec3, ratVec3, subtractVectors } from "../algebra/index.ts";
 import type { PlaneLetter } from "./hermann-mauguin-symbol.ts";
 
 /**
@@ -15,10 +15,9 @@ export type PlaneNormal = 0 | 1 | 2 | "diagonal" | "oblique";
  * Source: International Tables for Crystallography A (2016), section 1.4.1 and table 2.1.2.1 (definitions).
  */
 export function glideLetters(g: RatVec3, normal: PlaneNormal, centrings: readonly RatVec3[]): PlaneLetter[] {
-  const known = new Set(centrings.map((t) => `${t.n.join()}/${t.d}`));
   const same = (half: readonly [number, number, number]): boolean => {
     const rest = modOne(subtractVectors(g, ratVec3(half, 2)));
-    return known.has(`${rest.n.join()}/${rest.d}`);
+    return centrings.some((t) => equalVectors(t, rest));
   };
   if (same([0, 0, 0])) return ["m"];
   if (normal === "diagonal" || normal === "oblique") {

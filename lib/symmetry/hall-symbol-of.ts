@@ -3,6 +3,7 @@ import { operationsFromHall } from "./hall-symbol.ts";
 import { formatHallChange, formatHallSymbol, parseHallSymbol } from "./hall-symbol-text.ts";
 import { identify } from "./identification.ts";
 import { type Operation, operationKey } from "./operation.ts";
+import { referenceGroup } from "./reference-group.ts";
 import { spaceGroupType } from "./space-group-type.ts";
 import { chain, IDENTITY_TRANSFORMATION, reverse, type Transformation } from "./transformation.ts";
 
@@ -21,7 +22,7 @@ export function hallSymbolOf(operations: readonly Operation[]): string {
 export function hallSymbolBy(operations: readonly Operation[], number: number, toReference: Transformation): string {
   const { hall } = spaceGroupType(number);
   const plain = formatHallChange(reverse(toReference)) === "";
-  if (plain || sameGroup(operationsFromHall(hall).operations, operations)) return hall;
+  if (plain || sameGroup(referenceGroup(number).operations, operations)) return hall;
   const direct = directHallSymbol(operations);
   if (direct && sameGroup(operationsFromHall(direct).operations, operations)) return direct;
   const reference = parseHallSymbol(hall);

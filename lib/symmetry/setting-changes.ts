@@ -51,7 +51,16 @@ export function settingChanges(number: number, system: DirectionSystem, lattice:
 }
 
 function change(axes: string, basis: string, choice: SettingChange["choice"] = ""): SettingChange {
-  return { axes, choice, basis: parseTransformation(basis), first: basis === "a,b,c" };
+  return { axes, choice, basis: changeOfBasis(basis), first: basis === "a,b,c" };
+}
+
+const read = new Map<string, Transformation>();
+
+/** The few changes of basis serve all types, so each text is read once. */
+function changeOfBasis(text: string): Transformation {
+  const found = read.get(text) ?? parseTransformation(text);
+  read.set(text, found);
+  return found;
 }
 
 function withOrigins(number: number, changes: readonly SettingChange[]): SettingChange[] {
@@ -70,7 +79,7 @@ function monoclinicChanges(number: number): SettingChange[] {
       ([cell, basis]): SettingChange => ({
         axes: `${axis}${cell}`,
         choice: "",
-        basis: chain(parseTransformation(basis), parseTransformation(then)),
+        basis: chain(changeOfBasis(basis), changeOfBasis(then)),
         first: axis === "b" && cell === "1",
       }),
     ),

@@ -1,16 +1,14 @@
 import { IDENTITY, modOne, ratVec3, transformVector } from "../algebra/index.ts";
 import { closeGroup } from "./group-closure.ts";
-import { operationsFromHall } from "./hall-symbol.ts";
 import { hallSymbolBy } from "./hall-symbol-of.ts";
 import type { Operation } from "./operation.ts";
+import { referenceGroup } from "./reference-group.ts";
 import type { Setting } from "./settings.ts";
-import { spaceGroupType } from "./space-group-type.ts";
 import { reverse, transformOperation } from "./transformation.ts";
 
 /** All operations of a setting modulo Z^3, translations in [0, 1), the identity first; computed at each call. */
 export function settingOperations(setting: Pick<Setting, "number" | "toReference">): Operation[] {
-  const reference = operationsFromHall(spaceGroupType(setting.number).hall).operations;
-  return carryGroup(reference, setting);
+  return carryGroup(referenceGroup(setting.number).operations, setting);
 }
 
 function carryGroup(reference: readonly Operation[], setting: Pick<Setting, "toReference">): Operation[] {

@@ -1,4 +1,12 @@
-import { type IntVec3, inverseRatMat, type RatMat3, type RatVec3, ratVec3, transformVector } from "../algebra/index.ts";
+import {
+  type IntVec3,
+  inverseRatMat,
+  type RatMat3,
+  type RatVec3,
+  ratVec3,
+  transformVector,
+  ZERO_VECTOR,
+} from "../algebra/index.ts";
 import { glideLetters, type PlaneNormal } from "./glide-letter.ts";
 import {
   type DirectionSystem,
@@ -63,21 +71,26 @@ function partAlong(
   along: RatVec3,
 ): { part: SymbolPart; glide: RatVec3 } {
   const directions = symmetryDirections(system);
+  const turns = system === "monoclinic" || system === "orthorhombic" ? 1 : 6;
   for (const [i, direction] of directions.entries()) {
     const part = reference.parts[i];
-    if (!part) continue;
-    let d: IntVec3 = direction;
-    let glide = part.plane ? glideVector(part.plane, direction) : ratVec3([0, 0, 0]);
-    for (let turn = 0; turn < 6; turn++) {
-      if (parallel(along, d)) return { part, glide };
+    let d = direction;
+    for (let turn = 0; part && turn < turns; turn++) {
+      if (parallel(along, d)) return { part, glide: turnedGlide(part, system, direction, turn) };
       d = turnAbout(system, d);
-      const [x, y, z] = turnAbout(system, glide.n);
-      glide = ratVec3([x, y, z], glide.d);
     }
   }
   // Cell choices of a monoclinic lattice move the two axes that carry no symmetry.
-  if (system === "monoclinic") return { part: { axis: "1", plane: null }, glide: ratVec3([0, 0, 0]) };
+  if (system === "monoclinic") return { part: { axis: "1", plane: null }, glide: ZERO_VECTOR };
   throw new RangeError(`no symmetry direction along ${along.n.join(",")}`);
+}
+
+function turnedGlide(part: SymbolPart, system: DirectionSystem, direction: IntVec3, turns: number): RatVec3 {
+  if (!part.plane) return ZERO_VECTOR;
+  const glide = glideVector(part.plane, direction);
+  let n = glide.n;
+  for (let turn = 0; turn < turns; turn++) n = turnAbout(system, n);
+  return { n, d: glide.d };
 }
 
 /** The rotation about c that makes directions of one kind equivalent: fourfold, sixfold, or none. */
@@ -117,6 +130,6 @@ function glideVector(letter: PlaneLetter, direction: IntVec3): RatVec3 {
     case "d":
       return sum(1);
     default:
-      return ratVec3([0, 0, 0]);
+      return ZERO_VECTOR;
   }
 }
