@@ -82,6 +82,7 @@ function speciesTable(answer: ModesAnswer): string {
 function siteTable(answer: ModesAnswer): string {
   const columns: Column[] = [
     { heading: "site" },
+    { heading: "position" },
     { heading: "symmetry" },
     { heading: "atoms", align: "right" },
     { heading: "displacement in the site group" },
@@ -89,6 +90,7 @@ function siteTable(answer: ModesAnswer): string {
   ];
   const rows = answer.sites.map((site) => [
     site.label,
+    site.referencePosition,
     `${site.siteSymmetry} (${site.schoenflies})`,
     String(site.atoms),
     speciesSum(Object.entries(site.siteSpecies).map(([label, count]) => ({ label: typographicLabel(label), count }))),

@@ -1,5 +1,4 @@
-import type { IntVec3 } from "../algebra/index.ts";
-import { apply } from "../algebra/index.ts";
+import { apply, type IntVec3 } from "../algebra/index.ts";
 import { compose, type Operation, operationKey, transformPoint } from "../symmetry/index.ts";
 import type { Vec3 } from "./cell.ts";
 import type { Crystal } from "./crystal.ts";
@@ -40,6 +39,8 @@ interface Landing {
 export class AtomAction {
   private readonly crystal: Crystal;
   private readonly atoms: readonly CellAtom[];
+  /** Whole cells between each atom and the image of the listed point by its operation as it stands. */
+  private readonly wraps: IntVec3[] = [];
   /** Per site, by key of an operation modulo the lattice: where that operation takes the listed point. */
   private readonly landings: ReadonlyMap<number, ReadonlyMap<string, Landing>>;
 
@@ -61,6 +62,7 @@ export class AtomAction {
     // the atom stands at a x + wrap; a s x = a x for every s of the site group, without reduction
     const at = transformPoint(a, symmetry.point);
     const wrap = whole(atom.position, at);
+    this.wraps.push(wrap);
     for (const s of symmetry.operations) {
       const [key, cells] = split(compose(a, s));
       map.set(key, { atom: index, shift: [-cells[0] - wrap[0], -cells[1] - wrap[1], -cells[2] - wrap[2]] });
@@ -77,10 +79,8 @@ export class AtomAction {
    */
   image(g: Operation, from: LatticeAtom): LatticeAtom {
     const atom = this.atoms[from.atom]!;
-    const a = this.operationOf(atom);
-    const at = transformPoint(a, this.crystal.sites[atom.site]!.symmetry.point);
-    const wrap = whole(atom.position, at);
-    const [key, cells] = split(compose(g, a));
+    const wrap = this.wraps[from.atom]!;
+    const [key, cells] = split(compose(g, this.operationOf(atom)));
     const landing = this.landings.get(atom.site)!.get(key);
     if (!landing) throw new RangeError(`not an operation of the space group: ${operationKey(g)}`);
     const moved = apply(g.W, [wrap[0] + from.shift[0], wrap[1] + from.shift[1], wrap[2] + from.shift[2]]);

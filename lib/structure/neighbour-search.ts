@@ -71,7 +71,11 @@ class BoxGrid {
     const n = points.length;
     const thickness = [0, 1, 2].map((i) => 1 / Math.hypot(...metric.toFractional.slice(3 * i, 3 * i + 3)));
     this.counts = boxCounts(thickness, reach, n);
-    this.spans = [0, 1, 2].map((i) => Math.ceil((reach * this.counts[i]!) / thickness[i]! - 1e-12)) as unknown as [number, number, number];
+    this.spans = [0, 1, 2].map((i) => Math.ceil((reach * this.counts[i]!) / thickness[i]! - 1e-12)) as unknown as [
+      number,
+      number,
+      number,
+    ];
     this.axes = Float64Array.from(metric.toCartesian);
     this.cells = new Int32Array(3 * n);
     this.wrapped = new Float64Array(3 * n);

@@ -1,7 +1,7 @@
 import { pointGroup } from "../representation/index.ts";
-import type { IdentifiedGroup } from "../symmetry/index.ts";
+import { assignWyckoff, type IdentifiedGroup } from "../symmetry/index.ts";
 import type { Vec3 } from "./cell.ts";
-import type { Crystal } from "./crystal.ts";
+import type { Crystal, CrystalSite } from "./crystal.ts";
 
 /** A site of the file with its place in the space group. */
 export interface SiteAnswer {
@@ -10,6 +10,11 @@ export interface SiteAnswer {
   readonly occupancy: number;
   /** Images in the cell of the file. */
   readonly multiplicity: number;
+  /** Letter of the Wyckoff position; `A` stands for the alpha of P m m m. */
+  readonly wyckoff: string;
+  /** Multiplicity and letter in the reference setting: `4c`. */
+  readonly referencePosition: string;
+  /** Oriented symbol, `.m.`, along the axes of the file where they are symmetry directions. */
   readonly siteSymmetry: string;
   readonly schoenflies: string;
   readonly order: number;
@@ -19,34 +24,44 @@ export interface SiteAnswer {
   readonly snapped: Vec3;
   /** Distance between the two, angstrom. */
   readonly shift: number;
+  /** Where the site may move in the axes of the file: `x,1/4,z`. */
+  readonly constraint: string;
+  /** The same in the reference setting. */
+  readonly referenceConstraint: string;
+  /** What its displacement tensor may be, in the order 11 22 33 12 13 23: `u11,u22,u33,0,u13,0`. */
+  readonly adp: string;
+  /** Whether `adp` holds for U_ij as it stands, or only for beta_ij (axes of unequal length that symmetry mixes). */
+  readonly adpHoldsFor: "U" | "beta";
 }
 
 export interface SitesAnswer {
   readonly sites: readonly SiteAnswer[];
 }
 
-/** Site symmetry of every site, in the order of the file. */
-export function sitesAnswer(crystal: Crystal, { frames }: IdentifiedGroup): SitesAnswer {
-  const frame = frames.own ?? frames.reference;
+/** Site symmetry, Wyckoff position and constraints of every site, in the order of the file. */
+export function sitesAnswer(crystal: Crystal, identified: IdentifiedGroup): SitesAnswer {
+  return { sites: crystal.sites.map((site) => siteAnswer(site, identified)) };
+}
+
+function siteAnswer(site: CrystalSite, identified: IdentifiedGroup): SiteAnswer {
+  const { operations, point, shift } = site.symmetry;
+  const assigned = assignWyckoff(identified, operations);
   return {
-    sites: crystal.sites.map((site) => {
-      const { operations, point, shift } = site.symmetry;
-      const group = pointGroup(
-        operations.map((a) => a.W),
-        frame,
-      );
-      return {
-        label: site.label,
-        element: site.element,
-        occupancy: site.occupancy,
-        multiplicity: site.images.length,
-        siteSymmetry: group.hermannMauguin,
-        schoenflies: group.schoenflies,
-        order: group.order,
-        position: site.position,
-        snapped: point,
-        shift,
-      };
-    }),
+    label: site.label,
+    element: site.element,
+    occupancy: site.occupancy,
+    multiplicity: site.images.length,
+    wyckoff: assigned.letter,
+    referencePosition: `${assigned.referenceMultiplicity}${assigned.letter}`,
+    siteSymmetry: assigned.siteSymmetry,
+    schoenflies: pointGroup(operations.map((a) => a.W)).schoenflies,
+    order: assigned.order,
+    position: site.position,
+    snapped: point,
+    shift,
+    constraint: assigned.constraint,
+    referenceConstraint: assigned.referenceConstraint,
+    adp: assigned.tensor.text,
+    adpHoldsFor: assigned.tensorHoldsFor,
   };
 }

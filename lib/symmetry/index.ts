@@ -21,6 +21,7 @@ export {
   transformPoint,
 } from "./operation.ts";
 export { formatOperation, parseOperation } from "./operation-text.ts";
+export { type AssignmentGroup, assignWyckoff, type SiteAssignment } from "./site-assignment.ts";
 export { rotationIndex, rotationParts, type SpaceGroup, spaceGroup } from "./space-group.ts";
 export { type IdentifiedGroup, identifyGroup, type SpaceGroupSummary } from "./summary.ts";
 export {
@@ -31,3 +32,4 @@ export {
   transformOperation,
 } from "./transformation.ts";
 export { formatBasis, formatTransformation, formatVector, parseTransformation } from "./transformation-text.ts";
+export { type WyckoffPosition, wyckoffPositions } from "./wyckoff-positions.ts";

@@ -33,6 +33,8 @@ export interface SpaceGroupSummary {
 
 /** A group with its type, the way to the reference setting, and the frames of its labels. */
 export interface IdentifiedGroup {
+  readonly group: SpaceGroup;
+  readonly number: number;
   readonly summary: SpaceGroupSummary;
   readonly toReference: Transformation;
   readonly frames: LabelFrames;
@@ -66,5 +68,5 @@ export function identifyGroup(group: SpaceGroup): IdentifiedGroup {
     centrosymmetric: rotations.some((W) => equal(W, MINUS_IDENTITY)),
     sohncke: rotations.every((W) => determinant(W) === 1),
   };
-  return { summary, toReference, frames };
+  return { group, number, summary, toReference, frames };
 }

@@ -1,7 +1,7 @@
 import { type PointGroup, pointGroup } from "../representation/index.ts";
 import type { Crystal } from "../structure/index.ts";
-import type { IdentifiedGroup } from "../symmetry/index.ts";
-import { type FactorGroupModes, factorGroupModes, type ModeTotals } from "./factor-group.ts";
+import { assignWyckoff, type IdentifiedGroup } from "../symmetry/index.ts";
+import { type FactorGroupModes, factorGroupModes, type ModeTotals, type SiteModes } from "./factor-group.ts";
 
 /** A species of the factor group as the JSON contract lays it out. */
 export interface IrrepAnswer {
@@ -23,6 +23,10 @@ export interface IrrepAnswer {
 
 export interface SiteModesAnswer {
   readonly label: string;
+  /** Letter of the Wyckoff position. */
+  readonly wyckoff: string;
+  /** Multiplicity and letter in the reference setting: `18e`. */
+  readonly referencePosition: string;
   readonly siteSymmetry: string;
   readonly schoenflies: string;
   readonly order: number;
@@ -48,7 +52,8 @@ export interface ModesAnswer {
 }
 
 /** Species, activities and counts of the modes of a crystal at k = 0, as plain data. */
-export function modesAnswer(crystal: Crystal, { frames }: IdentifiedGroup): ModesAnswer {
+export function modesAnswer(crystal: Crystal, identified: IdentifiedGroup): ModesAnswer {
+  const { frames } = identified;
   const modes = factorGroupModes(crystal, frames.own ?? frames.reference);
   const { group } = modes;
   return {
@@ -76,16 +81,23 @@ export function modesAnswer(crystal: Crystal, { frames }: IdentifiedGroup): Mode
       characters: charactersByMatrix(modes, i),
       sites: Object.fromEntries(modes.sites.map((site) => [site.label, site.contributions[i]!])),
     })),
-    sites: modes.sites.map((site) => ({
-      label: site.label,
-      siteSymmetry: site.group.hermannMauguin,
-      schoenflies: site.group.schoenflies,
-      order: site.group.order,
-      atoms: site.count,
-      siteSpecies: byLabel(site.group.irreps, site.siteSpecies),
-      contributions: byLabel(group.irreps, site.contributions),
-    })),
+    sites: modes.sites.map((site) => siteModes(site, identified, group)),
     totals: modes.totals,
+  };
+}
+
+function siteModes(modes: SiteModes, identified: IdentifiedGroup, group: PointGroup): SiteModesAnswer {
+  const assigned = assignWyckoff(identified, modes.site.symmetry.operations);
+  return {
+    label: modes.label,
+    wyckoff: assigned.letter,
+    referencePosition: `${assigned.referenceMultiplicity}${assigned.letter}`,
+    siteSymmetry: assigned.siteSymmetry,
+    schoenflies: modes.group.schoenflies,
+    order: assigned.order,
+    atoms: modes.count,
+    siteSpecies: byLabel(modes.group.irreps, modes.siteSpecies),
+    contributions: byLabel(group.irreps, modes.contributions),
   };
 }
 
