@@ -30,7 +30,7 @@ function termParser(letters: Letters, sign: "?" | ""): P.Parser<Term> {
   return P((input, i) => {
     term.lastIndex = i;
     const m = term.exec(input);
-    if (!m) return P.makeFailure(i, "a term");
+    if (!m) return P.makeFailure(afterSign(input, i), "a term");
     const [whole, minus, number, factorOf, letter, divisor] = m;
     const size = number === undefined ? rational(1, Number(divisor ?? 1)) : readNumber(number);
     const end = i + whole.search(/[\d.]/) + (number?.length ?? 0); // the complaint looks back from here
@@ -39,6 +39,11 @@ function termParser(letters: Letters, sign: "?" | ""): P.Parser<Term> {
     const value = minus === undefined || minus === "+" ? size : { n: -size.n + 0, d: size.d };
     return P.makeSuccess(i + whole.length, { letter: at, value });
   });
+}
+
+/** Where the misfit is if no term begins at i: behind a sign, which does fit. */
+function afterSign(text: string, i: number): number {
+  return i + /^(?:[+\-\u2212][\s_]*)?/.exec(text.slice(i))![0].length;
 }
 
 /** The exact number, or what was expected in its place. */

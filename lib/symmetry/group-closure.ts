@@ -5,6 +5,11 @@ import { compose, IDENTITY_OPERATION, type Operation, operationKey, reduce } fro
 /** More operations than any crystal lists, a 4 x 4 x 4 cell of a face-centred cubic group included. */
 export const LARGEST_GROUP = 192 * 64;
 
+/** Entries of rotation parts beyond this mark an endless group; far below it lie those of any basis in use. */
+const LARGEST_ENTRY = 1e6;
+/** Up to here the sums of three products of such an entry and a translation stay exact. */
+const LARGEST_DENOMINATOR = Math.floor(Number.MAX_SAFE_INTEGER / (3 * LARGEST_ENTRY));
+
 /** An operation by the index of its rotation part, and its translation over the common denominator, in [0, d). */
 interface Member {
   readonly r: number;
@@ -14,10 +19,11 @@ interface Member {
 /**
  * All operations, modulo the lattice Z^3, of the group that the given ones generate; translations in [0, 1), the
  * identity first, the given ones in their order next. One common denominator serves the whole group.
- * @throws InputProblem `operations-endless` if the group has more than LARGEST_GROUP members, so no finite group
+ * @throws InputProblem `operations-endless` if the translations have no common denominator, or if the group has more
+ * members than the limit, so no finite group
  */
 export function closeGroup(generators: readonly Operation[], limit: number = LARGEST_GROUP): Operation[] {
-  const d = generators.reduce((m, g) => lcm(m, g.w.d), 1);
+  const d = commonDenominator(generators);
   const rotations = new RotationTable(limit);
   const identity: Member = { r: rotations.add(IDENTITY), w: [0, 0, 0] };
   const given = generators.map((g) => memberOf(g, d, rotations));
@@ -37,6 +43,17 @@ export function closeGroup(generators: readonly Operation[], limit: number = LAR
     spanned = span(identity, chosen, d, rotations, insert);
   }
   return [...found.values()].map((m) => ({ W: rotations.at(m.r), w: ratVec3(m.w, d) }));
+}
+
+function commonDenominator(operations: readonly Operation[]): number {
+  const d = operations.reduce((m, g) => Math.min(lcm(m, g.w.d), LARGEST_DENOMINATOR + 1), 1);
+  if (d <= LARGEST_DENOMINATOR) return d;
+  throw new InputProblem(
+    "operations-endless",
+    `the translations of the operations have no common denominator up to ${LARGEST_DENOMINATOR}`,
+    null,
+    "look for a misprint in the fractions of the operations",
+  );
 }
 
 /** Right products by the chosen generators, from the identity outwards, until nothing new appears. */
@@ -92,7 +109,7 @@ class RotationTable {
     const k = W.join();
     const known = this.index.get(k);
     if (known !== undefined) return known;
-    if (this.matrices.length >= this.limit) throw endless(this.limit);
+    if (this.matrices.length >= this.limit || W.some((e) => Math.abs(e) > LARGEST_ENTRY)) throw endless(this.limit);
     this.index.set(k, this.matrices.length);
     this.products.push([]);
     return this.matrices.push(W) - 1;

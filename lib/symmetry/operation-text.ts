@@ -1,13 +1,13 @@
 import { component, determinant, type IntMat3, modOne, vectorOf } from "../algebra/index.ts";
 import { InputProblem } from "../problem.ts";
-import { type AffineExpression, formatExpression, parseTriplet } from "./affine-text.ts";
+import { type AffineExpression, formatExpression, keepExact, parseTriplet } from "./affine-text.ts";
 import type { Operation } from "./operation.ts";
 
 /**
  * Reads a symmetry operation in Jones-faithful notation, however written: `-X, 1/2+Y, z-0.5`, `x-y`, `.3333+z`.
  * A written fraction is taken exactly; a decimal becomes the crystallographic fraction it rounds. The translation is
  * reduced to [0, 1).
- * @throws InputProblem `triplet-unreadable`, or `operation-impossible` where the rotation part is not an integer
+ * @throws InputProblem `triplet-unreadable`, `number-too-long`, or `operation-impossible` where the rotation part is not an integer
  * matrix of determinant 1 or -1
  */
 export function parseOperation(text: string): Operation {
@@ -17,7 +17,8 @@ export function parseOperation(text: string): Operation {
   if (entries.some((e) => e.d !== 1)) throw impossible(text, "its rotation part is not integer in this cell");
   const det = determinant(W);
   if (Math.abs(det) !== 1) throw impossible(text, `its rotation part has determinant ${det}, not 1 or -1`);
-  return { W, w: modOne(vectorOf(rows[0].constant, rows[1].constant, rows[2].constant)) };
+  const constants = rows.map((row) => row.constant);
+  return { W, w: keepExact(text, () => modOne(vectorOf(constants[0]!, constants[1]!, constants[2]!))) };
 }
 
 function impossible(text: string, why: string): InputProblem {

@@ -3,6 +3,7 @@ import {
   formatRational,
   type IntMat3,
   lcm,
+  type Rational,
   type RatMat3,
   type RatVec3,
   ratDeterminant,
@@ -11,31 +12,64 @@ import {
   vectorOf,
 } from "../algebra/index.ts";
 import { InputProblem } from "../problem.ts";
-import { type AffineExpression, formatExpression, parseTriplet } from "./affine-text.ts";
+import { type AffineExpression, formatExpression, keepExact, parseTriplet } from "./affine-text.ts";
 import type { Transformation } from "./transformation.ts";
 
 /**
  * Reads a change of setting as the IUCr core dictionary writes it (`_space_group.transform_Pp_abc`): new axes as sums
  * of the old ones, then the origin shift, `a-b,a+b,c;1/4,0,0`. A constant inside an axis (`a,b+1/2,c`) is that
- * component of the shift; the part after the semicolon may be left out.
- * @throws InputProblem `triplet-unreadable`, or `transformation-singular`
+ * component of the shift; then the part after the semicolon is left out or 0.
+ * @throws InputProblem `triplet-unreadable`, `number-too-long`, `transformation-singular`, `shift-unreadable`
  */
 export function parseTransformation(text: string): Transformation {
-  const [axes = "", shift = "0,0,0"] = text.split(";");
-  const columns = parseTriplet(axes, "abc");
-  const P = fromColumns(columns);
-  if (ratDeterminant(P).n === 0) {
-    throw new InputProblem(
-      "transformation-singular",
-      `"${text}" is no change of basis: its axes lie in one plane`,
-      { start: 0, end: axes.length },
-      "give three independent axes such as a-b,a+b,c",
-    );
-  }
+  const end = text.indexOf(";") < 0 ? text.length : text.indexOf(";");
+  const columns = parseTriplet(text.slice(0, end), "abc");
+  const after = end < text.length ? parseShift(text, end + 1) : null;
   const inside = columns.map((c) => c.constant);
-  const after = parseTriplet(shift, "xyz").map((e) => e.constant);
-  const p = inside.some((r) => r.n !== 0) ? inside : after;
-  return { P, p: vectorOf(p[0]!, p[1]!, p[2]!) };
+  if (after && isShift(after) && isShift(inside)) {
+    throw badShift(text, end + 1, "it moves the origin both inside the axes and after the semicolon");
+  }
+  const [x, y, z] = after && isShift(after) ? after : inside;
+  return keepExact(text, () => {
+    const P = fromColumns(columns);
+    if (ratDeterminant(P).n === 0) throw singular(text, end);
+    return { P, p: vectorOf(x!, y!, z!) };
+  });
+}
+
+/** The three constants after the semicolon, which begins at `from`. */
+function parseShift(text: string, from: number): Rational[] {
+  const tail = text.slice(from);
+  let parts: readonly AffineExpression[];
+  try {
+    parts = parseTriplet(tail, "xyz");
+  } catch (error) {
+    if (!(error instanceof InputProblem) || !error.span) throw error;
+    const span = { start: error.span.start + from, end: error.span.end + from };
+    throw new InputProblem("shift-unreadable", error.message, span, SHIFT_HINT);
+  }
+  if (parts.some((e) => e.coefficients.some((c) => c.n !== 0))) throw badShift(text, from, "its shift holds letters");
+  return parts.map((e) => e.constant);
+}
+
+const SHIFT_HINT = "write the shift as three numbers, as in a,b,c;1/4,0,1/2";
+
+function isShift(parts: readonly Rational[]): boolean {
+  return parts.some((r) => r.n !== 0);
+}
+
+function badShift(text: string, start: number, why: string): InputProblem {
+  const message = `"${text}" is no change of setting: ${why}`;
+  return new InputProblem("shift-unreadable", message, { start, end: text.length }, SHIFT_HINT);
+}
+
+function singular(text: string, end: number): InputProblem {
+  return new InputProblem(
+    "transformation-singular",
+    `"${text}" is no change of basis: its axes lie in one plane`,
+    { start: 0, end },
+    "give three independent axes such as a-b,a+b,c",
+  );
 }
 
 function fromColumns(columns: readonly AffineExpression[]): RatMat3 {
