@@ -1,0 +1,151 @@
+import { add, apply, type IntMat3, type IntVec3, lcm, type RatVec3, ratVec3 } from "../algebra/index.ts";
+import { InputProblem } from "../problem.ts";
+import { type AffineForm, directionsOfForm, formatForm, formThrough } from "./affine-form.ts";
+import { type AffineSubspace, subspaceThrough } from "./affine-subspace.ts";
+import { arithmeticClassOf } from "./arithmetic-class.ts";
+import { crystalFamily } from "./geometric-class.ts";
+import { ownFrame } from "./label-frame.ts";
+import type { Operation } from "./operation.ts";
+import { orientedSymbol } from "./oriented-site-symmetry.ts";
+import { type PrimitiveGroup, primitiveGroup } from "./primitive-group.ts";
+import { referenceGroup } from "./reference-group.ts";
+import type { SpaceGroup } from "./space-group.ts";
+import { scalesAlike, type TensorConstraint, tensorConstraint } from "./tensor-constraint.ts";
+import { reverse, type Transformation, transformOperation } from "./transformation.ts";
+import { orbitKeys } from "./wyckoff-enumeration.ts";
+import { directionSets, type WyckoffPosition, wyckoffPositions } from "./wyckoff-positions.ts";
+
+/** A site of a crystal in its place among the Wyckoff positions of its space-group type. */
+export interface SiteAssignment {
+  readonly letter: string;
+  /** Points in the cell in use. */
+  readonly multiplicity: number;
+  /** Points in the conventional cell of the reference setting, as in `4c`. */
+  readonly referenceMultiplicity: number;
+  /** Oriented symbol along the axes in use where they are symmetry directions, else that of the reference setting. */
+  readonly siteSymmetry: string;
+  readonly referenceSiteSymmetry: string;
+  /** Order of the site-symmetry group. */
+  readonly order: number;
+  /** Fixed points of the site group in the cell in use: `x,1/4,z`. */
+  readonly constraint: string;
+  readonly form: AffineForm;
+  /** The same points in the reference setting, which need not be the first triplet of the position. */
+  readonly referenceConstraint: string;
+  /** The position itself, with its printed triplets. */
+  readonly position: WyckoffPosition;
+  /** What the site group allows of a tensor on the axes in use. */
+  readonly tensor: TensorConstraint;
+  /** `U` where the constraint holds for U_ij as it stands, `beta` where only for beta_ij (skew cells). */
+  readonly tensorHoldsFor: "U" | "beta";
+}
+
+/** What assigning sites asks of a group: itself, its type, the way to the reference setting. */
+export interface AssignmentGroup {
+  readonly group: SpaceGroup;
+  readonly number: number;
+  readonly toReference: Transformation;
+}
+
+/**
+ * Wyckoff position of a site from its site-symmetry group. Positions with site groups of one kind are told apart by the
+ * fixed points themselves: two site groups are conjugate exactly when an operation of the space group carries the fixed
+ * points of one onto those of the other.
+ * @param site all operations that fix the site, translations not reduced: each fixes the point as it stands
+ * @throws InputProblem `site-group-unknown` if their fixed points are those of no position with a site group of that
+ * order, so that the operations are not the whole site group of a point
+ */
+export function assignWyckoff(context: AssignmentGroup, site: readonly Operation[]): SiteAssignment {
+  const { group, number, toReference } = context;
+  const back = reverse(toReference);
+  const moved = site.map((a) => transformOperation(a, toReference, back));
+  if (moved.some((a) => a === null)) throw unknown(number, site.length);
+  const reference = moved as Operation[];
+  const inReference = fixedPoints(reference);
+  const position = site.length === 1 ? wyckoffPositions(number).at(-1)! : find(number, inReference, site.length);
+  const own = fixedPoints(site);
+  const rotations = site.map((a) => a.W);
+  const form = formThrough(own.point, own.directions);
+  return {
+    letter: position.letter,
+    multiplicity: group.operations.length / site.length,
+    referenceMultiplicity: position.multiplicity,
+    siteSymmetry: ownSymbol(context, rotations) ?? position.siteSymmetry,
+    referenceSiteSymmetry: position.siteSymmetry,
+    order: site.length,
+    constraint: formatForm(form),
+    form,
+    referenceConstraint: formatForm(formThrough(inReference.point, inReference.directions)),
+    position,
+    tensor: tensorConstraint(rotations),
+    tensorHoldsFor: scalesAlike(
+      rotations,
+      group.representatives.map((a) => a.W),
+    )
+      ? "U"
+      : "beta",
+  };
+}
+
+interface FixedPoints {
+  readonly point: RatVec3;
+  readonly directions: readonly IntVec3[];
+}
+
+/** The mean of the operations of a finite group carries every point onto the points that all of them fix. */
+function fixedPoints(site: readonly Operation[]): FixedPoints {
+  const sum = site.map((a) => a.W).reduce(add);
+  const d = site.reduce((m, a) => lcm(m, a.w.d), 1);
+  const at = (i: number) => site.reduce((s, a) => s + a.w.n[i]! * (d / a.w.d), 0);
+  return { point: ratVec3([at(0), at(1), at(2)], d * site.length), directions: columns(sum) };
+}
+
+function columns(m: IntMat3): IntVec3[] {
+  return [0, 1, 2].map((j) => [m[j]!, m[3 + j]!, m[6 + j]!]);
+}
+
+/** The symbol along the axes in use, if they are symmetry directions with the principal axis along c. */
+function ownSymbol({ group, number, toReference }: AssignmentGroup, rotations: readonly IntMat3[]): string | null {
+  const frame = ownFrame(group, crystalFamily(arithmeticClassOf(number).geometric), toReference);
+  return frame && frame.z[2] !== 0 ? orientedSymbol(rotations, directionSets(number)) : null;
+}
+
+const letters = new Map<number, ReadonlyMap<string, number>>();
+
+/** Index of the position by key of a subspace, special positions of a type only; built on first use. */
+function positionsByKey(number: number): ReadonlyMap<string, number> {
+  const known = letters.get(number);
+  if (known) return known;
+  const primitive = primitiveGroup(referenceGroup(number));
+  const fresh = new Map<string, number>();
+  wyckoffPositions(number).forEach(({ form }, index) => {
+    const s = inPrimitive({ point: form.t, directions: directionsOfForm(form) }, primitive);
+    for (const key of orbitKeys(s, primitive)) fresh.set(key, index);
+  });
+  letters.set(number, fresh);
+  return fresh;
+}
+
+function inPrimitive({ point, directions }: FixedPoints, { toPrimitive }: PrimitiveGroup): AffineSubspace {
+  return subspaceThrough(
+    ratVec3(apply(toPrimitive, point.n), point.d),
+    directions.map((v) => apply(toPrimitive, v)),
+  );
+}
+
+function find(number: number, points: FixedPoints, order: number): WyckoffPosition {
+  const { key } = inPrimitive(points, primitiveGroup(referenceGroup(number)));
+  const index = positionsByKey(number).get(key);
+  const position = index === undefined ? undefined : wyckoffPositions(number)[index];
+  if (!position || position.order !== order) throw unknown(number, order);
+  return position;
+}
+
+function unknown(number: number, order: number): InputProblem {
+  return new InputProblem(
+    "site-group-unknown",
+    `${order} operations are not the whole site-symmetry group of a point in space-group type ${number}`,
+    null,
+    "give every operation that fixes the point, with the lattice translations that bring it back",
+  );
+}
