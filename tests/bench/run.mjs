@@ -1,0 +1,39 @@
+/** `npm run bench`: bundles the benches named, or all of them, into one temporary file and runs it. */
+import { mkdtempSync, readdirSync, rmSync } from "node:fs";
+import { tmpdir } from "node:os";
+import { join } from "node:path";
+import { fileURLToPath, pathToFileURL } from "node:url";
+import { build } from "esbuild";
+
+const here = fileURLToPath(new URL(".", import.meta.url));
+const wanted = process.argv.slice(2);
+const benches = readdirSync(here)
+  .filter((file) => file.endsWith(".ts") && !["run.ts", "ratio.ts"].includes(file))
+  .map((file) => file.slice(0, -".ts".length));
+const chosen = wanted.length > 0 ? wanted : benches;
+const unknown = chosen.filter((name) => !benches.includes(name));
+
+if (unknown.length > 0) {
+  process.stderr.write(`no bench ${unknown.join(", ")}; there are ${benches.join(", ")}\n`);
+  process.exitCode = 2;
+} else {
+  const folder = mkdtempSync(join(tmpdir(), "sitefold-bench-"));
+  try {
+    const outfile = join(folder, "bench.mjs");
+    const imports = chosen.map((name, i) => `import { measure as m${i} } from "./${name}.ts";`);
+    const list = chosen.map((name, i) => `[${JSON.stringify(name)}, m${i}]`);
+    const contents = `import { report } from "./run.ts";\n${imports.join("\n")}\nreport([${list.join(", ")}]);\n`;
+    await build({
+      stdin: { contents, resolveDir: here, loader: "ts" },
+      outfile,
+      bundle: true,
+      format: "esm",
+      platform: "node",
+      target: "node20",
+      logLevel: "warning",
+    });
+    await import(pathToFileURL(outfile).href);
+  } finally {
+    rmSync(folder, { recursive: true, force: true });
+  }
+}
