@@ -42,31 +42,47 @@ function valueStarts(from: TokenSource, first: number, after: number): Int32Arra
   return starts.slice(0, count);
 }
 
-/** Layout by lines, or null if less than half of them hold whole rows, or some value is longer than a line. */
+/**
+ * Layout by lines, or null if lines are no rows here: some value is longer than a line, or less than half of the lines
+ * hold whole rows. If all lines agree in another number of values than there are names, no value can be told its name
+ * and no row is given.
+ */
 function alignByLine(
   from: TokenSource,
   first: number,
   after: number,
   columnCount: number,
 ): Omit<LoopShape, "valueCount"> | null {
-  const { kinds, starts, ends } = from.tokens;
-  const kept = new Int32Array(after - first);
-  let keptCount = 0;
-  let lines = 0;
+  const lines = lineStarts(from, first, after);
+  if (!lines) return null;
+  const kept: number[] = [];
+  const lengths = new Set<number>();
   let wholeLines = 0;
   let misfit: LoopShape["misfit"] = null;
-  for (let line = first; line < after; ) {
-    let next = line + 1;
-    while (next < after && !hasLineEnd(from.source, ends[next - 1]!, starts[next]!)) next++;
-    lines++;
-    if ((next - line) % columnCount === 0) {
+  for (let i = 0; i + 1 < lines.length; i++) {
+    const start = lines[i]!;
+    const next = lines[i + 1]!;
+    lengths.add(next - start);
+    if ((next - start) % columnCount === 0) {
       wholeLines++;
-      for (let at = line; at < next; at++) kept[keptCount++] = at;
-    } else misfit ??= { first: line, after: next, onLine: true };
-    for (let at = line; at < next; at++) if (kinds[at] === Kind.FIELD || kinds[at] === Kind.TRIPLE) return null;
-    line = next;
+      for (let at = start; at < next; at++) kept.push(at);
+    } else misfit ??= { first: start, after: next, onLine: true };
   }
-  if (2 * wholeLines < lines) return null;
-  const cells = { rowCount: keptCount / columnCount, columnCount, starts: kept.slice(0, keptCount), first };
+  const [length] = lengths;
+  const otherLength = lines.length > 2 && lengths.size === 1 && columnCount % length! !== 0;
+  if (2 * wholeLines < lines.length - 1 && !otherLength) return null;
+  const cells = { rowCount: kept.length / columnCount, columnCount, starts: Int32Array.from(kept), first };
   return { cells, misfit };
+}
+
+/** First token of every line and, last, `after`; null if a value spans lines. */
+function lineStarts(from: TokenSource, first: number, after: number): readonly number[] | null {
+  const { kinds, starts, ends } = from.tokens;
+  const lines: number[] = [];
+  for (let at = first; at < after; at++) {
+    if (kinds[at] === Kind.FIELD || kinds[at] === Kind.TRIPLE) return null;
+    if (at === first || hasLineEnd(from.source, ends[at - 1]!, starts[at]!)) lines.push(at);
+  }
+  lines.push(after);
+  return lines;
 }
