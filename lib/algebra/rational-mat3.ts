@@ -1,4 +1,4 @@
-import { adjugate, applyRow, determinant, type IntMat3, type IntVec3, multiply, scale } from "./int-mat3.ts";
+import { adjugate, apply, applyRow, determinant, type IntMat3, type IntVec3, multiply, scale } from "./int-mat3.ts";
 import { exact, gcd, lcm, mod, type Rational, rational } from "./rational.ts";
 
 /** The rational vector n/d over its least common denominator d > 0, in lowest terms. */
@@ -18,25 +18,32 @@ export const RAT_IDENTITY: RatMat3 = { n: [1, 0, 0, 0, 1, 0, 0, 0, 1], d: 1 };
 
 function lowestTerms(n: readonly number[], d: number): { readonly n: number[]; readonly d: number } {
   let g = Math.abs(d);
-  for (const e of n) {
+  for (let i = 0; i < n.length; i++) {
+    const e = n[i]!;
     if (!Number.isSafeInteger(e)) throw new RangeError(`not an exact integer: ${e}`);
     if (g !== 1) g = gcd(g, e);
   }
   if (!Number.isSafeInteger(d) || d === 0) throw new RangeError(`not a denominator: ${d}`);
   const s = d < 0 ? -g : g;
+  if (s === 1) return { n: n.map((e) => e + 0), d };
   return { n: n.map((e) => e / s + 0), d: d / s };
 }
 
-/** Refuses a computation whose terms may add up to more than the safe integers hold; bounds them by largest entries. */
-function requireExact(terms: number, ...factors: readonly (readonly number[])[]): void {
-  let bound = terms;
-  for (const entries of factors) {
-    let largest = 0;
-    for (const e of entries) largest = Math.max(largest, Math.abs(e));
-    bound *= largest;
-  }
-  if (bound > Number.MAX_SAFE_INTEGER)
-    throw new RangeError(`entries too large to stay exact: ${factors.join(" and ")}`);
+/** Sum of the squares of the entries. */
+function squares(e: readonly number[]): number {
+  let sum = 0;
+  for (let i = 0; i < e.length; i++) sum += e[i]! * e[i]!;
+  return sum;
+}
+
+/**
+ * Refuses a computation whose terms may add up to 2^52 or more, where sums of floating-point integers begin to round.
+ * By Cauchy and Schwarz the absolute terms of a product of matrices or vectors add up to at most the root of the
+ * product of their sums of squares; those of a determinant to at most the root of the cube of its sum of squares.
+ */
+function requireExact(boundSquared: number): void {
+  if (boundSquared < 2 ** 104) return;
+  throw new RangeError(`entries too large to stay exact: terms of up to ${Math.sqrt(boundSquared).toPrecision(3)}`);
 }
 
 /** The vector n/d in lowest terms. @throws RangeError if d is 0 or exactness is lost */
@@ -87,21 +94,19 @@ export function equalVectors(a: RatVec3, b: RatVec3): boolean {
 
 /** m v with v a column. @throws RangeError if exactness may be lost */
 export function transformVector(m: RatMat3, v: RatVec3): RatVec3 {
-  requireExact(3, m.n, v.n);
-  const [m0, m1, m2, m3, m4, m5, m6, m7, m8] = m.n;
-  const [x, y, z] = v.n;
-  return ratVec3([m0 * x + m1 * y + m2 * z, m3 * x + m4 * y + m5 * z, m6 * x + m7 * y + m8 * z], m.d * v.d);
+  requireExact(squares(m.n) * squares(v.n));
+  return ratVec3(apply(m.n, v.n), m.d * v.d);
 }
 
 /** a b. @throws RangeError if exactness may be lost */
 export function multiplyRatMat(a: RatMat3, b: RatMat3): RatMat3 {
-  requireExact(3, a.n, b.n);
+  requireExact(squares(a.n) * squares(b.n));
   return ratMat3(multiply(a.n, b.n), a.d * b.d);
 }
 
 /** @throws RangeError if the matrix is singular or exactness may be lost */
 export function inverseRatMat(m: RatMat3): RatMat3 {
-  requireExact(6, m.n, m.n, m.n);
+  requireExact(squares(m.n) ** 3);
   const det = determinant(m.n);
   if (det === 0) throw new RangeError(`singular matrix: ${m.n.join(" ")}`);
   return ratMat3(scale(adjugate(m.n), m.d), det);
@@ -109,13 +114,13 @@ export function inverseRatMat(m: RatMat3): RatMat3 {
 
 /** @throws RangeError if exactness may be lost */
 export function ratDeterminant(m: RatMat3): Rational {
-  requireExact(6, m.n, m.n, m.n);
+  requireExact(squares(m.n) ** 3);
   return rational(determinant(m.n), m.d * m.d * m.d);
 }
 
 /** v m with v a row of integers. @throws RangeError if exactness may be lost */
 export function rowTimes(v: IntVec3, m: RatMat3): RatVec3 {
-  requireExact(3, v, m.n);
+  requireExact(squares(v) * squares(m.n));
   return ratVec3(applyRow(v, m.n), m.d);
 }
 
