@@ -1,5 +1,5 @@
 import { gcd } from "../algebra/index.ts";
-import type { AxialElement } from "./crystal-element.ts";
+import type { AxialElement } from "./axial-element.ts";
 import type { GroupTable } from "./group-table.ts";
 
 /** Character of a physically irreducible representation, one value per element. */

@@ -1,6 +1,6 @@
 import { gcd } from "../algebra/index.ts";
-import type { AxialElement } from "./crystal-element.ts";
-import type { RotationPart } from "./cubic-characters.ts";
+import type { AxialElement } from "./axial-element.ts";
+import type { GroupElement } from "./group-analysis.ts";
 
 /** Name of a class without its size, and its place in a table. */
 export interface NamedClass {
@@ -61,7 +61,7 @@ export function turnName(turn: number, turns: number, flips: boolean): { name: s
  * @param main whether the axis of a twofold rotation part is one of the three main axes
  * @param sense 1 or -1 by the sense of the threefold rotations of the class where the group tells them apart, else 0
  */
-export function cubicClassName(part: RotationPart, main: boolean, sense: number): NamedClass {
+export function cubicClassName(part: GroupElement, main: boolean, sense: number): NamedClass {
   const improper = part.proper ? 0 : 1e3;
   const power = sense < 0 ? 1 : 0;
   switch (part.order) {
@@ -76,5 +76,23 @@ export function cubicClassName(part: RotationPart, main: boolean, sense: number)
       return { name: sense > 0 ? "S6^5" : "S6", rank: improper + 10 + power };
     default:
       return { name: part.proper ? "C4" : "S4", rank: improper + 40 };
+  }
+}
+
+/** Names of the classes of I and Ih. The inversion takes C5 to S10^3 and C5^2 to S10. */
+export function icosahedralClassName(part: GroupElement): NamedClass {
+  const { proper, order } = part;
+  const improper = proper ? 0 : 1e3;
+  const single = part.trace > 0; // 1 + 2 cos 72 degrees against 1 + 2 cos 144 degrees
+  switch (order) {
+    case 1:
+      return { name: proper ? "E" : "i", rank: improper };
+    case 2:
+      return { name: proper ? "C2" : "sigma", rank: improper + 40 };
+    case 3:
+      return { name: proper ? "C3" : "S6", rank: improper + 30 };
+    default:
+      if (proper) return { name: single ? "C5" : "C5^2", rank: single ? 10 : 20 };
+      return { name: single ? "S10^3" : "S10", rank: improper + (single ? 20 : 10) };
   }
 }

@@ -1,29 +1,25 @@
-import { determinant, equal, IDENTITY, type IntMat3, multiply } from "../algebra/index.ts";
+import { apply, determinant, equal, IDENTITY, type IntMat3, type IntVec3, multiply, negate } from "../algebra/index.ts";
 import { InputProblem } from "../problem.ts";
 import {
-  type AxialElement,
+  type Axis,
   axialElement,
+  CRYSTAL_TURNS,
   type CrystalElement,
   type CrystalElements,
   describeElements,
 } from "./crystal-element.ts";
-import type { RotationPart } from "./cubic-characters.ts";
-import { type AxisFrame, frameMatrix } from "./direction.ts";
+import { type AxisFrame, compareDirections, formatDirection, frameMatrix, triple } from "./direction.ts";
+import type { GroupAnalysis } from "./group-analysis.ts";
 import { conjugacyClasses, type GroupTable, groupTable } from "./group-table.ts";
 import { matrixIndex } from "./matrix-index.ts";
 import { type Orientation, orient } from "./orientation.ts";
-import { schoenfliesSymbol } from "./schoenflies.ts";
+import { schoenfliesOf } from "./schoenflies.ts";
 
-/** Everything about a group of rotation matrices that its names, labels and characters are read from. */
-export interface CrystalAnalysis extends CrystalElements {
-  readonly table: GroupTable;
-  readonly schoenflies: string;
-  readonly classes: readonly (readonly number[])[];
+/** The analysis of a crystallographic group, with its axes. */
+export interface CrystalAnalysis extends GroupAnalysis {
+  readonly elements: readonly CrystalElement[];
+  readonly axes: readonly Axis[];
   readonly orientation: Orientation;
-  /** The elements relative to the principal axis; empty in cubic groups. */
-  readonly axial: readonly AxialElement[];
-  /** 1 or -1 as the frame is right- or left-handed in the basis of the matrices. */
-  readonly handedness: number;
 }
 
 /** Order of the largest crystallographic point group, m-3m. */
@@ -40,17 +36,48 @@ export function analyse(rotations: readonly IntMat3[], frame: AxisFrame): Crysta
   const description = describeElements(rotations, frame);
   const classes = conjugacyClasses(table);
   const orientation = orient(description, classes);
-  const z = orientation.z < 0 ? frame.z : description.axes[orientation.z]!.vector;
-  const axial = orientation.kind === "cubic" ? [] : rotations.map((W) => axialElement(W, z, handedness));
+  const { elements, axes } = description;
+  const { x, y, z, secondary } = orientation;
+  const along = z < 0 ? frame.z : axes[z]!.vector;
+  const axial = orientation.kind === "cubic" ? [] : rotations.map((W) => axialElement(W, along, handedness));
   return {
-    ...description,
+    elements,
+    axes,
     table,
-    schoenflies: recognise(description.elements),
+    schoenflies: schoenfliesOf(elements),
     classes,
     orientation,
+    kind: orientation.kind,
+    main: [x, y, z],
     axial,
-    handedness,
+    turns: CRYSTAL_TURNS,
+    lateral: elements.map((e, i) => (axial[i]?.reflects ? (secondary.includes(e.axis) ? 0 : 1) : -1)),
+    threefoldSense: (members) => threefoldSense(description, members) * handedness,
+    directions: (members) => directions(description, members),
   };
+}
+
+/** The axes of some elements as `[uvw]` in the order of `compareDirections`. */
+function directions({ elements, axes }: CrystalElements, members: readonly number[]): string[] {
+  const used = [...new Set(members.map((m) => elements[m]!.axis))].filter((axis) => axis >= 0);
+  return used
+    .map((axis) => axes[axis]!.uvw)
+    .sort(compareDirections)
+    .map(formatDirection);
+}
+
+/**
+ * Sense of the four conjugate rotations of order 3 of T or Th: that of the one about the first axis in the order of
+ * `compareDirections`, seen against its direction [uvw].
+ */
+function threefoldSense({ elements, axes }: CrystalElements, members: readonly number[]): number {
+  const uvw = (m: number) => axes[elements[m]!.axis]!.uvw;
+  const first = members.reduce((p, q) => (compareDirections(uvw(q), uvw(p)) < 0 ? q : p));
+  const { W, proper, axis } = elements[first]!;
+  const R = proper ? W : negate(W);
+  const v = axes[axis]!.vector;
+  const probe: IntVec3 = v[1] === 0 && v[2] === 0 ? [0, 1, 0] : [1, 0, 0];
+  return Math.sign(triple(probe, apply(R, probe), v));
 }
 
 function multiplicationTable(rotations: readonly IntMat3[]): GroupTable {
@@ -77,24 +104,4 @@ function multiplicationTable(rotations: readonly IntMat3[]): GroupTable {
 function notAGroup(why: string): InputProblem {
   const hint = "Give every rotation of the group once.";
   return new InputProblem("not-a-group", `The rotation matrices do not form a group: ${why}.`, null, hint);
-}
-
-function recognise(elements: readonly CrystalElement[]): string {
-  const proper = elements.filter((e) => e.proper);
-  return schoenfliesSymbol({
-    order: elements.length,
-    proper: proper.length,
-    threefold: proper.filter((e) => e.order === 3).length,
-    fivefold: 0,
-    inversion: elements.some((e) => !e.proper && e.order === 1),
-    highestProper: Math.max(...proper.map((e) => e.order)),
-    highest: Math.max(...elements.map((e) => e.order)),
-  });
-}
-
-const TRACE_BY_ORDER = [0, 3, -1, 0, 1, 0, 2] as const;
-
-/** The elements as the cubic characters want them. */
-export function rotationParts(elements: readonly CrystalElement[]): RotationPart[] {
-  return elements.map((e) => ({ proper: e.proper, order: e.order, trace: TRACE_BY_ORDER[e.order]! }));
 }

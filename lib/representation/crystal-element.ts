@@ -1,5 +1,7 @@
 import { adjugate, apply, determinant, type IntMat3, type IntVec3, negate, trace } from "../algebra/index.ts";
+import type { AxialElement } from "./axial-element.ts";
 import { type AxisFrame, frameMatrix, opposite, rotationAxis, sameVector, toFrame, triple } from "./direction.ts";
+import type { GroupElement } from "./group-analysis.ts";
 
 /** Order of a proper rotation by its trace: trace = 1 + 2 cos(2 pi / n). */
 const ORDER_BY_TRACE = new Map([
@@ -10,15 +12,8 @@ const ORDER_BY_TRACE = new Map([
   [2, 6],
 ]);
 
-/** What a rotation matrix does, apart from its orientation. */
-export interface CrystalElement {
+export interface CrystalElement extends GroupElement {
   readonly W: IntMat3;
-  /** Determinant 1. */
-  readonly proper: boolean;
-  /** Order of the rotation part, W or -W. */
-  readonly order: number;
-  /** Index into the list of axes; -1 for the identity and the inversion. */
-  readonly axis: number;
 }
 
 /** An axis of rotation or rotoinversion, or the normal of a plane. */
@@ -46,7 +41,8 @@ export function describeElements(rotations: readonly IntMat3[], frame: AxisFrame
     if (order === undefined || (!proper && determinant(R) !== 1)) {
       throw new RangeError(`not a rotation of a lattice (determinant ${determinant(W)}, trace ${trace(W)})`);
     }
-    if (order === 1) return { W, proper, order, axis: -1 };
+    const common = { W, proper, order, trace: trace(R) };
+    if (order === 1) return { ...common, axis: -1 };
     const vector = rotationAxis(R);
     let axis = axes.findIndex((a) => sameVector(a.vector, vector) || sameVector(opposite(a.vector), vector));
     if (axis < 0) {
@@ -55,19 +51,9 @@ export function describeElements(rotations: readonly IntMat3[], frame: AxisFrame
       const parallel = image[0] * vector[0] + image[1] * vector[1] + image[2] * vector[2] > 0;
       axis = axes.push({ vector: parallel ? vector : opposite(vector), uvw }) - 1;
     }
-    return { W, proper, order, axis };
+    return { ...common, axis };
   });
   return { elements, axes };
-}
-
-/** An element of an axial group by what it does along and around the principal axis. */
-export interface AxialElement {
-  /** Rotation in the plane perpendicular to the axis, in units of 1/turns of a full turn; 0 where `reflects`. */
-  readonly turn: number;
-  /** The axis is reversed. */
-  readonly flips: boolean;
-  /** The plane perpendicular to the axis is mapped with reversed handedness. */
-  readonly reflects: boolean;
 }
 
 /** Turns of crystallographic elements are counted in twelfths. */

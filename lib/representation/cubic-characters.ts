@@ -1,28 +1,20 @@
 import type { ElementCharacter } from "./axial-characters.ts";
+import type { GroupElement } from "./group-analysis.ts";
 import type { GroupTable } from "./group-table.ts";
-
-/** What the characters of a cubic or icosahedral group need to know of an element. */
-export interface RotationPart {
-  readonly proper: boolean;
-  /** Order of the rotation part. */
-  readonly order: number;
-  /** Trace of the rotation part. */
-  readonly trace: number;
-}
 
 /**
  * Physically irreducible characters of T, Td, Th, O and Oh. The rotation parts form T or O; there T1 is the vector,
  * A2 is -1 outside the subgroup T, T2 = A2 T1, and E is what the symmetric square of T1 holds besides A1 and T2.
  * With the inversion every species comes even and odd.
  */
-export function cubicCharacters(parts: readonly RotationPart[], table: GroupTable): ElementCharacter[] {
+export function cubicCharacters(parts: readonly GroupElement[], table: GroupTable): ElementCharacter[] {
   const octahedral = parts.some((p) => p.order === 4);
   const n = parts.length;
   const squares = new Set<number>();
   parts.forEach((p, i) => {
     if (p.order === 4) squares.add(table.products[n * i + i]!);
   });
-  const outside = (p: RotationPart, i: number) => p.order === 4 || (p.order === 2 && !squares.has(squareFree(i)));
+  const outside = (p: GroupElement, i: number) => p.order === 4 || (p.order === 2 && !squares.has(squareFree(i)));
   // With the inversion, a rotation part of order 2 may stand on an improper element: look at its proper partner.
   const inversion = parts.findIndex((p) => !p.proper && p.order === 1);
   const squareFree = (i: number) => (parts[i]!.proper || inversion < 0 ? i : table.products[n * i + inversion]!);
@@ -41,7 +33,7 @@ export function cubicCharacters(parts: readonly RotationPart[], table: GroupTabl
  * takes every rotation to its seventh power; H is the symmetric square of T1 without A, and G is what the seven
  * functions of third degree hold besides T2.
  */
-export function icosahedralCharacters(parts: readonly RotationPart[]): ElementCharacter[] {
+export function icosahedralCharacters(parts: readonly GroupElement[]): ElementCharacter[] {
   const n = parts.length;
   const t1 = parts.map((p) => p.trace);
   const t2 = parts.map((p) => (p.order === 5 ? 1 - p.trace : p.trace));
@@ -67,7 +59,7 @@ function snap(x: number): number {
 
 function withParity(
   species: readonly ElementCharacter[],
-  parts: readonly RotationPart[],
+  parts: readonly GroupElement[],
   inversion: number,
 ): ElementCharacter[] {
   if (inversion < 0) return [...species];

@@ -1,5 +1,6 @@
 /** Point groups, their classes, species and labels; products, subduction and induction; tensors. Knows no crystals. */
 
+export type { Matrix3, Vector3 } from "./cartesian.ts";
 export { type CharacterTable, type ConjugacyClass, characterOf, type Irrep, irrepIndex } from "./character-table.ts";
 export { crystalMatrices, orientedSymbols } from "./crystal-matrices.ts";
 export {
@@ -10,6 +11,17 @@ export {
   symmetricSquare,
 } from "./decomposition.ts";
 export type { AxisFrame } from "./direction.ts";
+export { irrepMatrices, type Rows } from "./irrep-matrices.ts";
+export {
+  type LinearGroupName,
+  type LinearSpecies,
+  linearCharacter,
+  linearSpecies,
+  linearTable,
+  parseLinearSpecies,
+  subduceLinear,
+} from "./linear-group.ts";
+export { type MolecularAxes, type MolecularGroup, molecularGroup, orthogonalGroup } from "./molecular-group.ts";
 export { type PointGroup, pointGroup } from "./point-group.ts";
 export type { ReferenceAxes } from "./reference-axes.ts";
 export { type CrystalClass, type CrystalSystem, crystalClasses } from "./schoenflies.ts";

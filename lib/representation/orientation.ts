@@ -1,10 +1,11 @@
 import { add, apply, type IntVec3, multiply, transpose } from "../algebra/index.ts";
 import type { Axis, CrystalElement, CrystalElements } from "./crystal-element.ts";
 import { compareDirections, sameVector } from "./direction.ts";
+import type { GroupKind } from "./group-analysis.ts";
 
 /** How the axes x, y, z and the symmetry directions of a crystallographic point group were chosen. */
 export interface Orientation {
-  readonly kind: "isotropic" | "single" | "orthorhombic" | "axial" | "cubic";
+  readonly kind: Exclude<GroupKind, "icosahedral">;
   /** Index of the principal axis; -1 for 1 and -1. */
   readonly z: number;
   /** Axis indices of x and y in `orthorhombic` and `cubic`, else -1. */

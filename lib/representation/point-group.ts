@@ -1,11 +1,10 @@
 import { adjugate, type IntMat3 } from "../algebra/index.ts";
 import { axialCharacters } from "./axial-characters.ts";
 import { type CharacterTable, tabulate } from "./character-table.ts";
-import { analyse, rotationParts } from "./crystal-analysis.ts";
-import { CRYSTAL_TURNS } from "./crystal-element.ts";
-import { crystalMarks, nameClasses } from "./crystal-naming.ts";
+import { analyse } from "./crystal-analysis.ts";
 import { cubicCharacters } from "./cubic-characters.ts";
 import { type AxisFrame, BASIS_FRAME, frameMatrix } from "./direction.ts";
+import { labelMarks, nameClasses } from "./group-naming.ts";
 import { orientedSymbol } from "./hermann-mauguin.ts";
 import { mullikenLabels } from "./mulliken.ts";
 import { type ReferenceAxes, referenceAxes } from "./reference-axes.ts";
@@ -21,6 +20,8 @@ export interface PointGroup extends CharacterTable {
   readonly crystalSystem: CrystalSystem;
   /** The matrices, in the order given. */
   readonly elements: readonly IntMat3[];
+  /** The conventional axes in the basis of the matrices, as given. */
+  readonly frame: AxisFrame;
   /** The directions, in terms of the frame, to which labels and class names refer. */
   readonly axes: ReferenceAxes;
 }
@@ -37,8 +38,8 @@ export function pointGroup(rotations: readonly IntMat3[], frame: AxisFrame = BAS
   const { table, axial, orientation } = analysis;
   const characters =
     orientation.kind === "cubic"
-      ? cubicCharacters(rotationParts(analysis.elements), table)
-      : axialCharacters(axial, CRYSTAL_TURNS, table);
+      ? cubicCharacters(analysis.elements, table)
+      : axialCharacters(axial, analysis.turns, table);
   const kind = crystalClasses().get(analysis.schoenflies)!;
   return {
     schoenflies: kind.schoenflies,
@@ -46,7 +47,8 @@ export function pointGroup(rotations: readonly IntMat3[], frame: AxisFrame = BAS
     crystalClass: kind.hermannMauguin,
     crystalSystem: kind.crystalSystem,
     elements: rotations,
-    axes: referenceAxes(analysis, axial, orientation, frame.x, adjugate(frameMatrix(frame))),
-    ...tabulate(table, nameClasses(analysis), characters, mullikenLabels(characters, crystalMarks(analysis))),
+    frame,
+    axes: referenceAxes(analysis, axial, orientation, frame, adjugate(frameMatrix(frame))),
+    ...tabulate(table, nameClasses(analysis), characters, mullikenLabels(characters, labelMarks(analysis))),
   };
 }

@@ -1,6 +1,7 @@
 import { apply, type IntMat3, type IntVec3, inverseUnimodular, negate, subtract } from "../algebra/index.ts";
-import type { AxialElement, CrystalElement, CrystalElements } from "./crystal-element.ts";
-import { formatDirection, opposite, toFrame, triple } from "./direction.ts";
+import type { AxialElement } from "./axial-element.ts";
+import type { CrystalElement, CrystalElements } from "./crystal-element.ts";
+import { type AxisFrame, formatDirection, opposite, sameVector, toFrame, triple } from "./direction.ts";
 import type { Orientation } from "./orientation.ts";
 
 /** The directions to which labels refer, as [uvw] in terms of the frame. */
@@ -19,14 +20,15 @@ export interface ReferenceAxes {
 
 /**
  * The reference axes of a group with a chosen orientation. For a principal axis of order 3, 4 or 6, x is a of the
- * frame if it is perpendicular to z, else the first secondary direction, else a projected along z.
+ * frame (b where z is along a) if it is perpendicular to z and lies along or normal to a lateral symmetry direction; else the first secondary
+ * direction; without lateral directions, a projected along z.
  * @param back adjugate of the frame matrix
  */
 export function referenceAxes(
   description: CrystalElements,
   axial: readonly AxialElement[],
   orientation: Orientation,
-  frameX: IntVec3,
+  frame: AxisFrame,
   back: IntMat3,
 ): ReferenceAxes {
   const { axes } = description;
@@ -40,7 +42,7 @@ export function referenceAxes(
     y = uvw(orientation.y);
     if (triple(x, y, z) < 0) y = opposite(y);
   } else if (orientation.z >= 0) {
-    [x, y] = planeAxes(description, axial, orientation, frameX, back) ?? [null, null];
+    [x, y] = planeAxes(description, axial, orientation, frame, back) ?? [null, null];
   }
   return { x, y, z, secondary, tertiary, text: describe(x, y, z) };
 }
@@ -50,22 +52,25 @@ function planeAxes(
   description: CrystalElements,
   axial: readonly AxialElement[],
   orientation: Orientation,
-  frameX: IntVec3,
+  frame: AxisFrame,
   back: IntMat3,
 ): [IntVec3, IntVec3] | null {
   const { elements, axes } = description;
   const first = axial.findIndex((e, i) => !e.reflects && e.turn > 0 && e.turn < 6 && elements[i]!.order > 2);
   if (first < 0) return null;
   const R = rotationPart(elements[first]!);
-  const choice = orientation.secondary[0];
-  let x = project(frameX, R, elements[first]!.order);
-  const xInPlane = toFrame(x, back);
-  const isFrameX = xInPlane[1] === 0 && xInPlane[2] === 0;
-  if (!isFrameX && choice !== undefined) x = axes[choice]!.vector;
-  const X = toFrame(x, back);
-  const z = axes[orientation.z]!.uvw;
-  const y = toFrame(apply(subtract(R, inverseUnimodular(R)), x), back);
-  return [X, triple(X, y, z) < 0 ? opposite(y) : y];
+  const perpendicular = (v: IntVec3) => toFrame(apply(subtract(R, inverseUnimodular(R)), v), back);
+  const lateral = [...orientation.secondary, ...orientation.tertiary].map((i) => axes[i]!.uvw);
+  const axisAlongZ = (v: IntVec3) => project(v, R, elements[first]!.order).every((e) => e === 0);
+  const start = axisAlongZ(frame.x) ? frame.y : frame.x;
+  let x = project(start, R, elements[first]!.order);
+  const [u, v] = [toFrame(x, back), perpendicular(x)];
+  const inPlane = sameVector(u, toFrame(start, back));
+  const fits = lateral.some((d) => sameVector(d, u) || sameVector(d, v));
+  if (lateral.length > 0 && !(inPlane && fits))
+    x = axes[(orientation.secondary[0] ?? orientation.tertiary[0])!]!.vector;
+  const [X, y] = [toFrame(x, back), perpendicular(x)];
+  return [X, triple(X, y, axes[orientation.z]!.uvw) < 0 ? opposite(y) : y];
 }
 
 function rotationPart(e: CrystalElement): IntMat3 {

@@ -1,3 +1,5 @@
+import type { GroupElement } from "./group-analysis.ts";
+
 /** Name of a point group and its place among the crystal classes. */
 export interface CrystalClass {
   readonly schoenflies: string;
@@ -15,40 +17,30 @@ export type CrystalSystem =
   | "hexagonal"
   | "cubic";
 
-/** Numbers that identify a finite group of rotations and rotoinversions. */
-export interface ElementCounts {
-  readonly order: number;
-  readonly proper: number;
-  /** Proper rotations of order 3. */
-  readonly threefold: number;
-  /** Proper rotations of order 5. */
-  readonly fivefold: number;
-  readonly inversion: boolean;
-  /** Highest order of a proper rotation. */
-  readonly highestProper: number;
-  /** Highest order of a rotation part (W or -W). */
-  readonly highest: number;
-}
-
 /**
- * Schoenflies symbol from counts. A group without inversion but with improper elements is isomorphic, by W to -W for
- * these, to a group of rotations; the pair of that group and its proper half is the name.
+ * Schoenflies symbol of a finite group from its elements. A group without inversion but with improper elements is
+ * isomorphic, by W to -W for these, to a group of rotations; the pair of that group and its proper half is the name.
+ * S6 is called C3i, as crystallographers do.
  * Source: the classification is Weyl's, Symmetry (1952), appendix B.
  */
-export function schoenfliesSymbol(c: ElementCounts): string {
-  const allProper = c.proper === c.order;
-  if (c.fivefold === 24) return allProper ? "I" : "Ih";
-  if (c.threefold === 8) {
-    if (c.inversion) return c.order === 48 ? "Oh" : "Th";
-    if (allProper) return c.order === 24 ? "O" : "T";
+export function schoenfliesOf(elements: readonly GroupElement[]): string {
+  const proper = elements.filter((e) => e.proper);
+  const count = (order: number) => proper.filter((e) => e.order === order).length;
+  const order = elements.length;
+  const inversion = elements.some((e) => !e.proper && e.order === 1);
+  const allProper = proper.length === order;
+  if (count(5) === 24) return allProper ? "I" : "Ih";
+  if (count(3) === 8) {
+    if (inversion) return order === 48 ? "Oh" : "Th";
+    if (allProper) return order === 24 ? "O" : "T";
     return "Td";
   }
-  const n = c.highestProper;
-  const dihedral = c.proper === 2 * n && c.proper > 2;
+  const n = Math.max(...proper.map((e) => e.order));
+  const dihedral = proper.length === 2 * n && n > 1;
   if (allProper) return dihedral ? `D${n}` : `C${n}`;
-  if (c.inversion) return centric(n, dihedral);
+  if (inversion) return centric(n, dihedral);
   if (dihedral) return n % 2 === 0 ? `D${n}d` : `D${n}h`;
-  if (c.highest === n && n > 1) return `C${n}v`;
+  if (n > 1 && Math.max(...elements.map((e) => e.order)) === n) return `C${n}v`;
   if (n === 1) return "Cs";
   return n % 2 === 0 ? `S${2 * n}` : `C${n}h`;
 }
