@@ -192,23 +192,38 @@ function parseChange(text: string, inner: string, span: Span): Transformation {
     return { P: ratMat3([1, 0, 0, 0, 1, 0, 0, 0, 1]), p: ratVec3(v, 12) };
   }
   try {
-    return reverse(asTransformation(parseTriplet(body, "xyz")));
+    return reverse(parseChangeOfCoordinates(body));
   } catch (e) {
-    if (!(e instanceof InputProblem || e instanceof RangeError)) throw e;
+    if (!(e instanceof InputProblem)) throw e;
     throw fault(
-      `"${text}": "${inner}" is no change of basis: ${e instanceof InputProblem ? e.message : "it is singular"}`,
+      `"${text}": "${inner}" is no change of basis: ${e.message}`,
       span,
       'give the new coordinates in terms of the old ones: "(x-y,x+y,z)"',
     );
   }
 }
 
+/**
+ * Reads new coordinates in terms of old ones, `x-y,x+y,z+1/4`, as x' = P x + p.
+ * @throws InputProblem `triplet-unreadable`, or `transformation-singular`
+ */
+export function parseChangeOfCoordinates(text: string): Transformation {
+  const rows = parseTriplet(text, "xyz");
+  const change = asTransformation(rows);
+  if (ratDeterminant(change.P).n !== 0) return change;
+  throw new InputProblem(
+    "transformation-singular",
+    `"${text}" is no change of coordinates: it is singular`,
+    { start: 0, end: text.length },
+    "give three independent coordinates such as x-y,x+y,z",
+  );
+}
+
 function asTransformation(rows: readonly [AffineExpression, AffineExpression, AffineExpression]): Transformation {
   const entries = rows.flatMap((row) => row.coefficients);
   const d = entries.reduce((m, e) => m * e.d, 1);
-  const P_ = ratMat3(entries.map((e) => e.n * (d / e.d)) as unknown as RatMat3["n"], d);
-  if (ratDeterminant(P_).n === 0) throw new RangeError("singular");
-  return { P: P_, p: vectorOf(rows[0].constant, rows[1].constant, rows[2].constant) };
+  const matrix = ratMat3(entries.map((e) => e.n * (d / e.d)) as unknown as RatMat3["n"], d);
+  return { P: matrix, p: vectorOf(rows[0].constant, rows[1].constant, rows[2].constant) };
 }
 
 /** The bracket of a Hall symbol for a change of setting: empty, `(0 0 1)` or `(x-y,x+y,z)`. */
