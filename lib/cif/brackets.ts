@@ -1,5 +1,5 @@
 import { isCloser, LEFT_BRACE, LEFT_BRACKET, RIGHT_BRACKET, SPACE } from "./characters.ts";
-import type { ProblemList } from "./problem-list.ts";
+import { excerptWord, type ProblemList } from "./problem-list.ts";
 import { LIST, LIST_END, TABLE, TABLE_END, type TokenBuffer } from "./token-buffer.ts";
 
 /** The lists and tables open at a point of a CIF 2.0. Whatever the text does, the tokens pushed here balance. */
@@ -25,6 +25,14 @@ export class Brackets {
     if (at >= this.#source.length) return true;
     const c = this.#source.charCodeAt(at);
     return c <= SPACE || (this.#open.length > 0 && isCloser(c));
+  }
+
+  /** Reports what stands at `at` if it touches the value before it and may not. */
+  checkSeparation(at: number): void {
+    if (this.separates(at)) return;
+    const message = `no blank separates ${excerptWord(this.#source, at)} from what stands before it`;
+    const hint = "Put a blank or a line end between them.";
+    this.#problems.add("missing-space", message, { start: at, end: at + 1 }, hint);
   }
 
   open(at: number): void {

@@ -1,5 +1,5 @@
-import { isBlank, isLineEnd, SEMICOLON } from "./characters.ts";
-import { startsStructure, structuralLine } from "./keywords.ts";
+import { HASH, isBlank, isLineEnd } from "./characters.ts";
+import { startsStructure } from "./keywords.ts";
 
 /**
  * CIF 1.1: a quoted string ends at the first equal quote that a blank or the end of the text follows.
@@ -65,31 +65,9 @@ export class FieldEnds {
   }
 }
 
-/**
- * A text field whose closing semicolon was lost swallows everything up to the opening of the next one. Given the field
- * [open, close) that the delimiter at `close` seems to end, returns the offset of the first swallowed data name or
- * keyword, or -1 if the field is sound. A whole CIF inside a sound field is left alone.
- */
-export function swallowedFrom(source: string, open: number, close: number): number {
-  const after = close + 2;
-  const glued = after < source.length && !isBlank(source.charCodeAt(after));
-  if (!glued && !(endsWithLoneName(source, open, close) && !plausibleNext(source, after))) return -1;
-  return structuralLine(source, open, close);
-}
-
-/** True if the last line of the field is a data name and nothing else, as before the opening of another field. */
-function endsWithLoneName(source: string, open: number, close: number): boolean {
-  let end = close;
-  while (end > open && isBlank(source.charCodeAt(end - 1))) end--;
-  let start = end;
-  while (start > open && !isBlank(source.charCodeAt(start - 1))) start--;
-  if (!isLineEnd(source.charCodeAt(start - 1))) return false;
-  return source.charCodeAt(start) !== SEMICOLON && startsStructure(source, start);
-}
-
-/** True if what follows a closed field may follow a single item: a name, a keyword, a comment or the end. */
-function plausibleNext(source: string, from: number): boolean {
+/** True if what stands at `from`, blanks aside, may follow a single item: a name, a keyword, a comment or the end. */
+export function endsItem(source: string, from: number): boolean {
   let at = from;
   while (at < source.length && isBlank(source.charCodeAt(at))) at++;
-  return at === source.length || source[at] === "#" || startsStructure(source, at);
+  return at === source.length || source.charCodeAt(at) === HASH || startsStructure(source, at);
 }
