@@ -1,6 +1,5 @@
 import { headingText } from "../lib/report/index.ts";
 import { type Crystal, crystalFromBlock, POSITION_TOLERANCE } from "../lib/structure/index.ts";
-import { type IdentifiedGroup, identifyGroup } from "../lib/symmetry/index.ts";
 import { type Arguments, type CommandSpec, onlyOperand, parseArguments } from "./arguments.ts";
 import { blaming, chooseBlock, readSource } from "./input.ts";
 import { deliver, type Heading, jsonDocument } from "./output.ts";
@@ -9,7 +8,6 @@ import { deliver, type Heading, jsonDocument } from "./output.ts";
 export interface Question {
   readonly args: Arguments;
   readonly crystal: Crystal;
-  readonly identified: IdentifiedGroup;
   readonly file: string;
   readonly heading: Heading;
 }
@@ -22,20 +20,19 @@ export async function askCrystal(words: readonly string[], spec: CommandSpec): P
   const source = await readSource(file, args);
   const { block, notes } = chooseBlock(source, args);
   const crystal = blaming(source, () => crystalFromBlock(block, { tolerance }));
-  const identified = blaming(source, () => identifyGroup(crystal.group));
   const heading: Heading = {
     command: spec.name,
     source: { file: source.file, block: block.name },
     notes: [...notes, ...crystal.notes],
     tolerance: { position: tolerance },
   };
-  return { args, crystal, identified, file, heading };
+  return { args, crystal, file, heading };
 }
 
 /** Delivers an answer with its space group: as one JSON document, or as text below the heading. */
 export async function answerQuestion(question: Question, answer: object, text: () => string): Promise<number> {
-  const { args, heading, identified, file } = question;
-  const { summary } = identified;
+  const { args, heading, crystal, file } = question;
+  const { summary } = crystal.identified;
   const body = args.flag("json")
     ? jsonDocument(heading, { spaceGroup: summary, ...answer })
     : `${headingText(heading, summary)}\n\n${text()}`;

@@ -13,6 +13,6 @@ export const spec: CommandSpec = {
 
 export async function run(words: readonly string[]): Promise<number> {
   const question = await askCrystal(words, spec);
-  const answer = modesAnswer(question.crystal, question.identified);
+  const answer = modesAnswer(question.crystal);
   return answerQuestion(question, answer, () => modesText(answer));
 }

@@ -13,6 +13,6 @@ export const spec: CommandSpec = {
 
 export async function run(words: readonly string[]): Promise<number> {
   const question = await askCrystal(words, spec);
-  const answer = sitesAnswer(question.crystal, question.identified);
+  const answer = sitesAnswer(question.crystal);
   return answerQuestion(question, answer, () => sitesText(answer));
 }

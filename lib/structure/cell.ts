@@ -16,6 +16,9 @@ export type Vec3 = readonly [number, number, number];
 /** Row-major floating-point matrix. */
 export type Mat3 = readonly [number, number, number, number, number, number, number, number, number];
 
+/** Strain of a cell under an operation above which the two are said to disagree; s.u. of cells lie well below. */
+export const METRIC_TOLERANCE = 5e-3;
+
 /** A cell with what is computed from it once. */
 export interface Metric {
   readonly cell: Cell;

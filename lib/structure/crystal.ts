@@ -1,18 +1,19 @@
-import type { CifBlock } from "../cif/index.ts";
+import { type CifBlock, findValue } from "../cif/index.ts";
 import { InputProblem } from "../problem.ts";
-import { type SpaceGroup, spaceGroup } from "../symmetry/index.ts";
+import { type IdentifiedGroup, identifyGroup, type SpaceGroup } from "../symmetry/index.ts";
 import { type AtomSite, readAtomSites, readNumber } from "./atom-site.ts";
-import { type Cell, type Metric, metricMisfit, metricOf } from "./cell.ts";
-import { declaredSymmetry, listedGroup } from "./declared-symmetry.ts";
+import { type Cell, METRIC_TOLERANCE, type Metric, metricOf } from "./cell.ts";
+import type { SymmetryDisagreement } from "./compare-statements.ts";
+import { cellContents, contentsMisfit } from "./composition.ts";
+import { type Arbiter, resolveSymmetry, type SymmetrySource, shapeMisfit } from "./declared-group.ts";
+import { declaredSymmetry } from "./declared-symmetry.ts";
+import { parseFormula } from "./formula-text.ts";
 import { type Image, orbitOf } from "./orbit.ts";
 import { PeriodicPoints } from "./periodic-points.ts";
 import { type SiteSymmetry, siteSymmetry } from "./site-symmetry.ts";
 
 /** Positions closer than this are one position unless the user says otherwise; angstrom. */
 export const POSITION_TOLERANCE = 0.05;
-
-/** Strain of the cell under an operation above which the two are said to disagree; s.u. of cells lie well below. */
-export const METRIC_TOLERANCE = 5e-3;
 
 /** An atom site placed in the crystal: its site symmetry and its images in the cell. */
 export interface CrystalSite extends AtomSite {
@@ -29,11 +30,17 @@ export interface Crystal {
   readonly name: string;
   readonly metric: Metric;
   readonly group: SpaceGroup;
+  /** The group's type, setting and frames. */
+  readonly identified: IdentifiedGroup;
   readonly sites: readonly CrystalSite[];
   /** How the answer was obtained, assumptions included; plain sentences. */
   readonly notes: readonly string[];
   /** angstrom */
   readonly tolerance: number;
+  /** Which statement of the file the group was taken from; `given` where it came from the caller. */
+  readonly symmetrySource: SymmetrySource | "given";
+  /** Statements of the file that mean another group or setting. */
+  readonly disagreements: readonly SymmetryDisagreement[];
 }
 
 export interface CrystalOptions {
@@ -50,18 +57,23 @@ export interface CrystalParts {
   readonly notes?: readonly string[];
   /** angstrom; default POSITION_TOLERANCE */
   readonly tolerance?: number;
+  /** Saves identifying the group once more. */
+  readonly identified?: IdentifiedGroup;
+  readonly symmetrySource?: SymmetrySource;
+  readonly disagreements?: readonly SymmetryDisagreement[];
 }
 
 /**
  * A crystal from its parts: sites are snapped onto special positions, expanded, and merged where they coincide.
- * @throws InputProblem `tolerance-impossible`
+ * @throws InputProblem `tolerance-impossible`, or `operations-no-space-group`
  */
 export function crystalOf(parts: CrystalParts): Crystal {
   const { name, metric, group } = parts;
   const tolerance = checkedTolerance(parts.tolerance ?? POSITION_TOLERANCE);
   const placed = placeSites(group, metric, parts.sites, tolerance);
   const notes = [...(parts.notes ?? []), ...shapeNotes(metric, group), ...placed.notes];
-  return { name, metric, group, sites: placed.sites, notes, tolerance };
+  const { symmetrySource = "given", disagreements = [], identified = identifyGroup(group) } = parts;
+  return { name, metric, group, identified, sites: placed.sites, notes, tolerance, symmetrySource, disagreements };
 }
 
 /**
@@ -70,10 +82,55 @@ export function crystalOf(parts: CrystalParts): Crystal {
  */
 export function crystalFromBlock(block: CifBlock, options: CrystalOptions = {}): Crystal {
   const metric = metricOf(readCell(block));
-  const symmetry = readSymmetry(block);
   const list = readAtomSites(block, metric);
-  const notes = [...symmetry.notes, ...list.notes];
-  return crystalOf({ name: block.name, metric, group: symmetry.group, sites: list.sites, notes, ...options });
+  const arbiter = contentsArbiter(block, metric, list.sites, options.tolerance ?? POSITION_TOLERANCE);
+  const symmetry = placedInBlock(block, () => resolveSymmetry(declaredSymmetry(block), metric, arbiter));
+  return crystalOf({
+    name: block.name,
+    metric,
+    group: symmetry.identified.group,
+    identified: symmetry.identified,
+    sites: list.sites,
+    notes: [...symmetry.notes, ...list.notes],
+    symmetrySource: symmetry.source,
+    disagreements: symmetry.disagreements,
+    ...options,
+  });
+}
+
+function placedInBlock<T>(block: CifBlock, work: () => T): T {
+  try {
+    return work();
+  } catch (e) {
+    throw e instanceof InputProblem ? e.at(block.span) : e;
+  }
+}
+
+/**
+ * Settles what a name leaves open (an origin, say) by the contents of the cell: the setting in which the
+ * expanded sites give the stated formula is meant, if it is the only one.
+ */
+function contentsArbiter(block: CifBlock, metric: Metric, sites: readonly AtomSite[], tolerance: number): Arbiter {
+  const stated = findValue(block, "_chemical_formula.sum")?.value;
+  if (stated?.kind !== "text") return () => null;
+  return (groups) => {
+    try {
+      const formula = parseFormula(stated.text.trim());
+      const misfits = groups.map((g) =>
+        contentsMisfit(cellContents(placeSites(g, metric, sites, tolerance).sites), formula),
+      );
+      const least = Math.min(...misfits);
+      const best = misfits.flatMap((m, i) => (m <= least + 1e-3 ? [i] : []));
+      if (best.length > 1 || least > 0.1) return null;
+      return {
+        index: best[0]!,
+        why: `since only there the cell contents agree with the formula ${stated.text.trim()}`,
+      };
+    } catch (e) {
+      if (e instanceof InputProblem) return null; // a formula that cannot be read decides nothing
+      throw e;
+    }
+  };
 }
 
 function checkedTolerance(tolerance: number): number {
@@ -104,24 +161,8 @@ export function readCell(block: CifBlock): Cell {
   return { a, b, c, alpha, beta, gamma };
 }
 
-function readSymmetry(block: CifBlock): { group: SpaceGroup; notes: readonly string[] } {
-  const listed = listedGroup(declaredSymmetry(block).operations);
-  if (listed) {
-    return {
-      group: spaceGroup(listed.operations),
-      notes: ["symmetry: the operations listed in the file", ...listed.notes],
-    };
-  }
-  throw new InputProblem(
-    "operations-missing",
-    `block "${block.name}" lists no symmetry operations`,
-    block.span,
-    "add a _space_group_symop_operation_xyz loop",
-  );
-}
-
 function shapeNotes(metric: Metric, group: SpaceGroup): string[] {
-  const worst = group.representatives.reduce((m, a) => Math.max(m, metricMisfit(metric, a.W)), 0);
+  const worst = shapeMisfit(metric, group);
   if (worst <= METRIC_TOLERANCE) return [];
   return [`the cell is not invariant under its own operations: they strain it by ${(100 * worst).toFixed(1)} %`];
 }

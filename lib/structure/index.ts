@@ -7,12 +7,15 @@ export {
   inverse3,
   lengthOf,
   type Mat3,
+  METRIC_TOLERANCE,
   type Metric,
   metricMisfit,
   metricOf,
   multiply3,
   type Vec3,
 } from "./cell.ts";
+export type { SymmetryDisagreement } from "./compare-statements.ts";
+export { cellContents, contentsMisfit } from "./composition.ts";
 export {
   type Crystal,
   type CrystalOptions,
@@ -20,11 +23,17 @@ export {
   type CrystalSite,
   crystalFromBlock,
   crystalOf,
-  METRIC_TOLERANCE,
   POSITION_TOLERANCE,
   placeSites,
   readCell,
 } from "./crystal.ts";
+export {
+  type Arbiter,
+  type ResolvedSymmetry,
+  resolveSymmetry,
+  type SymmetrySource,
+  shapeMisfit,
+} from "./declared-group.ts";
 export {
   type Declared,
   type DeclaredOperation,
@@ -34,6 +43,7 @@ export {
 } from "./declared-symmetry.ts";
 export type { DisplacementTensor } from "./displacement.ts";
 export { type Element, element, readLabel, readTypeSymbol, type SpeciesReading } from "./elements.ts";
+export { type Formula, formatFormula, hillOrder, parseFormula } from "./formula-text.ts";
 export { type Image, multiplicityOf, orbitOf, wrap } from "./orbit.ts";
 export { nearestDistance, PeriodicPoints } from "./periodic-points.ts";
 export { type Position, type PositionsAnswer, positionsAnswer } from "./positions-answer.ts";

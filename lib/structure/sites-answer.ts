@@ -39,8 +39,8 @@ export interface SitesAnswer {
 }
 
 /** Site symmetry, Wyckoff position and constraints of every site, in the order of the file. */
-export function sitesAnswer(crystal: Crystal, identified: IdentifiedGroup): SitesAnswer {
-  return { sites: crystal.sites.map((site) => siteAnswer(site, identified)) };
+export function sitesAnswer(crystal: Crystal): SitesAnswer {
+  return { sites: crystal.sites.map((site) => siteAnswer(site, crystal.identified)) };
 }
 
 function siteAnswer(site: CrystalSite, identified: IdentifiedGroup): SiteAnswer {

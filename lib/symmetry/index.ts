@@ -7,6 +7,9 @@ export {
 export { centringLetter, centringsOf, primitiveBasis } from "./centring.ts";
 export { DECIMAL_TOLERANCE, fractionFromDecimal } from "./fraction-text.ts";
 export { closeGroup, LARGEST_GROUP, type MissingProduct, missingProduct } from "./group-closure.ts";
+export { type HallGroup, operationsFromHall } from "./hall-symbol.ts";
+export { hallSymbolOf } from "./hall-symbol-of.ts";
+export { type GroupNameCandidate, type GroupNameReading, readGroupName } from "./hermann-mauguin.ts";
 export { type Identification, identify } from "./identification.ts";
 export { type LabelFrames, ownFrame, referenceFrame } from "./label-frame.ts";
 export { matchingSetting } from "./matching-setting.ts";
@@ -21,8 +24,11 @@ export {
   transformPoint,
 } from "./operation.ts";
 export { formatOperation, parseOperation } from "./operation-text.ts";
+export { settingHall, settingOperations } from "./setting-group.ts";
+export { type Setting, settingsOf } from "./settings.ts";
 export { type AssignmentGroup, assignWyckoff, type SiteAssignment } from "./site-assignment.ts";
 export { rotationIndex, rotationParts, type SpaceGroup, spaceGroup } from "./space-group.ts";
+export { type SpaceGroupType, spaceGroupType, spaceGroupTypes } from "./space-group-type.ts";
 export { type IdentifiedGroup, identifyGroup, type SpaceGroupSummary } from "./summary.ts";
 export {
   chain,

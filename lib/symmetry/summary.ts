@@ -5,6 +5,7 @@ import { identify } from "./identification.ts";
 import { type LabelFrames, ownFrame, referenceFrame } from "./label-frame.ts";
 import { matchingSetting } from "./matching-setting.ts";
 import { formatOperation } from "./operation-text.ts";
+import type { Setting } from "./settings.ts";
 import { rotationParts, type SpaceGroup } from "./space-group.ts";
 import { spaceGroupType } from "./space-group-type.ts";
 import type { Transformation } from "./transformation.ts";
@@ -35,6 +36,8 @@ export interface SpaceGroupSummary {
 export interface IdentifiedGroup {
   readonly group: SpaceGroup;
   readonly number: number;
+  /** The conventional setting that the group is written in, null for none. */
+  readonly setting: Setting | null;
   readonly summary: SpaceGroupSummary;
   readonly toReference: Transformation;
   readonly frames: LabelFrames;
@@ -47,7 +50,7 @@ export interface IdentifiedGroup {
 export function identifyGroup(group: SpaceGroup): IdentifiedGroup {
   const { number, transformation } = identify(group.operations);
   const type = spaceGroupType(number);
-  const setting = matchingSetting(number, group.operations);
+  const setting = matchingSetting(number, group);
   const toReference = setting?.reference ? setting.toReference : transformation;
   const rotations = rotationParts(group);
   const reference = referenceFrame(toReference);
@@ -68,5 +71,5 @@ export function identifyGroup(group: SpaceGroup): IdentifiedGroup {
     centrosymmetric: rotations.some((W) => equal(W, MINUS_IDENTITY)),
     sohncke: rotations.every((W) => determinant(W) === 1),
   };
-  return { group, number, summary, toReference, frames };
+  return { group, number, setting, summary, toReference, frames };
 }

@@ -52,7 +52,8 @@ export interface ModesAnswer {
 }
 
 /** Species, activities and counts of the modes of a crystal at k = 0, as plain data. */
-export function modesAnswer(crystal: Crystal, identified: IdentifiedGroup): ModesAnswer {
+export function modesAnswer(crystal: Crystal): ModesAnswer {
+  const { identified } = crystal;
   const { frames } = identified;
   const modes = factorGroupModes(crystal, frames.own ?? frames.reference);
   const { group } = modes;
