@@ -114,14 +114,15 @@ function categoryOf(name: string): string {
 /** The unlooped items of a category as a loop of one row. */
 function singleRow(block: CifBlock, category: string): CifLoop {
   const names = block.names().filter((name) => categoryOf(name) === category && block.loop(name) === null);
-  const spans = names.map((name) => block.nameSpan(name)!);
+  const start = Math.min(...names.map((name) => block.nameSpan(name)!.start));
+  const end = Math.max(...names.map((name) => block.get(name)!.span.end));
   const lower = names.map((name) => name.toLowerCase());
   const columnIndex = (name: string) => lower.indexOf(name.toLowerCase());
   const at = (row: number, column: number) => (row === 0 ? block.get(names[column] ?? "") : null);
   return {
     names,
     rowCount: 1,
-    span: { start: Math.min(...spans.map((s) => s.start)), end: Math.max(...spans.map((s) => s.end)) },
+    span: { start, end },
     has: (name) => columnIndex(name) >= 0,
     columnIndex,
     at,
