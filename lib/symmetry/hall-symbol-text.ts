@@ -1,7 +1,7 @@
-import P from "parsimmon";
 import { type RatMat3, ratDeterminant, rational, ratMat3, ratVec3, vectorOf } from "../algebra/index.ts";
 import { InputProblem, type Span } from "../problem.ts";
 import { type AffineExpression, formatExpression, parseTriplet } from "./affine-text.ts";
+import { type HallLattice, readHallSymbol, type WrittenRotation } from "./hall-symbol-grammar.ts";
 import { reverse, type Transformation } from "./transformation.ts";
 
 /** Axis of a Hall rotation: a cell axis, a face diagonal (' difference, " sum) or the body diagonal (*). */
@@ -23,6 +23,8 @@ export interface HallRotation {
   readonly span: Span;
 }
 
+export type { HallLattice };
+
 /** A Hall symbol taken apart. */
 export interface HallSymbol {
   /** True where the lattice symbol carries a minus sign: an inversion centre at the origin. */
@@ -34,53 +36,6 @@ export interface HallSymbol {
   readonly spans: { readonly lattice: Span; readonly change: Span | null };
 }
 
-export type HallLattice = "P" | "A" | "B" | "C" | "I" | "R" | "S" | "T" | "F" | "H";
-
-interface WrittenRotation {
-  readonly improper: boolean;
-  readonly order: number;
-  readonly axis: string;
-  readonly tail: string;
-}
-
-const gap = P.regexp(/[\s_]*/);
-const separator = P.regexp(/[\s_]+/);
-const minus = P.regexp(/[-\u2212]?/).map((s) => s !== "");
-
-const lattice = P.seqMap(minus.skip(gap), P.regexp(/[PABCIRSTFH]/i), (centrosymmetric, letter) => ({
-  centrosymmetric,
-  letter: letter.toUpperCase() as HallLattice,
-}))
-  .mark()
-  .desc("a lattice letter P, A, B, C, I, F, R, S, T or H, with a minus sign for an inversion centre");
-
-const axis = P.regexp(/''|[xyz'"*\u2032\u2033]|/i).map((s) => AXIS_SPELLINGS.get(s) ?? s.toLowerCase());
-const AXIS_SPELLINGS = new Map([
-  ["''", '"'],
-  ["\u2032", "'"],
-  ["\u2033", '"'],
-]);
-
-const rotation = P.seqMap(
-  minus,
-  P.regexp(/[12346]/).desc("a rotation 1, 2, 3, 4 or 6"),
-  axis,
-  P.regexp(/[1-5]?[abcnuvwd]*[1-5]?[abcnuvwd]*/i).map((s) => s.toLowerCase()),
-  (improper, order, ax, tail): WrittenRotation => ({ improper, order: Number(order), axis: ax, tail }),
-).mark();
-
-const bracket = P.regexp(/\([^()]*\)/).desc("an origin shift (0 0 1) or a change of basis (x-y,x+y,z)");
-const symbol = P.seqMap(
-  gap.then(lattice),
-  gap.then(rotation),
-  P.seqMap(separator, rotation, (_, r) => r).many(),
-  gap.then(bracket.mark().times(0, 1)),
-  gap,
-  (l, first, rest, change) => ({ lattice: l, rotations: [first, ...rest], change: change[0] ?? null }),
-).skip(P.eof.desc("a blank before the next rotation, or the end"));
-
-const spanOf = (m: { start: P.Index; end: P.Index }): Span => ({ start: m.start.offset, end: m.end.offset });
-
 /**
  * Reads a Hall symbol; case, underscores for blanks and a missing blank after the lattice letter are accepted, and the
  * default axes are filled in.
@@ -88,18 +43,18 @@ const spanOf = (m: { start: P.Index; end: P.Index }): Span => ({ start: m.start.
  * Source: S. R. Hall, Acta Cryst. A37 (1981) 517; International Tables for Crystallography B, section 1.4, appendix.
  */
 export function parseHallSymbol(text: string): HallSymbol {
-  const result = symbol.parse(text);
-  if (!result.status) throw misfit(text, result.index.offset, result.expected);
-  const { lattice: l, rotations, change } = result.value;
+  const reading = readHallSymbol(text);
+  if (!reading.ok) throw misfit(text, reading.at, reading.expected);
+  const { lattice, rotations, change } = reading.symbol;
   return {
-    centrosymmetric: l.value.centrosymmetric,
-    lattice: l.value.letter,
+    centrosymmetric: lattice.value.centrosymmetric,
+    lattice: lattice.value.letter,
     rotations: withDefaults(
       text,
-      rotations.map((r) => ({ ...r.value, span: spanOf(r) })),
+      rotations.map((r) => ({ ...r.value, span: r.span })),
     ),
-    change: change ? parseChange(text, change.value, spanOf(change)) : null,
-    spans: { lattice: spanOf(l), change: change ? spanOf(change) : null },
+    change: change ? parseChange(text, change.value, change.span) : null,
+    spans: { lattice: lattice.span, change: change ? change.span : null },
   };
 }
 
