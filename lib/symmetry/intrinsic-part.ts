@@ -1,30 +1,12 @@
-import {
-  add,
-  apply,
-  IDENTITY,
-  type IntMat3,
-  multiply,
-  type RatVec3,
-  ratVec3,
-  subtractVectors,
-} from "../algebra/index.ts";
+import { apply, type IntMat3, type RatVec3, ratVec3, subtractVectors } from "../algebra/index.ts";
+import { signedOrder } from "./geometric-class.ts";
 import type { Operation } from "./operation.ts";
+import { powerSum } from "./rotation-axis.ts";
 
-/** 1 + W + ... + W^(k-1), with k the order of W: k times the projection onto what W leaves fixed. */
-export function orbitSum(W: IntMat3): { readonly sum: IntMat3; readonly k: number } {
-  let sum = IDENTITY;
-  let power = W;
-  let k = 1;
-  while (!isIdentity(power)) {
-    sum = add(sum, power);
-    power = multiply(power, W);
-    if (++k > 6) throw new RangeError(`not a crystallographic rotation: ${W.join(" ")}`);
-  }
-  return { sum, k };
-}
-
-function isIdentity(m: IntMat3): boolean {
-  return m.every((e, i) => e === IDENTITY[i]);
+/** Smallest k > 0 with W^k = 1: the order of a rotation, twice an odd order for a rotoinversion. */
+export function matrixOrder(W: IntMat3): number {
+  const order = signedOrder(W);
+  return order > 0 ? order : order % 2 === 0 ? -order : -2 * order;
 }
 
 /**
@@ -32,7 +14,7 @@ function isIdentity(m: IntMat3): boolean {
  * Source: International Tables for Crystallography A (2016), section 1.2.2.4.
  */
 export function splitTranslation(a: Operation): { readonly intrinsic: RatVec3; readonly location: RatVec3 } {
-  const { sum, k } = orbitSum(a.W);
-  const intrinsic = ratVec3(apply(sum, a.w.n), a.w.d * k);
+  const k = matrixOrder(a.W);
+  const intrinsic = ratVec3(apply(powerSum(a.W, k), a.w.n), a.w.d * k);
   return { intrinsic, location: subtractVectors(a.w, intrinsic) };
 }
