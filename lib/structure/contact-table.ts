@@ -1,8 +1,8 @@
-import type { CellAtom } from "./cell-atoms.ts";
-import { type Contact, contactsWithin } from "./neighbour-search.ts";
 import { bondClasses, isHydrogen } from "./bond-class.ts";
+import type { CellAtom } from "./cell-atoms.ts";
 import { covalentRadius } from "./covalent-radius.ts";
 import type { Crystal } from "./crystal.ts";
+import { type Contact, contactsWithin } from "./neighbour-search.ts";
 
 /**
  * A bond may be longer than the sum of the covalent radii by this much; angstrom. Single bonds scatter about the sum
@@ -26,6 +26,7 @@ export type BondRule =
   | "nitrogen ligand"
   | "carbon ligand"
   | "phosphorus or sulfur ligand"
+  | "chelate oxygen"
   | "metal pair"
   | "asked for";
 
@@ -47,16 +48,19 @@ export class ContactTable {
   readonly compared: number;
   private readonly byAtom: number[][];
 
-  /** @param most largest distance for a pair of sites beyond the usual, angstrom; 0 for none */
+  /**
+   * @param wider limits beyond the usual ones, where the user asks for them
+   * @param excluded contacts of atoms that are never there at the same time
+   */
   constructor(
     crystal: Crystal,
     atoms: readonly CellAtom[],
-    most: (siteA: number, siteB: number) => number,
+    wider: PairLimits | null,
     excluded: (contact: Contact) => boolean,
   ) {
     this.atoms = atoms;
     this.elements = atoms.map((a) => crystal.sites[a.site]!.element);
-    const limit = pairLimits(crystal, most);
+    const limit = pairLimits(crystal, wider);
     const positions = atoms.map((a) => a.position);
     const search = contactsWithin(crystal.metric, positions, limit.reach, (i, j) =>
       limit.of(atoms[i]!.site, atoms[j]!.site),
@@ -70,11 +74,12 @@ export class ContactTable {
       this.byAtom[c.first]!.push(k);
       if (c.second !== c.first) this.byAtom[c.second]!.push(k);
     });
+    for (const list of this.byAtom) list.sort((a, b) => this.contacts[a]!.distance - this.contacts[b]!.distance);
   }
 
   /** Indices of the contacts of an atom, shortest first. */
   around(atom: number): readonly number[] {
-    return this.byAtom[atom]!.sort((a, b) => this.contacts[a]!.distance - this.contacts[b]!.distance);
+    return this.byAtom[atom]!;
   }
 
   /** The atom at the other end of a contact. */
@@ -102,33 +107,25 @@ export class ContactTable {
   }
 }
 
-interface PairLimits {
+/** Largest distances of interest; angstrom. */
+export interface PairLimits {
+  /** The largest of them all. */
   readonly reach: number;
+  /** For two sites; 0 for none. */
   readonly of: (siteA: number, siteB: number) => number;
 }
 
-/** Largest distance of interest between two sites; 0 where the elements never bond by default. */
-function pairLimits(crystal: Crystal, most: (siteA: number, siteB: number) => number): PairLimits {
+function pairLimits(crystal: Crystal, wider: PairLimits | null): PairLimits {
   const elements = [...new Set(crystal.sites.map((s) => s.element))];
   const index = crystal.sites.map((s) => elements.indexOf(s.element));
   const table = elements.map((a) => elements.map((b) => elementLimit(a, b)));
-  let reach = Math.max(0, ...table.flat());
-  const special = new Map<string, number>();
-  const sites = crystal.sites.length;
-  if (most(-1, -1) > 0) {
-    for (let i = 0; i < sites; i++) {
-      for (let j = 0; j < sites; j++) {
-        const limit = most(i, j);
-        if (limit > 0) special.set(`${i},${j}`, limit);
-        reach = Math.max(reach, limit);
-      }
-    }
-  }
+  const reach = Math.max(0, ...table.flat());
   const usual = (i: number, j: number) => table[index[i]!]![index[j]!]!;
-  if (special.size === 0) return { reach, of: usual };
-  return { reach, of: (i, j) => Math.max(usual(i, j), special.get(`${i},${j}`) ?? 0) };
+  if (!wider) return { reach, of: usual };
+  return { reach: Math.max(reach, wider.reach), of: (i, j) => Math.max(usual(i, j), wider.of(i, j)) };
 }
 
+/** Largest distance at which two elements are looked at without being asked; 0 where they never bond by default. */
 function elementLimit(a: string | null, b: string | null): number {
   const sum = radiusSum(a, b);
   if (sum === null || a === null || b === null) return 0;

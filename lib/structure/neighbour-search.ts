@@ -3,6 +3,9 @@ import type { Metric, Vec3 } from "./cell.ts";
 /** Boxes per atom that still pay; a nearly empty cell is not cut finer. */
 const BOXES_PER_ATOM = 2;
 
+/** Distances are rounded to this, so that equivalent pairs agree exactly when compared with a limit; angstrom. */
+const ROUNDING = 1e-9;
+
 /** A pair of atoms: the second one is meant shifted by whole cells. */
 export interface Contact {
   readonly first: number;
@@ -139,7 +142,7 @@ class BoxGrid {
     const dx = c[3 * second]! - c[3 * first]! + this.along(0, t);
     const dy = c[3 * second + 1]! - c[3 * first + 1]! + this.along(1, t);
     const dz = c[3 * second + 2]! - c[3 * first + 2]! + this.along(2, t);
-    return Math.sqrt(dx * dx + dy * dy + dz * dz);
+    return Math.round(Math.sqrt(dx * dx + dy * dy + dz * dz) / ROUNDING) * ROUNDING;
   }
 
   /** The shift between the points as they were given. */
