@@ -4,18 +4,23 @@ import { InputProblem } from "../problem.ts";
 /** Numbers of atoms by element symbol, in the order written. */
 export type Formula = ReadonlyMap<string, number>;
 
-const blank = P.regexp(/[\s_]*/);
-const symbol = P.regexp(/[A-Z][a-z]?/);
-const count = P.regexp(/\d+(?:\.\d*)?(?:\(\d+\))?|\.\d+/).map((t) => Number(t.replace(/\(.*/, "")));
-const term = P.seq(symbol, count.fallback(1)).skip(blank);
-const formula = blank.then(term.many()).skip(P.eof);
+function formulaGrammar(): P.Parser<[string, number][]> {
+  const blank = P.regexp(/[\s_]*/);
+  const symbol = P.regexp(/[A-Z][a-z]?/);
+  const count = P.regexp(/\d+(?:\.\d*)?(?:\(\d+\))?|\.\d+/).map((t) => Number(t.replace(/\(.*/, "")));
+  const term = P.seq(symbol, count.fallback(1)).skip(blank);
+  return blank.then(term.many()).skip(P.eof);
+}
+
+let grammar: P.Parser<[string, number][]> | null = null; // built when the first formula is read
 
 /**
  * Reads a sum formula as CIF writes it, `C6 H12 O6`, `Ca0.95 Mg0.05 C O3`: symbols with counts, no brackets.
  * @throws InputProblem `formula-unreadable` with the span of the character that does not fit
  */
 export function parseFormula(text: string): Formula {
-  const result = formula.parse(text);
+  grammar ??= formulaGrammar();
+  const result = grammar.parse(text);
   if (!result.status) {
     const at = result.index.offset;
     throw new InputProblem(

@@ -19,56 +19,65 @@ export type SymbolUnit =
 /** What stands before a unit: an underscore may be a blank or lower the digit after it. */
 type Gap = "" | "blank" | "underscore";
 
-const quote = P.regexp(/[\s'"]*/);
-const gap = P.regexp(/[\s_.,]*/).map((s): Gap => (s === "" ? "" : s === "_" ? "underscore" : "blank"));
-const subscript = P.alt(
-  P.regexp(/\(([1-5])\)/, 1),
-  P.regexp(/~([1-5])~/, 1),
-  P.regexp(/<sub>([1-5])<\/sub>/i, 1),
-  P.regexp(/[\u2081-\u2085]/).map((s) => String(s.charCodeAt(0) - 0x2080)),
-);
+/** One character with a meaning. */
+function unitGrammar(): P.Parser<SymbolUnit> {
+  const gap = P.regexp(/[\s_.,]*/).map((s): Gap => (s === "" ? "" : s === "_" ? "underscore" : "blank"));
+  const subscript = P.alt(
+    P.regexp(/\(([1-5])\)/, 1),
+    P.regexp(/~([1-5])~/, 1),
+    P.regexp(/<sub>([1-5])<\/sub>/i, 1),
+    P.regexp(/[\u2081-\u2085]/).map((s) => String(s.charCodeAt(0) - 0x2080)),
+  );
 
-const digit = P.seqMap(
-  gap,
-  P.regexp(/\\?[-\u2212]?/),
-  P.regexp(/[1-6]/),
-  P.regexp(/[\u0305\u0304\u00af]?/),
-  subscript.times(0, 1),
-  (g, minus, d, bar, s): SymbolUnit => ({
-    kind: "digit",
-    digit: Number(d),
-    bar: minus !== "" || bar !== "",
-    screw: s[0] ? Number(s[0]) : 0,
-    gap: g,
-  }),
-);
-const letter = P.seqMap(
-  gap,
-  P.regexp(/g[12](?![0-9])|[mabcendg]/i),
-  (g, l): SymbolUnit => ({ kind: "letter", letter: l.toLowerCase() as PlaneLetter, gap: g }),
-);
-const slash = gap.then(P.regexp(/\//)).map((): SymbolUnit => ({ kind: "slash" }));
+  const digit = P.seqMap(
+    gap,
+    P.regexp(/\\?[-\u2212]?/),
+    P.regexp(/[1-6]/),
+    P.regexp(/[\u0305\u0304\u00af]?/),
+    subscript.times(0, 1),
+    (g, minus, d, bar, s): SymbolUnit => ({
+      kind: "digit",
+      digit: Number(d),
+      bar: minus !== "" || bar !== "",
+      screw: s[0] ? Number(s[0]) : 0,
+      gap: g,
+    }),
+  );
+  const letter = P.seqMap(
+    gap,
+    P.regexp(/g[12](?![0-9])|[mabcendg]/i),
+    (g, l): SymbolUnit => ({ kind: "letter", letter: l.toLowerCase() as PlaneLetter, gap: g }),
+  );
+  const slash = gap.then(P.regexp(/\//)).map((): SymbolUnit => ({ kind: "slash" }));
+  return P.alt(digit, slash, letter);
+}
 
-const colon = P.regexp(/[\s_]*:\s*([^:()]*[^:()\s])/, 1);
-const closing = P.regexp(/[\s_]*([szhr])(?=[\s'"]*($|\())/i, 1);
-const remark = P.regexp(/[\s_]*(\([^()]*\)|\{[^{}]*\}|\[[^[\]]*\])/, 1);
-const extension = P.alt(colon, closing, remark).mark();
+/** A whole symbol with what follows it. */
+function symbolGrammar(): P.Parser<WrittenSymbol> {
+  const quote = P.regexp(/[\s'"]*/);
+  const colon = P.regexp(/[\s_]*:\s*([^:()]*[^:()\s])/, 1);
+  const closing = P.regexp(/[\s_]*([szhr])(?=[\s'"]*($|\())/i, 1);
+  const remark = P.regexp(/[\s_]*(\([^()]*\)|\{[^{}]*\}|\[[^[\]]*\])/, 1);
+  const extension = P.alt(colon, closing, remark).mark();
 
-const symbol = P.seqMap(
-  quote.then(P.regexp(/[PABCIFRH]/i).desc("a lattice letter P, A, B, C, F, I, R or H")),
-  P.alt(digit, slash, letter).atLeast(1),
-  extension.many(),
-  (lattice, units, extensions): WrittenSymbol => ({
-    lattice: lattice.toUpperCase(),
-    units,
-    extensions: extensions.map((e) => ({
-      text: e.value,
-      span: { start: e.start.offset, end: e.end.offset },
-    })),
-  }),
-)
-  .skip(quote)
-  .skip(P.eof);
+  return P.seqMap(
+    quote.then(P.regexp(/[PABCIFRH]/i).desc("a lattice letter P, A, B, C, F, I, R or H")),
+    unitGrammar().atLeast(1),
+    extension.many(),
+    (lattice, units, extensions): WrittenSymbol => ({
+      lattice: lattice.toUpperCase(),
+      units,
+      extensions: extensions.map((e) => ({
+        text: e.value,
+        span: { start: e.start.offset, end: e.end.offset },
+      })),
+    }),
+  )
+    .skip(quote)
+    .skip(P.eof);
+}
+
+let grammar: P.Parser<WrittenSymbol> | null = null; // built when the first symbol is read
 
 /**
  * Reads the characters of a Hermann-Mauguin symbol: capitals, underscores, blanks or none, subscripts as `2(1)`, `2_1`,
@@ -76,7 +85,8 @@ const symbol = P.seqMap(
  * @throws InputProblem `group-name-unreadable` with the span of the first character that does not fit
  */
 export function readSymbolUnits(text: string): WrittenSymbol {
-  const result = symbol.parse(text);
+  grammar ??= symbolGrammar();
+  const result = grammar.parse(text);
   if (result.status) return result.value;
   const at = result.index.offset;
   const what = at >= text.length ? "it ends too early" : `"${text[at]}" at character ${at + 1} does not fit`;
