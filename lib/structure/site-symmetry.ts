@@ -32,7 +32,7 @@ export function siteSymmetry(
   tolerance: number,
 ): SiteSymmetry {
   const near = nearOperations(operations, metric, x, tolerance);
-  let kept = near.length;
+  let kept = longestWithoutTranslation(near);
   while (kept > 1) {
     const group = closeAround(near.slice(0, kept).map((n) => n.operation));
     if (group) {
@@ -44,6 +44,17 @@ export function siteSymmetry(
     while (kept > 1 && near[kept - 1]!.distance > worst - 1e-6) kept--;
   }
   return snap([near[0]!.operation], metric, x);
+}
+
+/** Length of the longest beginning in which no rotation part comes twice: twice would mean a translation. */
+function longestWithoutTranslation(near: readonly NearOperation[]): number {
+  const seen = new Set<string>();
+  for (let i = 0; i < near.length; i++) {
+    const key = near[i]!.operation.W.join();
+    if (seen.has(key)) return i;
+    seen.add(key);
+  }
+  return near.length;
 }
 
 interface NearOperation {
