@@ -1,7 +1,9 @@
 /** Point groups, their classes, species and labels; products, subduction and induction; tensors. Knows no crystals. */
 
 export type { Matrix3, Vector3 } from "./cartesian.ts";
+export { cartesianMatrices } from "./cartesian-matrices.ts";
 export { type CharacterTable, type ConjugacyClass, characterOf, type Irrep, irrepIndex } from "./character-table.ts";
+export { type Correlation, correlations, subgroupOf } from "./correlation.ts";
 export { crystalMatrices, orientedSymbols } from "./crystal-matrices.ts";
 export {
   antisymmetricSquare,
@@ -11,6 +13,7 @@ export {
   symmetricSquare,
 } from "./decomposition.ts";
 export type { AxisFrame } from "./direction.ts";
+export type { SpeciesFunctions } from "./functions.ts";
 export { irrepMatrices, type Rows } from "./irrep-matrices.ts";
 export {
   type LinearGroupName,
@@ -23,9 +26,10 @@ export {
 } from "./linear-group.ts";
 export { type MolecularAxes, type MolecularGroup, molecularGroup, orthogonalGroup } from "./molecular-group.ts";
 export { type PointGroup, pointGroup } from "./point-group.ts";
+export { type PointGroupTable, pointGroupTable } from "./point-group-table.ts";
 export type { ReferenceAxes } from "./reference-axes.ts";
 export { type CrystalClass, type CrystalSystem, crystalClasses } from "./schoenflies.ts";
-export { embedding, induce, induceBy, subduce, subduceBy } from "./subduction.ts";
+export { embedding, induce, induceBy, nearestEmbedding, subduce, subduceBy } from "./subduction.ts";
 export {
   axialCharacter,
   hyperRamanGeneralCharacter,
@@ -33,3 +37,5 @@ export {
   symmetricSquareCharacter,
   vectorCharacter,
 } from "./tensor-characters.ts";
+export { matrixEntries, type PartnerTensor, type TensorForm, type TensorForms, tensorForms } from "./tensor-forms.ts";
+export type { TensorKind } from "./tensor-space.ts";
