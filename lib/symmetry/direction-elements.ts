@@ -59,7 +59,18 @@ export function directionElements(
       }
     }
   }
+  // a face-centred mirror plane is a diagonal glide plane at the same time
+  if (planes.has("m") && centrings.some((t) => liesInFace(t, direction))) planes.set("n", ["n"]);
   return { axes: highest(axes, roto), planes: [...planes.values()].sort((p, q) => rank(p) - rank(q)) };
+}
+
+/** True for the half diagonal of the cell face normal to a cell axis. */
+function liesInFace(t: RatVec3, direction: IntVec3): boolean {
+  return (
+    t.d === 2 &&
+    direction.filter((e) => e !== 0).length === 1 &&
+    t.n.every((n, i) => (n === 0) === (direction[i] !== 0))
+  );
 }
 
 function rank(letters: readonly PlaneLetter[]): number {
