@@ -5,10 +5,15 @@ export {
   parseTriplet,
 } from "./affine-text.ts";
 export { centringLetter, centringsOf, primitiveBasis } from "./centring.ts";
+export { extendedSymbol } from "./extended-symbol.ts";
 export { DECIMAL_TOLERANCE, fractionFromDecimal } from "./fraction-text.ts";
+export type { CrystalFamily, GeometricClass } from "./geometric-class.ts";
+export { type GeometricMeaning, geometricMeaning } from "./geometric-meaning.ts";
 export { closeGroup, LARGEST_GROUP, type MissingProduct, missingProduct } from "./group-closure.ts";
+export { type BravaisType, type GroupProperties, groupProperties } from "./group-properties.ts";
 export { type HallGroup, operationsFromHall } from "./hall-symbol.ts";
 export { hallSymbolOf } from "./hall-symbol-of.ts";
+export { formatHallSymbol, type HallRotation, type HallSymbol, parseHallSymbol } from "./hall-symbol-text.ts";
 export { type GroupNameCandidate, type GroupNameReading, readGroupName } from "./hermann-mauguin.ts";
 export { type Identification, identify } from "./identification.ts";
 export { type LabelFrames, ownFrame, referenceFrame } from "./label-frame.ts";
@@ -26,6 +31,12 @@ export {
 export { formatOperation, parseOperation } from "./operation-text.ts";
 export { settingHall, settingOperations } from "./setting-group.ts";
 export { type Setting, settingsOf } from "./settings.ts";
+export {
+  type CellShape,
+  MEASURED_METRIC_TOLERANCE,
+  settleByCell,
+  WRITTEN_METRIC_TOLERANCE,
+} from "./settle-by-cell.ts";
 export { type AssignmentGroup, assignWyckoff, type SiteAssignment } from "./site-assignment.ts";
 export { rotationIndex, rotationParts, type SpaceGroup, spaceGroup } from "./space-group.ts";
 export { type SpaceGroupType, spaceGroupType, spaceGroupTypes } from "./space-group-type.ts";
