@@ -115,7 +115,9 @@ export class DocumentBuilder {
     let first = at + 1;
     while (first < length && kinds[first] === Kind.NAME) first++;
     let after = first;
-    while (after < length && kinds[after]! >= Kind.FIRST_VALUE) after = this.#afterValue(after);
+    while (after < length && kinds[after]! >= Kind.FIRST_VALUE) {
+      after = kinds[after]! < Kind.LIST ? after + 1 : this.#afterValue(after);
+    }
     const columnCount = first - at - 1;
     if (columnCount === 0) {
       this.#report("loop-without-names", at, "the loop has no data names", "Write its data names behind loop_");
