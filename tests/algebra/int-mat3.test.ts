@@ -22,7 +22,7 @@ import {
 import { bigDeterminant, bigMatrix, bigProduct, rowsOf } from "../oracle/big-matrix.ts";
 import { unimodular } from "./arbitraries.ts";
 
-const entry = fc.integer({ min: -1000, max: 1000 });
+const entry = fc.oneof(fc.constantFrom(-1, 0, 1), fc.integer({ min: -1000, max: 1000 }));
 const matrix = fc.array(entry, { minLength: 9, maxLength: 9 }).map((m) => m as unknown as IntMat3);
 const vector = fc.tuple(entry, entry, entry);
 const numbers = (m: readonly (readonly bigint[])[]) => m.flat().map(Number);
@@ -68,7 +68,9 @@ describe("3 x 3 integer matrices", () => {
 
   it("never hold -0, which prints as a sign", () => {
     const flip: IntMat3 = [0, 0, -1, 0, -1, 0, -1, 0, 0];
+    const minus: IntMat3 = [-1, -1, -1, -1, -1, -1, -1, -1, -1];
     const plain = [
+      multiply(scale(minus, 0), minus),
       multiply(MINUS_IDENTITY, flip),
       negate(IDENTITY),
       scale(flip, 0),

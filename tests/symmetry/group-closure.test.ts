@@ -69,6 +69,11 @@ describe("closeGroup", () => {
     );
   });
 
+  it.each(["x+1/4,y,z", "x,y+1/4,z", "x,y,z+1/4"])("tells translations along each axis apart: %s", (text) => {
+    const multiples = ["1/4", "1/2", "3/4"].map((f) => text.replace("1/4", f));
+    expect(new Set(closeGroup([parseOperation(text)]).map(formatOperation))).toEqual(new Set(["x,y,z", ...multiples]));
+  });
+
   it("takes unusual fractions exactly", () => {
     const seventh = { ...IDENTITY_OPERATION, w: ratVec3([1, 0, 3], 7) };
     expect(closeGroup([seventh, parseOperation("-x,-y,-z+1/11")]).length).toBe(14);
@@ -98,6 +103,9 @@ describe("closeGroup", () => {
     const inversion = [parseOperation("-x,-y,-z")];
     expect(closeGroup(inversion, 2).length).toBe(2);
     expect(() => closeGroup(inversion, 1)).toThrow("more than 1 others");
+    const quarters = [parseOperation("x+1/4,y,z")];
+    expect(closeGroup(quarters, 4).length).toBe(4);
+    expect(() => closeGroup(quarters, 3)).toThrow("more than 3 others");
   });
 });
 
