@@ -1,4 +1,4 @@
-import { IDENTITY, modOne, ratVec3, transformVector } from "../algebra/index.ts";
+import { IDENTITY, modOne, ratDeterminant, ratVec3, transformVector } from "../algebra/index.ts";
 import { closeGroup } from "./group-closure.ts";
 import { hallSymbolBy } from "./hall-symbol-of.ts";
 import type { Operation } from "./operation.ts";
@@ -17,6 +17,9 @@ function carryGroup(reference: readonly Operation[], setting: Pick<Setting, "toR
   const moved = reference.map((a) => transformOperation(a, change, toReference));
   const kept = moved.filter((a) => a !== null);
   if (kept.length < moved.length) throw new RangeError("the cell of the setting is not kept by its operations");
+  const det = ratDeterminant(toReference.P);
+  // a cell of the same size with integer axes has the same translations, so the list is already whole
+  if (toReference.P.d === 1 && Math.abs(det.n) === 1) return kept.map((a) => ({ W: a.W, w: modOne(a.w) }));
   const unit = [ratVec3([1, 0, 0]), ratVec3([0, 1, 0]), ratVec3([0, 0, 1])];
   const lattice = unit.map((e) => ({ W: IDENTITY, w: modOne(transformVector(toReference.P, e)) }));
   return closeGroup([...kept, ...lattice]);
