@@ -33,27 +33,34 @@ export interface CrystalElements {
 export function describeElements(rotations: readonly IntMat3[], frame: AxisFrame): CrystalElements {
   const F = frameMatrix(frame);
   const back = adjugate(F);
+  const lines: IntVec3[] = []; // as `rotationAxis` gives them, one sign for each axis
   const axes: Axis[] = [];
   const elements = rotations.map((W) => {
     const proper = determinant(W) === 1;
     const R = proper ? W : negate(W);
-    const order = ORDER_BY_TRACE.get(trace(R));
-    if (order === undefined || (!proper && determinant(R) !== 1)) {
+    const t = trace(R);
+    const order = ORDER_BY_TRACE.get(t);
+    if (order === undefined) {
       throw new RangeError(`not a rotation of a lattice (determinant ${determinant(W)}, trace ${trace(W)})`);
     }
-    const common = { W, proper, order, trace: trace(R) };
-    if (order === 1) return { ...common, axis: -1 };
-    const vector = rotationAxis(R);
-    let axis = axes.findIndex((a) => sameVector(a.vector, vector) || sameVector(opposite(a.vector), vector));
-    if (axis < 0) {
-      const uvw = toFrame(vector, back);
-      const image = apply(F, uvw);
-      const parallel = image[0] * vector[0] + image[1] * vector[1] + image[2] * vector[2] > 0;
-      axis = axes.push({ vector: parallel ? vector : opposite(vector), uvw }) - 1;
+    if (order === 1) return { W, proper, order, trace: t, axis: -1 };
+    const line = rotationAxis(R);
+    let axis = 0;
+    while (axis < lines.length && !sameVector(lines[axis]!, line)) axis++;
+    if (axis === lines.length) {
+      lines.push(line);
+      axes.push(axisAlong(line, F, back));
     }
-    return { ...common, axis };
+    return { W, proper, order, trace: t, axis };
   });
   return { elements, axes };
+}
+
+function axisAlong(line: IntVec3, F: IntMat3, back: IntMat3): Axis {
+  const uvw = toFrame(line, back);
+  const image = apply(F, uvw);
+  const parallel = image[0] * line[0] + image[1] * line[1] + image[2] * line[2] > 0;
+  return { vector: parallel ? line : opposite(line), uvw };
 }
 
 /** Turns of crystallographic elements are counted in twelfths. */

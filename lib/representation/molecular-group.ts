@@ -12,6 +12,7 @@ export interface MolecularAxes {
   readonly x: Vector3;
   readonly y: Vector3;
   readonly z: Vector3;
+  /** In words; empty where they are those of the matrices. */
   readonly text: string;
 }
 
@@ -32,7 +33,8 @@ export function orthogonalGroup(matrices: readonly Matrix3[]): MolecularGroup {
   const analysis = analyseMolecular(matrices);
   const { x, y, z } = analysis.orientation;
   const characters = charactersOf(analysis);
-  const text = [x, y, z].map((v, i) => `${"xyz"[i]} along ${formatAxis(v)}`).join(", ");
+  const own = [x, y, z].map(formatAxis).join() === "x,y,z";
+  const text = own ? "" : [x, y, z].map((v, i) => `${"xyz"[i]} along ${formatAxis(v)}`).join(", ");
   return {
     schoenflies: analysis.schoenflies === "C3i" ? "S6" : analysis.schoenflies,
     elements: matrices,

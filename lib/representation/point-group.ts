@@ -41,6 +41,9 @@ export function pointGroup(rotations: readonly IntMat3[], frame: AxisFrame = BAS
       ? cubicCharacters(analysis.elements, table)
       : axialCharacters(axial, analysis.turns, table);
   const kind = crystalClasses().get(analysis.schoenflies)!;
+  const labels = mullikenLabels(characters, labelMarks(analysis));
+  const tabulated = tabulate(table, nameClasses(analysis), characters, labels);
+  const back = adjugate(frameMatrix(frame));
   return {
     schoenflies: kind.schoenflies,
     hermannMauguin: orientedSymbol(kind, analysis),
@@ -48,7 +51,7 @@ export function pointGroup(rotations: readonly IntMat3[], frame: AxisFrame = BAS
     crystalSystem: kind.crystalSystem,
     elements: rotations,
     frame,
-    axes: referenceAxes(analysis, axial, orientation, frame, adjugate(frameMatrix(frame))),
-    ...tabulate(table, nameClasses(analysis), characters, mullikenLabels(characters, labelMarks(analysis))),
+    axes: referenceAxes(analysis, axial, orientation, frame, back, tabulated.classes),
+    ...tabulated,
   };
 }

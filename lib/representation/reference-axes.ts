@@ -1,5 +1,6 @@
 import { apply, type IntMat3, type IntVec3, inverseUnimodular, negate, subtract } from "../algebra/index.ts";
 import type { AxialElement } from "./axial-element.ts";
+import type { ConjugacyClass } from "./character-table.ts";
 import type { CrystalElement, CrystalElements } from "./crystal-element.ts";
 import { type AxisFrame, formatDirection, opposite, sameVector, toFrame, triple } from "./direction.ts";
 import type { Orientation } from "./orientation.ts";
@@ -23,6 +24,7 @@ export interface ReferenceAxes {
  * frame (b where z is along a) if it is perpendicular to z and lies along or normal to a lateral symmetry direction; else the first secondary
  * direction; without lateral directions, a projected along z.
  * @param back adjugate of the frame matrix
+ * @param classes with their names and directions, for the words
  */
 export function referenceAxes(
   description: CrystalElements,
@@ -30,6 +32,7 @@ export function referenceAxes(
   orientation: Orientation,
   frame: AxisFrame,
   back: IntMat3,
+  classes: readonly ConjugacyClass[],
 ): ReferenceAxes {
   const { axes } = description;
   const uvw = (i: number) => axes[i]!.uvw;
@@ -44,7 +47,7 @@ export function referenceAxes(
   } else if (orientation.z >= 0) {
     [x, y] = planeAxes(description, axial, orientation, frame, back) ?? [null, null];
   }
-  return { x, y, z, secondary, tertiary, text: describe(x, y, z) };
+  return { x, y, z, secondary, tertiary, text: describe(x, y, z, classes) };
 }
 
 /** x and y perpendicular to a principal axis of order 3, 4 or 6; null for an axis of lower order. */
@@ -90,11 +93,14 @@ function project(v: IntVec3, R: IntMat3, n: number): IntVec3 {
   return [n * v[0] - sx, n * v[1] - sy, n * v[2] - sz];
 }
 
-function describe(x: IntVec3 | null, y: IntVec3 | null, z: IntVec3 | null): string {
-  const named: [string, IntVec3 | null][] = [
-    ["x", x],
-    ["y", y],
-    ["z", z],
-  ];
-  return named.flatMap(([name, v]) => (v ? [`${name} along ${formatDirection(v)}`] : [])).join(", ");
+/** `x along [100], z along [001]; C2' along [100] [010]; sigma_d normal to [110] [1-10]`. */
+function describe(x: IntVec3 | null, y: IntVec3 | null, z: IntVec3 | null, classes: readonly ConjugacyClass[]): string {
+  const named = { x, y, z };
+  const main = Object.entries(named).flatMap(([name, v]) => (v ? [`${name} along ${formatDirection(v)}`] : []));
+  const lateral = classes.flatMap(({ name, directions }) => {
+    const [plain] = /C2'+|sigma_[vd]/.exec(name) ?? [];
+    if (!plain) return [];
+    return [`${plain} ${plain.startsWith("C") ? "along" : "normal to"} ${directions.join(" ")}`];
+  });
+  return [main.join(", "), ...lateral].filter(Boolean).join("; ");
 }
