@@ -13,6 +13,7 @@ const COMMANDS: Readonly<Record<string, () => Promise<Command>>> = {
   sites: () => import("./commands/sites.ts"),
   positions: () => import("./commands/positions.ts"),
   modes: () => import("./commands/modes.ts"),
+  polarise: () => import("./commands/polarise.ts"),
 };
 
 async function main(words: readonly string[]): Promise<number> {

@@ -2,6 +2,7 @@
 export { formatNumber } from "./format-number.ts";
 export { groupName, type HeadingData, headingText } from "./heading.ts";
 export { modesText } from "./modes-text.ts";
+export { polariseText } from "./polarise-text.ts";
 export { positionsText } from "./positions-text.ts";
 export { problemText } from "./problem-text.ts";
 export { sitesText } from "./sites-text.ts";

@@ -3,6 +3,7 @@
 export type { Matrix3, Vector3 } from "./cartesian.ts";
 export { cartesianMatrices } from "./cartesian-matrices.ts";
 export { type CharacterTable, type ConjugacyClass, characterOf, type Irrep, irrepIndex } from "./character-table.ts";
+export { formatSum } from "./closed-form.ts";
 export { type Correlation, correlations, subgroupOf } from "./correlation.ts";
 export { crystalMatrices, orientedSymbols } from "./crystal-matrices.ts";
 export {
@@ -24,6 +25,7 @@ export {
   parseLinearSpecies,
   subduceLinear,
 } from "./linear-group.ts";
+export { type LinearRow, linearGroupTable, linearProduct } from "./linear-table.ts";
 export { type MolecularAxes, type MolecularGroup, molecularGroup, orthogonalGroup } from "./molecular-group.ts";
 export { type PointGroup, pointGroup } from "./point-group.ts";
 export { type PointGroupTable, pointGroupTable } from "./point-group-table.ts";

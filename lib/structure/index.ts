@@ -1,5 +1,23 @@
 /** Atoms at rest: cell and metric, the crystal built from a CIF block, site symmetry and orbits. */
 export { type AtomSite, readAtomSites, readNumber } from "./atom-site.ts";
+export type {
+  BondChoice,
+  BondedPair,
+  LeftOutPair,
+  NearLimit,
+} from "./bond-choice.ts";
+export {
+  type BondPattern,
+  formatBondPattern,
+  formatBondPatterns,
+  formatUnitMembers,
+  parseBondPatterns,
+  parseUnitMembers,
+} from "./bond-choice-text.ts";
+export { type Component, componentsOf, type PeriodicEdge } from "./bond-graph.ts";
+export type { BondOptions } from "./bond-overrides.ts";
+export { HALIDE_TOLERANCE, SHELL_GAP } from "./bond-rules.ts";
+export { type Bond, type BondList, bondsOf } from "./bonds.ts";
 export {
   apply3,
   type Cell,
@@ -14,8 +32,11 @@ export {
   multiply3,
   type Vec3,
 } from "./cell.ts";
+export { AtomAction, type CellAtom, cellAtoms, type LatticeAtom } from "./cell-atoms.ts";
 export type { SymmetryDisagreement } from "./compare-statements.ts";
 export { cellContents, contentsMisfit } from "./composition.ts";
+export { BOND_TOLERANCE, type BondRule, NEAR_LIMIT, radiusSum } from "./contact-table.ts";
+export { covalentRadius, RADII_SOURCE } from "./covalent-radius.ts";
 export {
   type Crystal,
   type CrystalOptions,
@@ -27,6 +48,7 @@ export {
   placeSites,
   readCell,
 } from "./crystal.ts";
+export { type CrystalFrame, crystalFrame, directionVector, planeNormal } from "./crystal-frame.ts";
 export {
   type Arbiter,
   type ResolvedSymmetry,
@@ -41,11 +63,18 @@ export {
   declaredSymmetry,
   listedGroup,
 } from "./declared-symmetry.ts";
+export { type ComponentChoice, chooseComponents } from "./disorder.ts";
 export type { DisplacementTensor } from "./displacement.ts";
 export { type Element, element, readLabel, readTypeSymbol, type SpeciesReading } from "./elements.ts";
 export { type Formula, formatFormula, hillOrder, parseFormula } from "./formula-text.ts";
+export { CENTRED_HYDROGEN } from "./hydrogen-rule.ts";
+export { invariantMetric } from "./invariant-metric.ts";
+export type { MolecularUnit, UnitAtom, UnitSite } from "./molecular-unit.ts";
+export { type ExtendedUnit, type LoneAtom, molecularUnits, type UnitAnalysis } from "./molecular-units.ts";
+export { type Contact, contactsWithin, type SearchResult } from "./neighbour-search.ts";
 export { type Image, multiplicityOf, orbitOf, wrap } from "./orbit.ts";
 export { nearestDistance, PeriodicPoints } from "./periodic-points.ts";
 export { type Position, type PositionsAnswer, positionsAnswer } from "./positions-answer.ts";
 export { type SiteSymmetry, siteSymmetry } from "./site-symmetry.ts";
 export { type SiteAnswer, type SitesAnswer, sitesAnswer } from "./sites-answer.ts";
+export { type AtomGroup, hillFormula, sequenceFormula, unitFormula } from "./unit-formula.ts";

@@ -1,6 +1,7 @@
 /** Modes of a crystal at k = 0: sites to factor group, activities, counts. */
 export { type Activity, activities } from "./activity.ts";
 export { countedCharacters } from "./counted-characters.ts";
+export { type CrystalTensors, crystalTensors, hyperRamanTensors } from "./crystal-tensors.ts";
 export {
   type FactorGroupModes,
   factorGroupModes,
@@ -8,5 +9,27 @@ export {
   type ModeTotals,
   type SiteModes,
 } from "./factor-group.ts";
+export {
+  formatDirection,
+  formatGeometry,
+  parseDirection,
+  parseGeometry,
+  type WrittenDirection,
+  type WrittenGeometry,
+} from "./geometry-text.ts";
 export { type IrrepAnswer, type ModesAnswer, modesAnswer, type SiteModesAnswer } from "./modes-answer.ts";
+export {
+  type AllowedSpecies,
+  type DipoleAnswer,
+  type GeometryAnswer,
+  type HyperRamanAnswer,
+  type PolariseAnswer,
+  type PolariseOptions,
+  polariseAnswer,
+  type RamanTensorAnswer,
+} from "./polarise-answer.ts";
+export { intensityOf, type PolarPart, type SpeciesScattering, scatteringOf } from "./raman-scattering.ts";
+export { type RotationCurve, type RotationTable, rotationTable } from "./rotation-curve.ts";
+export { type ScatteringGeometry, scatteringGeometry } from "./scattering-geometry.ts";
+export { BACKSCATTERING, type GeometryResult, geometryResult, separatingGeometries } from "./standard-geometries.ts";
 export { type VibratingSite, vibratingSites } from "./vibrating-sites.ts";

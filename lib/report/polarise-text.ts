@@ -1,0 +1,92 @@
+import type { DipoleAnswer, GeometryAnswer, PolariseAnswer, RamanTensorAnswer } from "../vibrations/index.ts";
+import { formatNumber } from "./format-number.ts";
+import { typographicLabel } from "./species.ts";
+import { type Column, textTable, wrapText } from "./table.ts";
+
+const WIDTH = 110;
+
+/** The whole answer of `polarise` for a person, below the heading. */
+export function polariseText(answer: PolariseAnswer): string {
+  const parts = [
+    subject(answer),
+    `Raman tensors (a dot is 0; letters are measured numbers):\n\n${answer.tensors.map(tensorText).join("\n\n")}`,
+    `Infrared dipoles:\n${answer.dipoles.map(dipoleText).join("\n") || "  none"}`,
+  ];
+  if (answer.geometries.length > 0) parts.push(`Geometries asked for:\n${geometryTable(answer.geometries)}`);
+  parts.push(`Backscattering from the faces normal to z, x and y:\n${geometryTable(answer.faces)}`);
+  parts.push(separatingText(answer));
+  if (answer.rotation) parts.push(rotationText(answer.rotation));
+  parts.push(CAUTION);
+  return parts.join("\n\n");
+}
+
+const CAUTION = wrapText(
+  "These are rules for the ideal crystal inside the sample: a birefringent crystal turns polarisations that do not lie along its optical directions, and wide-aperture objectives mix geometries. Lasers blind and heat: keep to the laser rules of your laboratory, and start dark or toxic pigments at the lowest power.",
+  WIDTH,
+);
+
+function subject({ frame, labelAxes, factorGroup, piezoelectric }: PolariseAnswer): string {
+  const lines = [
+    `frame: ${frame}`,
+    `factor group ${factorGroup.hermannMauguin} (${factorGroup.schoenflies})${labelAxes ? `; labels: ${labelAxes}` : ""}`,
+  ];
+  if (piezoelectric) lines.push("piezoelectric class: polar species that are Raman active split into LO and TO");
+  return lines.map((line) => wrapText(line, WIDTH, "    ")).join("\n");
+}
+
+/** Partners side by side, three rows each. */
+function tensorText({ irrep, modes, tensor }: RamanTensorAnswer): string {
+  const head = `${typographicLabel(irrep)} (${modes} optic)`;
+  const blocks = tensor.map((rows) => {
+    const width = Math.max(...rows.flat().map((e) => e.length));
+    return rows.map((row) => `[ ${row.map((e) => e.padStart(width)).join("  ")} ]`);
+  });
+  const lines = [0, 1, 2].map((i) => blocks.map((b) => b[i]!).join("   "));
+  return lines.map((line, i) => `${(i === 1 ? head : "").padEnd(16)}${line}`).join("\n");
+}
+
+function dipoleText({ irrep, modes, directions, raman }: DipoleAnswer): string {
+  const along = directions.map((d) => `(${d.map((e) => (e === "." ? "0" : e)).join(", ")})`).join(" and ");
+  return `  ${typographicLabel(irrep)} (${modes} optic): ${along}${raman ? ", LO and TO differ in Raman too" : ""}`;
+}
+
+function geometryTable(geometries: readonly GeometryAnswer[]): string {
+  const columns: Column[] = [
+    { heading: "  geometry" },
+    { heading: "species seen, with tensor element and amplitude of each partner" },
+  ];
+  return textTable(
+    columns,
+    geometries.map((g) => [`  ${g.geometry}`, g.allowed.map(allowedText).join("; ") || "nothing"]),
+  );
+}
+
+function allowedText(a: GeometryAnswer["allowed"][number]): string {
+  const part = a.part === null ? "" : ` ${a.part === "undetermined" ? "LO or TO" : a.part}`;
+  return `${typographicLabel(a.irrep)}${part} ${a.element}: ${a.tensor.join(" | ")}`;
+}
+
+function separatingText({ separating, tensors }: PolariseAnswer): string {
+  if (separating === null) return "No five of the axial geometries tell all Raman species apart.";
+  if (!tensors.some((t) => t.modes > 0)) return "No mode of this crystal is Raman active in first order.";
+  const list = separating.map((g) => g.geometry).join(", ");
+  return `Shortest set that tells all Raman species with modes apart: ${list}\n${geometryTable(separating)}`;
+}
+
+function rotationText(rotation: NonNullable<PolariseAnswer["rotation"]>): string {
+  const { angles, curves } = rotation;
+  const shown = curves.filter((c) => [...c.parallel, ...c.crossed].some((e) => e > 1e-9));
+  const columns: Column[] = [
+    { heading: "  angle", align: "right" },
+    ...shown.flatMap((c): Column[] => [
+      { heading: `${typographicLabel(c.label)} parallel`, align: "right" },
+      { heading: "crossed", align: "right" },
+    ]),
+  ];
+  const rows = angles.map((angle, i) => [
+    String(angle),
+    ...shown.flatMap((c) => [formatNumber(c.parallel[i]!, 4), formatNumber(c.crossed[i]!, 4)]),
+  ]);
+  const head = `Intensity while the crystal turns about ${rotation.about}, polarisation at 0 degrees along ${rotation.zero}, with ${rotation.letters}:`;
+  return `${wrapText(head, WIDTH)}\n${textTable(columns, rows)}`;
+}
