@@ -139,12 +139,16 @@ function simplest(
       const rest = modOne(subtractVectors(w, along));
       const letters = sums.get(`${rest.n.join()}/${rest.d}`);
       if (letters === undefined) continue;
-      const cost = (b: { screw: number; translations: string }) => b.translations.length + (b.screw ? 1 : 0);
       const option = { screw, translations: letters };
-      if (!best || cost(option) < cost(best)) best = option;
+      if (!best || rank(option) < rank(best)) best = option;
     }
   }
   return best;
+}
+
+/** Shorter texts first, then by letter, so that the order of the operations does not matter. */
+function rank(option: { readonly screw: number; readonly translations: string }): string {
+  return `${option.translations.length + (option.screw ? 1 : 0)}${option.screw}${option.translations}`;
 }
 
 let sums: ReadonlyMap<string, string> | null = null;

@@ -1,8 +1,11 @@
 import { describe, expect, it } from "vitest";
+import { ratDeterminant } from "../../lib/algebra/index.ts";
 import { operationsFromHall } from "../../lib/symmetry/hall-symbol.ts";
 import { operationKey } from "../../lib/symmetry/operation.ts";
 import { settingOperations } from "../../lib/symmetry/setting-group.ts";
 import { settingsOf } from "../../lib/symmetry/settings.ts";
+import { reverse } from "../../lib/symmetry/transformation.ts";
+import { formatBasis } from "../../lib/symmetry/transformation-text.ts";
 
 /**
  * Short symbols by type in the order of the table. Source: International Tables for Crystallography A (2016), table
@@ -36,17 +39,45 @@ const OLDER: Readonly<Record<number, string>> = {
   41: "Aba2 Bba2 B2cb C2cb Cc2a Ac2a",
   64: "Cmca Ccmb Abma Acam Bbcm Bmab",
 };
-const MONOCLINIC = ["b1", "b2", "b3", "-b1", "-b2", "-b3", "c1", "c2", "c3", "-c1", "-c2", "-c3", "a1", "a2", "a3"];
+const MONOCLINIC = ["b", "-b", "c", "-c", "a", "-a"].flatMap((axis) => [1, 2, 3].map((cell) => `${axis}${cell}`));
 const FULL: Readonly<Record<number, string>> = {
-  5: "C121 A121 I121 A121 C121 I121 A112 B112 I112 B112 A112 I112 B211 C211 I211",
-  7: "P1c1 P1n1 P1a1 P1a1 P1n1 P1c1 P11a P11n P11b P11b P11n P11a Pb11 Pn11 Pc11",
-  9: "C1c1 A1n1 I1a1 A1a1 C1n1 I1c1 A11a B11n I11b B11b A11n I11a Bb11 Cn11 Ic11",
-  13: "P12/c1 P12/n1 P12/a1 P12/a1 P12/n1 P12/c1 P112/a P112/n P112/b P112/b P112/n P112/a P2/b11 P2/n11 P2/c11",
+  5: "C121 A121 I121 A121 C121 I121 A112 B112 I112 " + "B112 A112 I112 B211 C211 I211 C211 B211 I211",
+  7: "P1c1 P1n1 P1a1 P1a1 P1n1 P1c1 P11a P11n P11b " + "P11b P11n P11a Pb11 Pn11 Pc11 Pc11 Pn11 Pb11",
+  9: "C1c1 A1n1 I1a1 A1a1 C1n1 I1c1 A11a B11n I11b " + "B11b A11n I11a Bb11 Cn11 Ic11 Cc11 Bn11 Ib11",
+  13:
+    "P12/c1 P12/n1 P12/a1 P12/a1 P12/n1 P12/c1 P112/a P112/n P112/b " +
+    "P112/b P112/n P112/a P2/b11 P2/n11 P2/c11 P2/c11 P2/n11 P2/b11",
   14:
-    "P121/c1 P121/n1 P121/a1 P121/a1 P121/n1 P121/c1 " +
-    "P1121/a P1121/n P1121/b P1121/b P1121/n P1121/a P21/b11 P21/n11 P21/c11",
-  15: "C12/c1 A12/n1 I12/a1 A12/a1 C12/n1 I12/c1 A112/a B112/n I112/b B112/b A112/n I112/a B2/b11 C2/n11 I2/c11",
+    "P121/c1 P121/n1 P121/a1 P121/a1 P121/n1 P121/c1 P1121/a P1121/n P1121/b " +
+    "P1121/b P1121/n P1121/a P21/b11 P21/n11 P21/c11 P21/c11 P21/n11 P21/b11",
+  15:
+    "C12/c1 A12/n1 I12/a1 A12/a1 C12/n1 I12/c1 A112/a B112/n I112/b " +
+    "B112/b A112/n I112/a B2/b11 C2/n11 I2/c11 C2/c11 B2/n11 I2/b11",
 };
+/**
+ * New axes in terms of those of the reference setting. Source: International Tables for Crystallography A (2016),
+ * tables 1.5.1.1 and 1.5.4.4 (headings), from memory.
+ */
+const AXES: readonly (readonly [number, string, string])[] = [
+  [14, "b1", "a,b,c"],
+  [14, "b2", "-a-c,b,a"],
+  [14, "b3", "c,b,-a-c"],
+  [14, "-b1", "c,-b,a"],
+  [14, "c1", "c,a,b"],
+  [14, "-c1", "a,c,-b"],
+  [14, "a1", "b,c,a"],
+  [14, "-a1", "-b,a,c"],
+  [62, "ba-c", "b,a,-c"],
+  [62, "cab", "c,a,b"],
+  [62, "-cba", "-c,b,a"],
+  [62, "bca", "b,c,a"],
+  [62, "a-cb", "a,-c,b"],
+  [75, "C", "a-b,a+b,c"],
+  [79, "F", "a-b,a+b,c"],
+  [143, "H", "a-b,a+2b,c"],
+  [146, ":R", "2/3a+1/3b+1/3c,-1/3a+1/3b+1/3c,-1/3a-2/3b+1/3c"],
+  [146, ":H-reverse", "-a,-b,c"],
+];
 /** Multiple cells of tetragonal and trigonal types; same table, from memory. */
 const CELLS: Readonly<Record<number, string>> = {
   85: "C4/a",
@@ -90,6 +121,19 @@ describe("symbols of International Tables in other settings", () => {
   it.each(Object.entries(CELLS))("type %s on its larger cell is %s", (number, symbol) => {
     const found = settingsOf(Number(number)).filter((s) => /^[CFH]/.test(s.name));
     expect(tight(found[0]!.hermannMauguin.short)).toBe(symbol);
+  });
+});
+
+describe("axes of the settings", () => {
+  it.each(AXES)("type %i in the setting %s has the axes %s", (number, name, axes) => {
+    const setting = settingsOf(number).find((s) => s.name === name)!;
+    expect(formatBasis(reverse(setting.toReference).P)).toBe(axes);
+  });
+
+  it("keep their handedness, so that screw axes keep theirs", () => {
+    for (let number = 1; number <= 230; number++) {
+      for (const s of settingsOf(number)) expect(ratDeterminant(s.toReference.P).n).toBeGreaterThan(0);
+    }
   });
 });
 

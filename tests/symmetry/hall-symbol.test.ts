@@ -150,6 +150,19 @@ describe("hallSymbolOf", () => {
     }
   });
 
+  it.each([
+    ["-P 2yn", "-P 2yn"],
+    ["P 31 2 (0 0 2)", "P 31 2 (0 0 2)"],
+    ["H 31 2 (0 0 2)", "H 31 2 (0 0 2)"],
+    ["I 4bw 2bw -1bw", "I 4bw 2bw -1bw"],
+    ["P 2yb (x+1/8,y,z)", "P 2ybu"],
+    ["P 3* 2", "P 3* 2"],
+    ['T 3 -2"c', 'T 3 -2"c'],
+    ["-A 2ac 2n", "-A 2ab 2a"], // modulo 0,1/2,1/2 c is b and n is a,
+  ])("writes the group of %s as %s", (symbol, written) => {
+    expect(hallSymbolOf(operationsFromHall(symbol).operations)).toBe(written);
+  });
+
   it("gives a symbol of exactly the operations given, in any skew cell and with any origin", () => {
     fc.assert(
       fc.property(type, eighth, eighth, eighth, shear, ({ hall }, i, j, k, [s, t, turn]) => {
