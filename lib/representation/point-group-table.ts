@@ -1,3 +1,4 @@
+import { InputProblem } from "../problem.ts";
 import type { Matrix3 } from "./cartesian.ts";
 import { cartesianMatrices } from "./cartesian-matrices.ts";
 import { crystalMatrices } from "./crystal-matrices.ts";
@@ -28,7 +29,6 @@ const SPELLINGS: Readonly<Record<string, string>> = {
   m3: "m-3",
   m3m: "m-3m",
   "43m": "-43m",
-  "-62m": "-62m",
   "121": "2",
   "1m1": "m",
   "12/m1": "2/m",
@@ -46,18 +46,29 @@ const SPELLINGS: Readonly<Record<string, string>> = {
  * Table of a point group by its name.
  * @param name an International symbol, also oriented (`-4m2`, `31m`, `m2m`, `112/m`), in conventional crystal axes; or a
  * Schoenflies symbol, of any order up to 240 (`D2d`, `Ih`, `D5h`), in the standard orientation of molecules
- * @throws RangeError if the name is neither
+ * @throws InputProblem `unknown-point-group` if the name is neither; Cinfv and Dinfh have `linearGroupTable`
  */
 export function pointGroupTable(name: string): PointGroupTable {
   const plain = name.replace(/\s+/g, "");
   if (/^[A-Z]/.test(plain)) {
-    const group = molecularGroup(plain);
+    const group = named(name, () => molecularGroup(plain));
     return tableOf(group, group.elements, "x, y, z of the standard orientation: z along the principal axis");
   }
   const symbol = Object.hasOwn(SPELLINGS, plain) ? SPELLINGS[plain]! : plain;
-  const group = pointGroup(crystalMatrices(symbol));
+  const group = named(name, () => pointGroup(crystalMatrices(symbol)));
   const frame = "x along a, y in the plane of a and b, z along c*, in conventional axes";
   return tableOf(group, cartesianMatrices(group.elements), frame);
+}
+
+/** The group, or the refusal of its name as a fault of the input. */
+function named<G>(name: string, make: () => G): G {
+  try {
+    return make();
+  } catch (error) {
+    if (!(error instanceof RangeError)) throw error;
+    const hint = "Write a Schoenflies symbol such as D3d, or an International symbol such as -3m or -4m2.";
+    throw new InputProblem("unknown-point-group", `There is no table of "${name}": ${error.message}.`, null, hint);
+  }
 }
 
 function tableOf(group: PointGroup | MolecularGroup, matrices: readonly Matrix3[], frame: string): PointGroupTable {

@@ -28,7 +28,7 @@ export function symmetricCubeCharacter(W: IntMat3): number {
   return symmetricCubeOf(trace(W), determinant(W));
 }
 
-/** Tensor of third rank symmetric in its last two indices (hyperpolarizability off resonance aside), 18 components. */
+/** Tensor of third rank symmetric in its last two indices (hyperpolarizability near a resonance), 18 components. */
 export function hyperRamanGeneralCharacter(W: IntMat3): number {
   return trace(W) * symmetricSquareCharacter(W) + 0;
 }

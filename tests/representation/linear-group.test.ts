@@ -1,7 +1,10 @@
 import { describe, expect, it } from "vitest";
 import {
   crystalMatrices,
+  type LinearSpecies,
   linearCharacter,
+  linearGroupTable,
+  linearProduct,
   linearSpecies,
   linearTable,
   molecularGroup,
@@ -35,6 +38,57 @@ describe("species of linear molecules", () => {
   it("in Cinfv there is no parity and nothing reverses the axis", () => {
     expect(() => linearSpecies("Cinfv", 1, 1)).toThrow(RangeError);
     expect(() => linearCharacter(linearSpecies("Cinfv", 1), [-1, 0, 0, 0, -1, 0, 0, 0, -1], true)).toThrow(RangeError);
+  });
+});
+
+describe("tables and products", () => {
+  it("hold the functions of Cinfv and Dinfh as published (Cotton, 1990, appendix IIA; from memory)", () => {
+    const print = (name: "Cinfv" | "Dinfh") =>
+      linearGroupTable(name, 2).map(({ label, functions: f }) => {
+        return [label, ...f.vectors, ...f.rotations, ...f.quadratics].join(" ");
+      });
+    expect(print("Cinfv")).toEqual([
+      "Sigma+ z x2+y2 z2",
+      "Sigma- Rz",
+      "Pi (x, y) (Ry, -Rx) (xz, yz)",
+      "Delta (x2-y2, 2xy)",
+    ]);
+    expect(print("Dinfh")).toEqual([
+      "Sigmag+ x2+y2 z2",
+      "Sigmag- Rz",
+      "Pig (Ry, -Rx) (xz, yz)",
+      "Deltag (x2-y2, 2xy)",
+      "Sigmau+ z",
+      "Sigmau-",
+      "Piu (x, y)",
+      "Deltau",
+    ]);
+  });
+
+  it.each([
+    ["Piu", "Piu", "Sigmag+ Sigmag- Deltag"],
+    ["Pig", "Deltau", "Piu Phiu"],
+    ["Sigmau-", "Sigmag-", "Sigmau+"],
+    ["Sigmag-", "Piu", "Piu"],
+  ])("%s times %s is %s", (a, b, expected) => {
+    const product = linearProduct(parseLinearSpecies("Dinfh", a), parseLinearSpecies("Dinfh", b));
+    expect(product.map((s) => s.label).join(" ")).toBe(expected);
+  });
+
+  it("products have in D60h the characters of their factors multiplied", () => {
+    const group = molecularGroup("D60h");
+    const list = linearTable("Dinfh", 6);
+    const flips = group.elements.map((M) => M[8] < 0);
+    const values = (s: LinearSpecies) => group.elements.map((M, g) => linearCharacter(s, M, flips[g]!));
+    for (const a of list.slice(0, 6)) {
+      for (const b of list.slice(4)) {
+        const parts = linearProduct(a, b).map(values);
+        values(a).forEach((x, g) => {
+          const sum = parts.reduce((t, part) => t + part[g]!, 0);
+          expect(Math.abs(sum - x * values(b)[g]!)).toBeLessThan(1e-9);
+        });
+      }
+    }
   });
 });
 
