@@ -1,4 +1,5 @@
 import {
+  addVectors,
   apply,
   determinant,
   gcd,
@@ -14,10 +15,12 @@ import {
   rational,
   ratMat3,
   ratVec3,
+  transformVector,
   vectorOf,
 } from "../algebra/index.ts";
 import { type AffineExpression, formatExpression, parseTriplet } from "./affine-text.ts";
 import type { Operation } from "./operation.ts";
+import type { Transformation } from "./transformation.ts";
 
 /**
  * The points of a position as they are written, `x,x+1/2,0`: the triplet M (x, y, z) + t, where a letter that is not
@@ -54,6 +57,16 @@ export function imageOfForm(a: Operation, { M, t }: AffineForm): AffineForm {
   const moved = apply(a.W, t.n);
   const at = (i: number) => mod(moved[i]! * (d / t.d) + a.w.n[i]! * (d / a.w.d), d);
   return { M: ratMat3(multiply(a.W, M.n), M.d), t: ratVec3([at(0), at(1), at(2)], d) };
+}
+
+/**
+ * The points in another setting, written anew with letters of their own.
+ * @param t the setting that the form is in, seen from the one wanted: x(wanted) = P x(form) + p
+ */
+export function formFromSetting(form: AffineForm, { P, p }: Transformation): AffineForm {
+  const linear = multiply(P.n, form.M.n);
+  const directions = [0, 1, 2].map((j): IntVec3 => [linear[j]!, linear[3 + j]!, linear[6 + j]!]);
+  return formThrough(addVectors(transformVector(P, form.t), p), directions);
 }
 
 /** Whether an operation, after some lattice translation of the cell, fixes every point. */
