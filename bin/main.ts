@@ -10,6 +10,7 @@ interface Command {
 }
 
 const COMMANDS: Readonly<Record<string, () => Promise<Command>>> = {
+  group: () => import("./commands/group.ts"),
   sites: () => import("./commands/sites.ts"),
   positions: () => import("./commands/positions.ts"),
   modes: () => import("./commands/modes.ts"),

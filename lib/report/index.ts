@@ -1,5 +1,6 @@
 /** Results as text. Takes finished result objects; computes nothing. */
 export { formatNumber } from "./format-number.ts";
+export { groupText } from "./group-text.ts";
 export { groupName, type HeadingData, headingText } from "./heading.ts";
 export { modesText } from "./modes-text.ts";
 export { polariseText } from "./polarise-text.ts";

@@ -9,6 +9,13 @@ export { extendedSymbol } from "./extended-symbol.ts";
 export { DECIMAL_TOLERANCE, fractionFromDecimal } from "./fraction-text.ts";
 export type { CrystalFamily, GeometricClass } from "./geometric-class.ts";
 export { type GeometricMeaning, geometricMeaning } from "./geometric-meaning.ts";
+export {
+  type ConditionAnswer,
+  type GroupAnswer,
+  groupAnswer,
+  type OperationAnswer,
+  type WyckoffAnswer,
+} from "./group-answer.ts";
 export { closeGroup, LARGEST_GROUP, type MissingProduct, missingProduct } from "./group-closure.ts";
 export { type BravaisType, type GroupProperties, groupProperties } from "./group-properties.ts";
 export { type HallGroup, operationsFromHall } from "./hall-symbol.ts";

@@ -1,0 +1,120 @@
+import { addVectors, IDENTITY, ratMat3, subtractVectors, transformVector } from "../algebra/index.ts";
+import { pointGroup } from "../representation/index.ts";
+import {
+  type AffineForm,
+  formatForm,
+  formFromSetting,
+  imageOfForm,
+  isFixedBy,
+} from "./affine-form.ts";
+import { extendedSymbol } from "./extended-symbol.ts";
+import { geometricMeaning } from "./geometric-meaning.ts";
+import { type GroupProperties, groupProperties } from "./group-properties.ts";
+import type { Operation } from "./operation.ts";
+import { formatOperation } from "./operation-text.ts";
+import { reflectionConditions } from "./reflection-conditions.ts";
+import { assignWyckoff } from "./site-assignment.ts";
+import type { SpaceGroup } from "./space-group.ts";
+import { specialConditions } from "./special-reflection-conditions.ts";
+import type { IdentifiedGroup, SpaceGroupSummary } from "./summary.ts";
+import { wyckoffPositions } from "./wyckoff-positions.ts";
+
+export interface OperationAnswer {
+  readonly xyz: string;
+  /** As International Tables print it: `2(0,0,1/2) 0,1/4,z`. */
+  readonly meaning: string;
+}
+
+export interface ConditionAnswer {
+  readonly reflections: string;
+  readonly condition: string;
+  readonly cause: string;
+  /** Follows from the conditions on wider classes of reflections. */
+  readonly implied: boolean;
+}
+
+export interface WyckoffAnswer {
+  readonly letter: string;
+  /** Points in the cell in use. */
+  readonly multiplicity: number;
+  readonly siteSymmetry: string;
+  readonly schoenflies: string;
+  /** Modulo the centring translations. */
+  readonly coordinates: readonly string[];
+  /** Extra conditions on the contribution of this position, `hkl: h+k=2n`. */
+  readonly conditions: readonly string[];
+}
+
+/** A space group in one setting: what `group` prints. */
+export interface GroupAnswer {
+  readonly spaceGroup: Omit<SpaceGroupSummary, "operations"> &
+    Omit<GroupProperties, "number" | "geometricClass"> & {
+      readonly symbols: { readonly short: string; readonly full: string; readonly extended: string } | null;
+      readonly operations: readonly string[];
+      readonly conditions: readonly ConditionAnswer[];
+      readonly wyckoff: readonly WyckoffAnswer[];
+    };
+  /** The representatives modulo the centring translations, in their order. */
+  readonly meanings: readonly OperationAnswer[];
+}
+
+/** Operations with their meaning, reflection conditions and Wyckoff positions of a group in the setting in use. */
+export function groupAnswer(identified: IdentifiedGroup): GroupAnswer {
+  const { group, number, setting, summary } = identified;
+  const { number: _number, geometricClass: _class, ...properties } = groupProperties(number, group.operations);
+  const symbols = setting && {
+    short: setting.hermannMauguin.short,
+    full: setting.hermannMauguin.full,
+    extended: extendedSymbol(setting),
+  };
+  const conditions = reflectionConditions(group).map(({ reflections, condition, cause, implied }) => ({
+    reflections,
+    condition,
+    cause,
+    implied,
+  }));
+  return {
+    spaceGroup: { ...summary, ...properties, symbols, conditions, wyckoff: wyckoffAnswers(identified) },
+    meanings: group.representatives.map((a) => ({ xyz: formatOperation(a), meaning: geometricMeaning(a).text })),
+  };
+}
+
+function wyckoffAnswers(identified: IdentifiedGroup): WyckoffAnswer[] {
+  const { group, number, toReference, setting } = identified;
+  const reference = setting?.reference === true;
+  return wyckoffPositions(number).map((position) => {
+    const form = reference ? position.form : formFromSetting(position.form, toReference);
+    const site = fixingOperations(group, form);
+    return {
+      letter: position.letter,
+      multiplicity: group.operations.length / position.order,
+      siteSymmetry: assignWyckoff(identified, site).siteSymmetry,
+      schoenflies: pointGroup(site.map((a) => a.W)).schoenflies,
+      coordinates: reference ? position.coordinates : coordinatesIn(group, form),
+      conditions: specialConditions(group, form).map((c) => `${c.reflections}: ${c.condition}`),
+    };
+  });
+}
+
+/** The operations that fix every point of a form, their translations such that they do so as they stand. */
+function fixingOperations(group: SpaceGroup, form: AffineForm): Operation[] {
+  return group.operations.flatMap((a) => {
+    if (!isFixedBy(a, form)) return [];
+    const image = addVectors(transformVector(ratMat3(a.W), form.t), a.w);
+    return [{ W: a.W, w: addVectors(a.w, subtractVectors(form.t, image)) }];
+  });
+}
+
+/** Images under the representatives in their order, each once modulo the centring translations. */
+function coordinatesIn(group: SpaceGroup, form: AffineForm): string[] {
+  const seen = new Set<string>();
+  const found: string[] = [];
+  for (const a of group.representatives) {
+    const image = imageOfForm(a, form);
+    const text = formatForm(image);
+    if (seen.has(text)) continue;
+    found.push(text);
+    for (const t of group.centrings) seen.add(formatForm(imageOfForm({ W: IDENTITY, w: t }, image)));
+  }
+  return found;
+}
