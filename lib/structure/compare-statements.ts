@@ -9,8 +9,7 @@ import {
   settingOperations,
   spaceGroup,
 } from "../symmetry/index.ts";
-import type { SymmetrySource } from "./declared-group.ts";
-import type { Declared, DeclaredSymmetry } from "./declared-symmetry.ts";
+import type { Declared, DeclaredSymmetry, SymmetrySource } from "./declared-symmetry.ts";
 
 /** A statement of the file that means another group, or the same in another setting, than the one in use. */
 export interface SymmetryDisagreement {

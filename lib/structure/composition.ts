@@ -1,8 +1,11 @@
-import type { CrystalSite } from "./crystal.ts";
+import type { AtomSite } from "./atom-site.ts";
 import type { Formula } from "./formula-text.ts";
 
+/** What counting asks of a site: its species, and its images in the cell. */
+type ExpandedSite = Pick<AtomSite, "element" | "occupancy"> & { readonly images: readonly unknown[] };
+
 /** Atoms of each element in the cell, occupancies counted; D and T count as hydrogen; nameless sites under `?`. */
-export function cellContents(sites: readonly Pick<CrystalSite, "element" | "occupancy" | "images">[]): Formula {
+export function cellContents(sites: readonly ExpandedSite[]): Formula {
   const counts = new Map<string, number>();
   for (const { element, occupancy, images } of sites) {
     const symbol = element === "D" || element === "T" ? "H" : (element ?? "?");

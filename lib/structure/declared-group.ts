@@ -12,10 +12,7 @@ import {
 } from "../symmetry/index.ts";
 import { METRIC_TOLERANCE, type Metric, metricMisfit } from "./cell.ts";
 import { compareStatements, type SymmetryDisagreement } from "./compare-statements.ts";
-import { type Declared, type DeclaredSymmetry, listedGroup } from "./declared-symmetry.ts";
-
-/** Which of a file's statements the group was taken from. */
-export type SymmetrySource = "operations" | "hall" | "name" | "number";
+import { type Declared, type DeclaredSymmetry, listedGroup, type SymmetrySource } from "./declared-symmetry.ts";
 
 /** The group of a block and how it was settled. */
 export interface ResolvedSymmetry {

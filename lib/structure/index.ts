@@ -53,7 +53,6 @@ export {
   type Arbiter,
   type ResolvedSymmetry,
   resolveSymmetry,
-  type SymmetrySource,
   shapeMisfit,
 } from "./declared-group.ts";
 export {
@@ -62,13 +61,26 @@ export {
   type DeclaredSymmetry,
   declaredSymmetry,
   listedGroup,
+  type SymmetrySource,
 } from "./declared-symmetry.ts";
+export type { Deviation } from "./deviation.ts";
 export { type ComponentChoice, chooseComponents } from "./disorder.ts";
 export type { DisplacementTensor } from "./displacement.ts";
 export { type Element, element, readLabel, readTypeSymbol, type SpeciesReading } from "./elements.ts";
 export { type Formula, formatFormula, hillOrder, parseFormula } from "./formula-text.ts";
 export { CENTRED_HYDROGEN } from "./hydrogen-rule.ts";
 export { invariantMetric } from "./invariant-metric.ts";
+export {
+  type FiniteSymmetry,
+  type LinearSymmetry,
+  type MolecularSymmetry,
+  type MolecularSymmetryOptions,
+  molecularSymmetry,
+  SHAPE_TOLERANCE,
+  type ShapedUnit,
+  STAR_TOLERANCE,
+  shapeTolerance,
+} from "./molecular-symmetry.ts";
 export type { MolecularUnit, UnitAtom, UnitSite } from "./molecular-unit.ts";
 export { type ExtendedUnit, type LoneAtom, molecularUnits, type UnitAnalysis } from "./molecular-units.ts";
 export { type Contact, contactsWithin, type SearchResult } from "./neighbour-search.ts";
