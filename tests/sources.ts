@@ -8,7 +8,7 @@ export type Sources = ReadonlyMap<string, string>;
 const ROOT = fileURLToPath(new URL("..", import.meta.url));
 
 /** All TypeScript files under the folders named, by path. */
-export function readSources(...folders: readonly string[]): Sources {
+export function readSources(...folders: readonly string[]): Map<string, string> {
   const found = new Map<string, string>();
   for (const folder of folders) {
     for (const file of readdirSync(ROOT + folder, { recursive: true, encoding: "utf8" })) {
