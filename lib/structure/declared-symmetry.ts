@@ -23,6 +23,9 @@ export interface DeclaredOperation extends Declared {
   readonly problem: InputProblem | null;
 }
 
+/** Which of a file's statements the group was taken from. */
+export type SymmetrySource = "operations" | "hall" | "name" | "number";
+
 /** Everything a block says of its symmetry, read but not yet compared. */
 export interface DeclaredSymmetry {
   readonly operations: readonly DeclaredOperation[];
