@@ -98,6 +98,26 @@ describe("matrices of the species", () => {
     expect(irrepMatrices(oh, irrepIndex(oh, "T1u")).map((D) => D.flat())).toEqual(oh.elements);
   });
 
+  it.each(["C3", "D3d", "C6v", "D5h", "D4d", "S8", "C5h", "S10", "D8h"])(
+    "of E_k of %s turn the first partner towards the second by k times the smallest angle",
+    (name) => {
+      const group = molecularGroup(name);
+      const central = group.classes.some((c) => c.name === "i" || c.name === "sigma_h");
+      const angles = group.elements.map((M) => {
+        const inPlane = M[0] * M[4] - M[1] * M[3] > 0 && (!central || M[8] > 0);
+        const angle = Math.atan2(M[3], M[0]);
+        return inPlane && angle > 1e-6 ? angle : 10;
+      });
+      const smallest = Math.min(...angles);
+      group.irreps.forEach((irrep, r) => {
+        if (irrep.dimension !== 2) return;
+        const k = Number(/\d/.exec(irrep.label)?.[0] ?? 1);
+        const D = irrepMatrices(group, r)[angles.indexOf(smallest)]!;
+        expect(Math.atan2(D[1]![0]!, D[0]![0]!)).toBeCloseTo(k * smallest, 9);
+      });
+    },
+  );
+
   it("of T1u of Ih are the matrices of the group themselves", () => {
     const ih = molecularGroup("Ih");
     irrepMatrices(ih, irrepIndex(ih, "T1u")).forEach((D, g) => {

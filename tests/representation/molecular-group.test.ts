@@ -168,6 +168,8 @@ describe("a molecule on a site", () => {
     const tilted = turned(cartesianMatrices(site.elements), [1, 0, 0, 0, c, -s, 0, s, c]);
     expect(nearestEmbedding(td, site, tilted)).toHaveLength(4);
     const four = pointGroup(crystalMatrices("4"));
-    expect(() => nearestEmbedding(td, four, cartesianMatrices(four.elements))).toThrow(RangeError);
+    expect(() => nearestEmbedding(td, four, cartesianMatrices(four.elements))).toThrow("no element of Td");
+    // Far enough, every element has a neighbour; but a quarter turn has none that multiplies like it.
+    expect(() => nearestEmbedding(td, four, cartesianMatrices(four.elements), 2)).toThrow("do not form a group");
   });
 });
