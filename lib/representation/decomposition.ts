@@ -1,6 +1,6 @@
 import type { CharacterTable } from "./character-table.ts";
 
-/** Largest distance of a multiplicity from an integer that rounding of irrational characters explains; dimensionless. */
+/** Largest distance of a multiplicity from an integer that rounding of characters explains; dimensionless. */
 const INTEGER_TOLERANCE = 1e-6;
 
 /**

@@ -8,7 +8,7 @@ export type LinearGroupName = "Cinfv" | "Dinfh";
 /** A species of a linear molecule. */
 export interface LinearSpecies {
   readonly group: LinearGroupName;
-  /** ASCII: `Sigma+`, `Pi`, `Delta`; with parity `Sigmag+`, `Piu`. From quantum number 4 on Gamma, then `Lambda5` ... */
+  /** ASCII: `Sigma+`, `Pi`, `Delta`; with parity `Sigmag+`, `Piu`; beyond `Gamma`, `Lambda5` and so on. */
   readonly label: string;
   /** Angular momentum about the axis. */
   readonly lambda: number;

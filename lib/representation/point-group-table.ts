@@ -44,8 +44,8 @@ const SPELLINGS: Readonly<Record<string, string>> = {
 
 /**
  * Table of a point group by its name.
- * @param name an International symbol, also oriented (`-4m2`, `31m`, `m2m`, `112/m`), in conventional crystal axes; or a
- * Schoenflies symbol, of any order up to 240 (`D2d`, `Ih`, `D5h`), in the standard orientation of molecules
+ * @param name an International symbol, also oriented (`-4m2`, `31m`, `m2m`, `112/m`), in conventional crystal axes; or
+ * a Schoenflies symbol, of any order up to 240 (`D2d`, `Ih`, `D5h`), in the standard orientation of molecules
  * @throws InputProblem `unknown-point-group` if the name is neither; Cinfv and Dinfh have `linearGroupTable`
  */
 export function pointGroupTable(name: string): PointGroupTable {

@@ -21,8 +21,8 @@ export interface ReferenceAxes {
 
 /**
  * The reference axes of a group with a chosen orientation. For a principal axis of order 3, 4 or 6, x is a of the
- * frame (b where z is along a) if it is perpendicular to z and lies along or normal to a lateral symmetry direction; else the first secondary
- * direction; without lateral directions, a projected along z.
+ * frame (b where z is along a) if it is perpendicular to z and lies along or normal to a lateral symmetry direction;
+ * else the first secondary direction; without lateral directions, a projected along z.
  * @param back adjugate of the frame matrix
  * @param classes with their names and directions, for the words
  */
