@@ -16,14 +16,12 @@ export function polariseText(answer: PolariseAnswer): string {
   parts.push(`Backscattering from the faces normal to z, x and y:\n${geometryTable(answer.faces)}`);
   parts.push(separatingText(answer));
   if (answer.rotation) parts.push(rotationText(answer.rotation));
-  parts.push(CAUTION);
+  parts.push(wrapText(CAUTION, WIDTH));
   return parts.join("\n\n");
 }
 
-const CAUTION = wrapText(
-  "These are rules for the ideal crystal inside the sample: a birefringent crystal turns polarisations that do not lie along its optical directions, and wide-aperture objectives mix geometries. Lasers blind and heat: keep to the laser rules of your laboratory, and start dark or toxic pigments at the lowest power.",
-  WIDTH,
-);
+const CAUTION =
+  "These are rules for the ideal crystal inside the sample: a birefringent crystal turns polarisations that do not lie along its optical directions, and wide-aperture objectives mix geometries. Lasers blind and heat: keep to the laser rules of your laboratory, and start dark or toxic pigments at the lowest power.";
 
 function subject({ frame, labelAxes, factorGroup, piezoelectric }: PolariseAnswer): string {
   const lines = [

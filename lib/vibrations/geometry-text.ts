@@ -25,40 +25,54 @@ export interface WrittenGeometry {
   readonly scattered: WrittenDirection;
 }
 
-const blank = P.regexp(/\s*/);
-const token = <T>(p: P.Parser<T>): P.Parser<T> => p.skip(blank);
-const minus = token(P.regexp(/[-\u2212]/)).atMost(1);
-const bar = P.regexp(/[\u0304\u0305\u00af]?/);
+function blank(): P.Parser<string> {
+  return P.regexp(/\s*/);
+}
 
-const axis = token(P.seq(P.regexp(/[xyz]/i), bar)).map(
-  ([letter, over]): WrittenDirection => ({
-    kind: "axis",
-    axis: letter.toLowerCase() as "x" | "y" | "z",
-    negative: over !== "",
-  }),
-);
+/** A parser and the blanks after it. */
+function token<T>(p: P.Parser<T>): P.Parser<T> {
+  return p.skip(blank());
+}
+
+function axisGrammar(): P.Parser<WrittenDirection> {
+  const bar = P.regexp(/[\u0304\u0305\u00af]?/);
+
+  return token(P.seq(P.regexp(/[xyz]/i), bar)).map(
+    ([letter, over]): WrittenDirection => ({
+      kind: "axis",
+      axis: letter.toLowerCase() as "x" | "y" | "z",
+      negative: over !== "",
+    }),
+  );
+}
 
 /** Three indices run together, `1-10`, or apart, `1 -1 0` and `1,-1,0`. */
-const index = token(P.regexp(/[-\u2212]?\d+/)).map((t) => Number(t.replace("\u2212", "-")));
-const apart = token(P.regexp(/[,\s]/)).atMost(1);
-const spaced = P.seqMap(index, apart, index, apart, index, (u, _, v, __, w): [number, number, number] => [u, v, w]);
-const digit = P.regexp(/[-\u2212]?\d/).map((t) => Number(t.replace("\u2212", "-")));
-const compact = token(P.seq(digit, digit, digit));
-const indices = P.alt(compact.skip(P.lookahead(/[\])]/)), spaced);
-
-const direction = indices.wrap(token(P.string("[")), token(P.string("]"))).map(written("direction"));
-const normal = indices.wrap(token(P.string("(")), token(P.string(")"))).map(written("normal"));
+function indexGrammar(): P.Parser<[number, number, number]> {
+  const index = token(P.regexp(/[-\u2212]?\d+/)).map((t) => Number(t.replace("\u2212", "-")));
+  const apart = token(P.regexp(/[,\s]/)).atMost(1);
+  const spaced = P.seqMap(index, apart, index, apart, index, (u, _, v, __, w): [number, number, number] => [u, v, w]);
+  const digit = P.regexp(/[-\u2212]?\d/).map((t) => Number(t.replace("\u2212", "-")));
+  const compact = token(P.seq(digit, digit, digit));
+  return P.alt(compact.skip(P.lookahead(/[\])]/)), spaced);
+}
 
 function written(kind: "direction" | "normal") {
   return (triple: readonly [number, number, number]): WrittenDirection => ({ kind, indices: triple, negative: false });
 }
 
-const signed = (p: P.Parser<WrittenDirection>): P.Parser<WrittenDirection> =>
-  P.seqMap(minus, p, (m, d) => (m.length > 0 ? { ...d, negative: !d.negative } : d));
+function directionGrammar(): P.Parser<WrittenDirection> {
+  const indices = indexGrammar();
+  const direction = indices.wrap(token(P.string("[")), token(P.string("]"))).map(written("direction"));
+  const normal = indices.wrap(token(P.string("(")), token(P.string(")"))).map(written("normal"));
+  const minus = token(P.regexp(/[-\u2212]/)).atMost(1);
+  return P.seqMap(minus, P.alt(axisGrammar(), direction, normal), (m, d) =>
+    m.length > 0 ? { ...d, negative: !d.negative } : d,
+  );
+}
 
-const anyDirection = signed(P.alt(axis, direction, normal));
-const porto = blank.then(
-  P.seqMap(
+function geometryGrammar(): P.Parser<WrittenGeometry> {
+  const anyDirection = directionGrammar();
+  return P.seqMap(
     anyDirection,
     token(P.string("(")),
     anyDirection,
@@ -71,22 +85,33 @@ const porto = blank.then(
       scatteredPolarisation,
       scattered,
     }),
-  ),
-);
-const wholeGeometry = porto.skip(P.eof);
-const wholeDirection = blank.then(anyDirection).skip(P.eof);
+  );
+}
+
+interface Grammar {
+  readonly geometry: P.Parser<WrittenGeometry>;
+  readonly direction: P.Parser<WrittenDirection>;
+}
+
+let built: Grammar | null = null; // when the first text is read
+
+function grammar(): Grammar {
+  const whole = <T>(p: P.Parser<T>) => blank().then(p).skip(P.eof);
+  built ??= { geometry: whole(geometryGrammar()), direction: whole(directionGrammar()) };
+  return built;
+}
 
 /**
  * Reads a geometry: `z(xy)-z`, `x(zz)y`, `[110]([1-10]z)-[110]`, `(104)(x[010])-(104)`.
  * @throws InputProblem `geometry-unreadable` with the span of the first character that does not fit
  */
 export function parseGeometry(text: string): WrittenGeometry {
-  return read(wholeGeometry, text, "a scattering geometry", "write it like z(xy)-z or [110](zz)-[110]");
+  return read(grammar().geometry, text, "a scattering geometry", "write it like z(xy)-z or [110](zz)-[110]");
 }
 
 /** Reads one direction: `x`, `-z`, `[110]`, `(104)`. @throws InputProblem `geometry-unreadable` */
 export function parseDirection(text: string): WrittenDirection {
-  return read(wholeDirection, text, "a direction", "write x, -z, [110] for a row or (104) for a face normal");
+  return read(grammar().direction, text, "a direction", "write x, -z, [110] for a row or (104) for a face normal");
 }
 
 function read<T>(parser: P.Parser<T>, text: string, what: string, hint: string): T {

@@ -17,13 +17,13 @@ export const BACKSCATTERING: readonly string[] = [
 ];
 
 /** Right-angle scattering along the axes of the frame. */
-const RIGHT_ANGLE: readonly string[] = ["x", "y", "z"].flatMap((ki, i) =>
-  ["x", "y", "z"].flatMap((ks, k) => {
-    if (i === k) return [];
-    const across = (direction: number) => ["x", "y", "z"].filter((_, j) => j !== direction);
-    return across(i).flatMap((ei) => across(k).map((es) => `${ki}(${ei}${es})${ks}`));
-  }),
-);
+function rightAngle(): string[] {
+  const axes = ["x", "y", "z"];
+  const across = (direction: string) => axes.filter((axis) => axis !== direction);
+  return axes.flatMap((ki) =>
+    across(ki).flatMap((ks) => across(ki).flatMap((ei) => across(ks).map((es) => `${ki}(${ei}${es})${ks}`))),
+  );
+}
 
 /** A geometry with the species that show in it. */
 export interface GeometryResult {
@@ -54,7 +54,7 @@ export function separatingGeometries(
 }
 
 function smallestSet(tensors: CrystalTensors): GeometryResult[] | null {
-  for (const texts of [BACKSCATTERING, [...BACKSCATTERING, ...RIGHT_ANGLE]]) {
+  for (const texts of [BACKSCATTERING, [...BACKSCATTERING, ...rightAngle()]]) {
     const candidates = distinctPatterns(
       tensors,
       texts.map((t) => geometryResult(tensors, t)),
