@@ -60,7 +60,7 @@ function grammar(): Grammar {
 }
 
 /** What needs no quotes: a star, or a letter and what follows it up to a separator. */
-const BARE_NAME = /\*|[A-Za-z][^\s,;<>"-]*/;
+const BARE_NAME = /\*|[A-Za-z][^\s,;<>="-]*/;
 
 /**
  * Reads a list of bond patterns: `W-O<1.95`, `Ca-O`, `Fe1-O3>1.8<2.3, Pb-*`. Labels with hyphens stand in quotes.
