@@ -74,8 +74,7 @@ async function bundleCommandLine() {
     format: "esm",
     platform: "node",
     target: "node20",
-    minifySyntax: true,
-    minifyWhitespace: true, // names stay, for readable stacks
+    minify: true, // a quarter less to compile at every start; stacks are never shown
     charset: "utf8",
     legalComments: "none", // all licences go into one file instead
     metafile: true,
