@@ -91,6 +91,33 @@ export const FREE_UNITS: readonly FreeUnit[] = [
     modes: [{ name: "nu1", species: "Sigmag+", wavenumber: 169, description: "stretch" }],
   },
   {
+    name: "disulfide",
+    formula: "S2",
+    charge: -2,
+    pointGroup: "Dinfh",
+    axes: "",
+    source:
+      "G. J. Janz, J. R. Downey, E. Roduner, G. J. Wasilczyk, J. W. Coutts, A. Eluard, Inorg. Chem. 15 (1976) 1759; from memory",
+    note: "sodium salt",
+    modes: [{ name: "nu1", species: "Sigmag+", wavenumber: 451, description: "stretch" }],
+  },
+  {
+    name: "dimercury dichloride",
+    formula: "Hg2Cl2",
+    charge: 0,
+    pointGroup: "Dinfh",
+    axes: "",
+    source: "H. Stammreich, T. Teixeira Sans, J. Mol. Struct. 1 (1967) 55; from memory",
+    note: "crystal",
+    modes: [
+      { name: "nu1", species: "Sigmag+", wavenumber: 275, description: "symmetric Hg-Cl stretch" },
+      { name: "nu2", species: "Sigmag+", wavenumber: 167, description: "Hg-Hg stretch" },
+      { name: "nu3", species: "Sigmau+", wavenumber: 254, description: "antisymmetric Hg-Cl stretch" },
+      { name: "nu4", species: "Pig", wavenumber: 137, description: "bend, ends out of phase" },
+      { name: "nu5", species: "Piu", wavenumber: 108, description: "bend" },
+    ],
+  },
+  {
     name: "nitrogen",
     formula: "N2",
     charge: 0,
