@@ -5,7 +5,7 @@ export const MOST_PROBLEMS = 1000;
 
 const LONGEST_EXCERPT = 48;
 
-/** Offending text for a message: on one line, control characters escaped, cut in the middle of nothing but itself. */
+/** Offending text for a message: in quotes, on one line, control characters escaped, cut where it is long. */
 export function excerpt(text: string): string {
   const cut = text.length > LONGEST_EXCERPT ? `${text.slice(0, LONGEST_EXCERPT)}...` : text;
   return JSON.stringify(cut);

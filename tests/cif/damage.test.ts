@@ -92,7 +92,7 @@ describe("a damaged CIF is read as far as it makes sense", () => {
       ["duplicate-block 3:1", "data_A"],
       ['a: _x "1"', 'A: _x "2"'],
     ],
-    ["a reserved word", "data_a\n_x 1\nglobal_\n_y 1\n", ["reserved-word 3:1", "global_"], ['a: _x "1"', 'a: _y "1"']],
+    ["a reserved word", "data_a\n_x 1\nGlobal_\n_y 1\n", ["reserved-word 3:1", "Global_"], ['a: _x "1"', 'a: _y "1"']],
     [
       "the end of a loop as in STAR",
       "data_a\nloop_\n_x\n1\nstop_\n_y 1\n",
@@ -232,14 +232,14 @@ describe("any text", () => {
         for (const { span } of problems)
           expect(span!.start >= 0 && span!.start <= span!.end && span!.end <= t.length).toBe(true);
       }),
-      { numRuns: 2000 },
+      { numRuns: 500 },
     );
   });
 
   it.each(Object.entries(HARD_TEXTS))("takes time in proportion to its length: %s", (_, make) => {
     const time = (size: number) => {
       let best = Number.POSITIVE_INFINITY;
-      for (let round = 0; round < 4; round++) {
+      for (let round = 0; round < 3; round++) {
         const text = make(size);
         const start = performance.now();
         readCif(text);
@@ -248,7 +248,7 @@ describe("any text", () => {
       return best;
     };
     // Sixteen times the text: a quadratic reader would need 256 times as long. Half of that leaves room for a busy machine.
-    expect(time(240_000)).toBeLessThan(Math.max(128 * time(15_000), 5));
+    expect(time(96_000)).toBeLessThan(Math.max(128 * time(6_000), 5));
   });
 
   it("keeps its first thousand problems and counts the rest", () => {
@@ -288,7 +288,7 @@ describe("damage to one block of several", () => {
         const read = readCif(text).value.blocks.map(content);
         for (const i of [0, 1, 2, 3]) if (i !== which) expect(read[i]).toEqual(whole[i]);
       }),
-      { numRuns: 2000 },
+      { numRuns: 500 },
     );
   });
 });

@@ -68,7 +68,7 @@ describe.each(VERSIONS)("writing CIF %s", (version) => {
         for (const line of text.split("\n")) expect(line.length).toBeLessThanOrEqual(2048);
         expect(writeCif(value.blocks.map(writable), version)).toBe(text);
       }),
-      { numRuns: 400 },
+      { numRuns: 150 },
     );
   });
 
