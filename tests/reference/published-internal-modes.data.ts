@@ -1,8 +1,8 @@
 /**
- * Published correlations of the modes of molecules and ions in crystals: free unit, site group, factor group. None was
- * computed by this project; all were written from memory of the works named, `doubt` says where that memory is not firm.
- * Many papers print only active species; the silent ones stand here where the paper or its correlation table has them, and
- * entries with `activeOnly` leave them out.
+ * Published correlations of the modes of molecules and ions in crystals: free unit, site group, factor group. Written from
+ * memory of the works named; no program computed any of it. Entries with `byHand` recall the work for site group and scheme
+ * only, and their sums were worked out on paper with correlation tables. `doubt` says what is not firm. A disagreement is to
+ * be reported, never repaired by editing an entry to fit.
  */
 
 /** Fundamentals of one species of the free unit and what one of them becomes. */
@@ -39,6 +39,8 @@ export interface PublishedInternalModes {
   readonly compare: "labels" | "numbers";
   /** Only infrared and Raman active species are given for the factor group. */
   readonly activeOnly?: true;
+  /** The sums are not remembered from the work as printed, but worked out on paper. */
+  readonly byHand?: true;
   readonly source: string;
   readonly doubt?: string;
 }
@@ -302,11 +304,18 @@ export const PUBLISHED_INTERNAL_MODES: readonly PublishedInternalModes[] = [
   },
   {
     fixture: "strontianite",
+    byHand: true,
     unit: "CO3",
     ...ARAGONITE,
     source: "W. B. White in V. C. Farmer (editor), 1974, chapter 12",
   },
-  { fixture: "witherite", unit: "CO3", ...ARAGONITE, source: "W. B. White in V. C. Farmer (editor), 1974, chapter 12" },
+  {
+    fixture: "witherite",
+    byHand: true,
+    unit: "CO3",
+    ...ARAGONITE,
+    source: "W. B. White in V. C. Farmer (editor), 1974, chapter 12",
+  },
   {
     fixture: "cerussite",
     unit: "CO3",
@@ -315,16 +324,18 @@ export const PUBLISHED_INTERNAL_MODES: readonly PublishedInternalModes[] = [
   },
   {
     fixture: "niter",
+    byHand: true,
     unit: "NO3",
     ...ARAGONITE,
     source: "M. Balkanski, M. K. Teng, M. Nusimovici, Physical Review 176 (1968) 1098",
     compare: "numbers",
     doubt: "the axes of the labels",
   },
-  { fixture: "azurite", ...AZURITE },
-  { fixture: "malachite", ...AZURITE },
+  { fixture: "azurite", byHand: true, ...AZURITE },
+  { fixture: "malachite", byHand: true, ...AZURITE },
   {
     fixture: "nitrobarite",
+    byHand: true,
     unit: "NO3",
     unitsInPrimitiveCell: 8,
     freeGroup: "D3h",
@@ -351,6 +362,7 @@ export const PUBLISHED_INTERNAL_MODES: readonly PublishedInternalModes[] = [
   { fixture: "gypsum-c2c", ...GYPSUM_WATER },
   {
     fixture: "anhydrite",
+    byHand: true,
     unit: "SO4",
     unitsInPrimitiveCell: 2,
     freeGroup: "Td",
@@ -375,6 +387,7 @@ export const PUBLISHED_INTERNAL_MODES: readonly PublishedInternalModes[] = [
   },
   {
     fixture: "celestine",
+    byHand: true,
     unit: "SO4",
     ...BARITE,
     source:
@@ -382,6 +395,7 @@ export const PUBLISHED_INTERNAL_MODES: readonly PublishedInternalModes[] = [
   },
   {
     fixture: "arcanite",
+    byHand: true,
     unit: "SO4",
     ...BARITE,
     compare: "numbers",
@@ -390,6 +404,7 @@ export const PUBLISHED_INTERNAL_MODES: readonly PublishedInternalModes[] = [
   },
   {
     fixture: "thenardite",
+    byHand: true,
     unit: "SO4",
     unitsInPrimitiveCell: 2,
     freeGroup: "Td",
@@ -409,6 +424,7 @@ export const PUBLISHED_INTERNAL_MODES: readonly PublishedInternalModes[] = [
   },
   {
     fixture: "jarosite",
+    byHand: true,
     unit: "SO4",
     unitsInPrimitiveCell: 2,
     freeGroup: "Td",
@@ -427,6 +443,7 @@ export const PUBLISHED_INTERNAL_MODES: readonly PublishedInternalModes[] = [
   },
   {
     fixture: "potassium-alum",
+    byHand: true,
     unit: "SO4",
     unitsInPrimitiveCell: 8,
     freeGroup: "Td",
@@ -443,6 +460,7 @@ export const PUBLISHED_INTERNAL_MODES: readonly PublishedInternalModes[] = [
   },
   {
     fixture: "chalcanthite",
+    byHand: true,
     unit: "SO4",
     unitsInPrimitiveCell: 2,
     freeGroup: "Td",
@@ -459,6 +477,7 @@ export const PUBLISHED_INTERNAL_MODES: readonly PublishedInternalModes[] = [
   },
   {
     fixture: "vivianite",
+    byHand: true,
     unit: "PO4",
     unitsInPrimitiveCell: 2,
     freeGroup: "Td",
@@ -475,6 +494,7 @@ export const PUBLISHED_INTERNAL_MODES: readonly PublishedInternalModes[] = [
   },
   {
     fixture: "fluorapatite",
+    byHand: true,
     unit: "PO4",
     unitsInPrimitiveCell: 6,
     freeGroup: "Td",
@@ -492,18 +512,21 @@ export const PUBLISHED_INTERNAL_MODES: readonly PublishedInternalModes[] = [
   },
   {
     fixture: "monazite",
+    byHand: true,
     unit: "PO4",
     ...MONAZITE,
     source: "G. M. Begun, G. W. Beall, L. A. Boatner, W. J. Gregor, Journal of Raman Spectroscopy 11 (1981) 273",
   },
   {
     fixture: "crocoite",
+    byHand: true,
     unit: "CrO4",
     ...MONAZITE,
     source: "R. L. Frost, Journal of Raman Spectroscopy 35 (2004) 153",
   },
   {
     fixture: "potassium-dihydrogen-phosphate",
+    byHand: true,
     unit: "PO4",
     unitsInPrimitiveCell: 2,
     freeGroup: "Td",
@@ -593,6 +616,7 @@ export const PUBLISHED_INTERNAL_MODES: readonly PublishedInternalModes[] = [
   },
   {
     fixture: "sodium-nitrite",
+    byHand: true,
     unit: "NO2",
     unitsInPrimitiveCell: 1,
     freeGroup: "C2v",
@@ -660,6 +684,7 @@ export const PUBLISHED_INTERNAL_MODES: readonly PublishedInternalModes[] = [
   },
   {
     fixture: "pyrite",
+    byHand: true,
     unit: "S2",
     unitsInPrimitiveCell: 4,
     freeGroup: "Dinfh",
@@ -674,6 +699,7 @@ export const PUBLISHED_INTERNAL_MODES: readonly PublishedInternalModes[] = [
   },
   {
     fixture: "calomel",
+    byHand: true,
     unit: "Hg2Cl2",
     unitsInPrimitiveCell: 1,
     freeGroup: "Dinfh",
@@ -713,6 +739,7 @@ export const PUBLISHED_INTERNAL_MODES: readonly PublishedInternalModes[] = [
   },
   {
     fixture: "iodine",
+    byHand: true,
     unit: "I2",
     unitsInPrimitiveCell: 2,
     freeGroup: "Dinfh",
@@ -727,6 +754,7 @@ export const PUBLISHED_INTERNAL_MODES: readonly PublishedInternalModes[] = [
   },
   {
     fixture: "alpha-sulfur",
+    byHand: true,
     unit: "S8",
     unitsInPrimitiveCell: 4,
     freeGroup: "D4d",
@@ -821,6 +849,7 @@ export const PUBLISHED_INTERNAL_MODES: readonly PublishedInternalModes[] = [
   },
   {
     fixture: "fullerene-pa-3",
+    byHand: true,
     unit: "C60",
     unitsInPrimitiveCell: 4,
     freeGroup: "Ih",
