@@ -49,12 +49,13 @@ function installed() {
 function npmCi() {
   const args = ["ci", "--include=dev", "--no-audit", "--no-fund", "--loglevel=error"];
   const own = process.env.npm_execpath; // the npm that runs this script
-  const options = { cwd: root, stdio: ["ignore", "ignore", "inherit"] };
-  const { status } = own?.endsWith("npm-cli.js")
+  const options = { cwd: root, stdio: ["ignore", "ignore", "pipe"], encoding: "utf8" };
+  const { status, stderr } = own?.endsWith("npm-cli.js")
     ? spawnSync(process.execPath, [own, ...args], options)
     : spawnSync("npm", args, { ...options, shell: process.platform === "win32" });
-  if (status !== 0)
-    throw new Error("the packages could not be installed; run npm ci to see why (it needs the registry)");
+  if (status === 0) return;
+  const code = /^npm error code (\S+)/m.exec(stderr ?? "")?.[1] ?? "npm did not run";
+  throw new Error(`the packages could not be installed (${code}); npm ci, which needs the registry, tells more`);
 }
 
 /** True when dist/ is there and no source was saved since it was built. */
