@@ -4,30 +4,52 @@ import { type Numb, numbOf } from "./numb.ts";
 import { ALIASES } from "./tables/aliases.ts";
 import type { CifValue } from "./value.ts";
 
-/** Every name by its lower-case canonical name, and the canonical name of every alias. */
-interface NameTable {
-  readonly aliases: ReadonlyMap<string, readonly string[]>;
-  readonly canonical: ReadonlyMap<string, string>;
+/** Names remembered at most; more than the table has, so that only foreign names ever fill it. */
+const MOST_REMEMBERED = 5000;
+
+/** The table in lower case, a line end before every line; and the lines found so far, as their names, by each name. */
+let table = "";
+const found = new Map<string, readonly string[]>();
+
+/** Names of one quantity, canonical one first; a line of the table is taken apart when one of its names is asked for. */
+function namesOf(name: string): readonly string[] {
+  const lower = name.toLowerCase();
+  const known = found.get(lower);
+  if (known) return known;
+  table ||= ALIASES.toLowerCase();
+  const at = lineOf(lower);
+  const names =
+    at < 0 ? [lower, underscored(lower)] : withUnderscores(table.slice(at, table.indexOf("\n", at)).split(" "));
+  const canonical = names[0]!;
+  const shared = found.get(canonical) ?? names;
+  if (found.size >= MOST_REMEMBERED) found.clear();
+  found.set(canonical, shared);
+  found.set(lower, shared);
+  return shared;
 }
 
-let table: NameTable | null = null;
-
-function nameTable(): NameTable {
-  table ??= decode(ALIASES);
-  return table;
-}
-
-function decode(text: string): NameTable {
-  const aliases = new Map<string, readonly string[]>();
-  const canonical = new Map<string, string>();
-  for (const line of text.toLowerCase().split("\n")) {
-    if (line === "") continue;
-    const [name, ...others] = line.split(" ");
-    const all = [name!, underscored(name!), ...others];
-    aliases.set(name!, all);
-    for (const alias of all) canonical.set(alias, name!);
+/** Offset of the table's line that holds the name, or, with a point for one of its underscores, begins with it; or -1. */
+function lineOf(name: string): number {
+  const word = wordFrom(name);
+  if (word >= 0) return table.lastIndexOf("\n", word) + 1;
+  for (let i = name.indexOf("_", 1); i > 0; i = name.indexOf("_", i + 1)) {
+    const dotted = wordFrom(`${name.slice(0, i)}.${name.slice(i + 1)}`);
+    if (dotted >= 0 && table[dotted - 1] === "\n") return dotted;
   }
-  return { aliases, canonical };
+  return -1;
+}
+
+/** Offset of a whole word in the table, or -1. */
+function wordFrom(word: string): number {
+  for (let at = table.indexOf(word); at >= 0; at = table.indexOf(word, at + 1)) {
+    const after = table[at + word.length];
+    if ((table[at - 1] === " " || table[at - 1] === "\n") && (after === " " || after === "\n")) return at;
+  }
+  return -1;
+}
+
+function withUnderscores([canonical, ...others]: readonly string[]): readonly string[] {
+  return [canonical!, underscored(canonical!), ...others];
 }
 
 /** The form of a dotted name in dictionaries before DDLm: `_cell.length_a` is `_cell_length_a`. */
@@ -40,14 +62,12 @@ function underscored(name: string): string {
  * not in the table of aliases.
  */
 export function canonicalName(name: string): string {
-  const lower = name.toLowerCase();
-  return nameTable().canonical.get(lower) ?? lower;
+  return namesOf(name)[0]!;
 }
 
 /** All equivalent names in lower case, the canonical one first. A name outside the table has its two plain forms. */
 export function aliasesOf(name: string): readonly string[] {
-  const canonical = canonicalName(name);
-  return nameTable().aliases.get(canonical) ?? [canonical, underscored(canonical)];
+  return namesOf(name);
 }
 
 /** A value found under one of its names. */
