@@ -5,6 +5,7 @@ import { type CellAtom, cellAtoms } from "./cell-atoms.ts";
 import { type BondRule, ContactTable } from "./contact-table.ts";
 import type { Crystal } from "./crystal.ts";
 import { chooseComponents, excludeEachOther } from "./disorder.ts";
+import { withinOneCopy } from "./disorder-copy.ts";
 import { applyHydrogenRule } from "./hydrogen-rule.ts";
 import { applyLigandRule } from "./ligand-rule.ts";
 import type { Contact } from "./neighbour-search.ts";
@@ -37,7 +38,8 @@ export function bondsOf(crystal: Crystal, options: BondOptions = {}): BondList {
   const atoms = cellAtoms(crystal, (site) => components.chosen[site]!);
   const overrides = new BondOverrides(crystal, options);
   const siteOf = (atom: number) => crystal.sites[atoms[atom]!.site]!;
-  const excluded = (c: Contact) => excludeEachOther(siteOf(c.first), siteOf(c.second), c.distance);
+  const together = withinOneCopy(crystal, atoms);
+  const excluded = (c: Contact) => excludeEachOther(siteOf(c.first), siteOf(c.second), c.distance) || !together(c);
   const table = new ContactTable(crystal, atoms, overrides.limits(), excluded);
   applyElementRules(table);
   const centred = applyHydrogenRule(table);
@@ -49,6 +51,10 @@ export function bondsOf(crystal: Crystal, options: BondOptions = {}): BondList {
     if (rule) bonds.push({ ...contact, rule });
   });
   const notes = [...components.notes];
+  if (components.contested.length > 0) {
+    const contested = components.contested.map((i) => crystal.sites[i]!.label).join(", ");
+    notes.push(`images of a partly occupied site exclude each other, and symmetry keeps them all: ${contested}`);
+  }
   const labels = [...new Set(centred.map((atom) => siteOf(atom).label))];
   if (labels.length > 0) notes.push(`hydrogen centred between two atoms is bonded to neither: ${labels.join(", ")}`);
   return { atoms, bonds, choice: summariseBonds(crystal, table), notes, compared: table.compared };

@@ -1,5 +1,5 @@
 import { isHydrogen } from "./bond-class.ts";
-import { cellAtoms } from "./cell-atoms.ts";
+import { type CellAtom, cellAtoms } from "./cell-atoms.ts";
 import { radiusSum } from "./contact-table.ts";
 import type { Crystal, CrystalSite } from "./crystal.ts";
 import { type Contact, contactsWithin } from "./neighbour-search.ts";
@@ -19,6 +19,8 @@ export interface ComponentChoice {
   readonly chosen: readonly boolean[];
   /** What was chosen and what was left out, plain sentences. */
   readonly notes: readonly string[];
+  /** Sites chosen of which some images exclude others, which symmetry forbids to choose from. */
+  readonly contested: readonly number[];
 }
 
 /**
@@ -45,14 +47,13 @@ export function chooseComponents(crystal: Crystal): ComponentChoice {
     );
   }
   left(shared(crystal, chosen), "positions shared by several sites: the one of largest occupancy taken");
-  const clashes = exclusiveContacts(crystal, chosen);
+  const atoms = cellAtoms(crystal, (i) => chosen[i]!);
+  const clashes = exclusiveContacts(crystal, atoms).map(({ first, second }): [number, number] => {
+    return [atoms[first]!.site, atoms[second]!.site];
+  });
   left(clashing(crystal, clashes), "partly occupied sites too near each other: the one of larger occupancy taken");
-  const own = new Set(clashes.filter((c) => c.sites[0] === c.sites[1] && chosen[c.sites[0]]).map((c) => c.sites[0]));
-  if (own.size > 0) {
-    const labels = [...own].map((i) => crystal.sites[i]!.label).join(", ");
-    notes.push(`images of a partly occupied site exclude each other, and symmetry keeps them all: ${labels}`);
-  }
-  return { chosen, notes };
+  const contested = [...new Set(clashes.flatMap(([a, b]) => (isOneBlock(crystal, a, b) && chosen[a] ? [a, b] : [])))];
+  return { chosen, notes, contested };
 }
 
 interface DisorderGroup {
@@ -99,26 +100,19 @@ function shared(crystal: Crystal, chosen: readonly boolean[]): number[] {
   });
 }
 
-/** A contact between atoms that are never there together. */
-interface Clash {
-  readonly sites: readonly [number, number];
-}
-
-function exclusiveContacts(crystal: Crystal, chosen: readonly boolean[]): Clash[] {
-  const isPartial = (i: number) => chosen[i]! && crystal.sites[i]!.occupancy < 1 - OCCUPANCY_SLACK;
-  const atoms = cellAtoms(crystal, isPartial);
-  if (atoms.length === 0) return [];
-  const sums = atoms.map((a) => radiusSum(crystal.sites[a.site]!.element, crystal.sites[a.site]!.element) ?? 0);
+/** Contacts between atoms that are never there at the same time. */
+export function exclusiveContacts(crystal: Crystal, atoms: readonly CellAtom[]): Contact[] {
+  const partial = atoms.flatMap((a, i) => (crystal.sites[a.site]!.occupancy < 1 - OCCUPANCY_SLACK ? [i] : []));
+  if (partial.length === 0) return [];
+  const siteOf = (k: number) => crystal.sites[atoms[partial[k]!]!.site]!;
+  const sums = partial.map((_, k) => radiusSum(siteOf(k).element, siteOf(k).element) ?? 0);
   const reach = sums.reduce((m, s) => Math.max(m, CLASH_SHARE * s), HYDROGEN_CLASH);
-  const { contacts } = contactsWithin(
-    crystal.metric,
-    atoms.map((a) => a.position),
-    reach,
+  const positions = partial.map((i) => atoms[i]!.position);
+  return contactsWithin(crystal.metric, positions, reach).contacts.flatMap((c) =>
+    excludeEachOther(siteOf(c.first), siteOf(c.second), c.distance)
+      ? [{ ...c, first: partial[c.first]!, second: partial[c.second]! }]
+      : [],
   );
-  const sitesOf = (c: Contact) => [atoms[c.first]!.site, atoms[c.second]!.site] as const;
-  return contacts
-    .filter((c) => excludeEachOther(crystal.sites[sitesOf(c)[0]]!, crystal.sites[sitesOf(c)[1]]!, c.distance))
-    .map((c) => ({ sites: sitesOf(c) }));
 }
 
 /** Whether two atoms are too near, and too seldom there, to be there at the same time. */
@@ -129,12 +123,17 @@ export function excludeEachOther(a: CrystalSite, b: CrystalSite, distance: numbe
   return sum !== null && distance < CLASH_SHARE * sum;
 }
 
+/** Whether two sites are there together or not at all: the same site, or two of one disorder group. */
+function isOneBlock(crystal: Crystal, a: number, b: number): boolean {
+  const [p, q] = [crystal.sites[a]!, crystal.sites[b]!];
+  return a === b || (p.disorderGroup !== null && p.disorderGroup === q.disorderGroup && p.assembly === q.assembly);
+}
+
 /** Sites to leave out so that no two different ones exclude each other: greedily, the best occupied kept first. */
-function clashing(crystal: Crystal, clashes: readonly Clash[]): number[] {
+function clashing(crystal: Crystal, clashes: readonly (readonly [number, number])[]): number[] {
   const rivals = new Map<number, Set<number>>();
-  for (const { sites } of clashes) {
-    const [a, b] = sites;
-    if (a === b) continue;
+  for (const [a, b] of clashes) {
+    if (isOneBlock(crystal, a, b)) continue;
     rivals.set(a, (rivals.get(a) ?? new Set<number>()).add(b));
     rivals.set(b, (rivals.get(b) ?? new Set<number>()).add(a));
   }

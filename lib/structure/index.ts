@@ -85,6 +85,7 @@ export type { MolecularUnit, UnitAtom, UnitSite } from "./molecular-unit.ts";
 export { type ExtendedUnit, type LoneAtom, molecularUnits, type UnitAnalysis } from "./molecular-units.ts";
 export { type Contact, contactsWithin, type SearchResult } from "./neighbour-search.ts";
 export { type Image, multiplicityOf, orbitOf, wrap } from "./orbit.ts";
+export { type OrderedModel, orderedModel } from "./ordered-model.ts";
 export { nearestDistance, PeriodicPoints } from "./periodic-points.ts";
 export { type Position, type PositionsAnswer, positionsAnswer } from "./positions-answer.ts";
 export { type SiteSymmetry, siteSymmetry } from "./site-symmetry.ts";

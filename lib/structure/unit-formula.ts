@@ -1,4 +1,5 @@
 import { bondClasses, isHydrogen } from "./bond-class.ts";
+import { hillOrder } from "./formula-text.ts";
 import { ELEMENT_SEQUENCE } from "./tables/element-sequence.ts";
 
 /** Atoms by element and the bonds between them, as pairs of indices. */
@@ -25,9 +26,7 @@ function written(counts: Counts, order: readonly string[]): string {
  */
 export function hillFormula(elements: readonly string[]): string {
   const counts = countsOf(elements);
-  const first = counts.has("C") ? ["C", "H", "D", "T"].filter((e) => counts.has(e)) : [];
-  const rest = [...counts.keys()].filter((e) => !first.includes(e)).sort();
-  return written(counts, [...first, ...rest]);
+  return written(counts, [...hillOrder(counts).keys()]);
 }
 
 /** Formula by IUPAC's sequence of elements, the electropositive end first. */

@@ -8,11 +8,12 @@ import {
   lengthOf,
   metricOf,
   molecularUnits,
+  orderedModel,
   parseBondPatterns,
   type UnitAnalysis,
   type Vec3,
 } from "../../lib/structure/index.ts";
-import { compose, operationKey, spaceGroup, transformPoint } from "../../lib/symmetry/index.ts";
+import { compose, operationKey, parseOperation, spaceGroup, transformPoint } from "../../lib/symmetry/index.ts";
 import { atom, fixture, inSetting, unimodular } from "../support/crystals.ts";
 
 /** Everything that must not depend on setting, origin or the order of atoms. */
@@ -307,5 +308,51 @@ describe("disorder", () => {
     const sites = [atom("S", "S", [0.5, 0.5, 0.5], 0.3), atom("Se", "Se", [0.5, 0.5, 0.5], 0.7)];
     const list = bondsOf(crystalOf({ name: "m", metric, group, sites }));
     expect(list.atoms.map((a) => sites[a.site]!.label)).toEqual(["Se"]);
+  });
+});
+
+describe("a molecule disordered about a centre", () => {
+  const metric = metricOf({ a: 10, b: 10, c: 10, alpha: 90, beta: 90, gamma: 90 });
+  const part = (label: string, element: string, x: number, y: number) => ({
+    ...atom(label, element, [x / 10, y / 10 + 1, 0], 0.5),
+    disorderGroup: "-1",
+  });
+  const sites = [part("C1", "C", 0.7, 0.2), part("C2", "C", -0.7, 0.2), part("N", "N", -1.86, 0.2)];
+  const crystal = crystalOf({ name: "about a centre", metric, group: spaceGroup([parseOperation("-x,-y,-z")]), sites });
+
+  test("is not bonded to its own other image", () => {
+    const { units } = molecularUnits(crystal);
+    expect(units.map((u) => `${u.atoms.length} ${u.count}`)).toEqual(["3 2"]);
+  });
+
+  test("is ordered by giving up the centre", () => {
+    const model = orderedModel(crystal)!;
+    expect(model.index).toBe(2);
+    expect(model.crystal.sites.map((s) => `${s.label} ${s.occupancy}`)).toEqual(["C1 1", "C2 1", "N 1"]);
+    expect(molecularUnits(model.crystal).units.map((u) => `${u.atoms.length} ${u.count}`)).toEqual(["3 1"]);
+  });
+});
+
+describe("orderedModel", () => {
+  test.each([
+    ["ammonium-chloride", 2, "P-43m", "NH4 x 1", 24],
+    ["potassium-dihydrogen-phosphate", 2, "Fdd2", "H2PO4 x 2", 2],
+  ])("orders the hydrogen of %s in a subgroup of index %i", (name, index, symbol, unit, site) => {
+    const crystal = fixture(name);
+    const model = orderedModel(crystal)!;
+    expect(model.index).toBe(index);
+    expect(model.crystal.identified.summary.hermannMauguin.replaceAll(" ", "")).toBe(symbol);
+    const { units, notes } = molecularUnits(model.crystal);
+    expect(units.map((u) => `${u.formula} x ${u.count}`)).toEqual([unit]);
+    expect(units[0]!.site.operations).toHaveLength(site);
+    expect(units[0]!.atoms.every((a) => a.occupancy === 1)).toBe(true);
+    expect(notes).toEqual([]);
+    expect(model.crystal.notes.at(-1)).toContain("of H was taken");
+    const content = (c: Crystal) => c.sites.reduce((n, s) => n + s.occupancy * s.images.length, 0);
+    expect(content(model.crystal)).toBeCloseTo(content(crystal), 9);
+  });
+
+  test("has nothing to do in an ordered crystal", () => {
+    expect(orderedModel(fixture("gypsum"))).toBeNull();
   });
 });
