@@ -1,18 +1,15 @@
-import { add, apply, type IntMat3, type IntVec3, lcm, type RatVec3, ratVec3 } from "../algebra/index.ts";
+import { add, type IntMat3, type IntVec3, lcm, type RatVec3, ratVec3 } from "../algebra/index.ts";
 import { InputProblem } from "../problem.ts";
-import { type AffineForm, directionsOfForm, formatForm, formThrough } from "./affine-form.ts";
-import { type AffineSubspace, subspaceThrough } from "./affine-subspace.ts";
+import { type AffineForm, formatForm, formThrough } from "./affine-form.ts";
 import { arithmeticClassOf } from "./arithmetic-class.ts";
 import { crystalFamily } from "./geometric-class.ts";
 import { ownFrame } from "./label-frame.ts";
 import type { Operation } from "./operation.ts";
 import { orientedSymbol } from "./oriented-site-symmetry.ts";
-import { type PrimitiveGroup, primitiveGroup } from "./primitive-group.ts";
-import { referenceGroup } from "./reference-group.ts";
+import { positionAt } from "./position-lookup.ts";
 import type { SpaceGroup } from "./space-group.ts";
 import { scalesAlike, type TensorConstraint, tensorConstraint } from "./tensor-constraint.ts";
 import { reverse, type Transformation, transformOperation } from "./transformation.ts";
-import { orbitKeys } from "./wyckoff-enumeration.ts";
 import { directionSets, type WyckoffPosition, wyckoffPositions } from "./wyckoff-positions.ts";
 
 /** A site of a crystal in its place among the Wyckoff positions of its space-group type. */
@@ -110,34 +107,9 @@ function ownSymbol({ group, number, toReference }: AssignmentGroup, rotations: r
   return frame && frame.z[2] !== 0 ? orientedSymbol(rotations, directionSets(number)) : null;
 }
 
-const letters = new Map<number, ReadonlyMap<string, number>>();
-
-/** Index of the position by key of a subspace, special positions of a type only; built on first use. */
-function positionsByKey(number: number): ReadonlyMap<string, number> {
-  const known = letters.get(number);
-  if (known) return known;
-  const primitive = primitiveGroup(referenceGroup(number));
-  const fresh = new Map<string, number>();
-  wyckoffPositions(number).forEach(({ form }, index) => {
-    const s = inPrimitive({ point: form.t, directions: directionsOfForm(form) }, primitive);
-    for (const key of orbitKeys(s, primitive)) fresh.set(key, index);
-  });
-  letters.set(number, fresh);
-  return fresh;
-}
-
-function inPrimitive({ point, directions }: FixedPoints, { toPrimitive }: PrimitiveGroup): AffineSubspace {
-  return subspaceThrough(
-    ratVec3(apply(toPrimitive, point.n), point.d),
-    directions.map((v) => apply(toPrimitive, v)),
-  );
-}
-
 function find(number: number, points: FixedPoints, order: number): WyckoffPosition {
-  const { key } = inPrimitive(points, primitiveGroup(referenceGroup(number)));
-  const index = positionsByKey(number).get(key);
-  const position = index === undefined ? undefined : wyckoffPositions(number)[index];
-  if (!position || position.order !== order) throw unknown(number, order);
+  const position = positionAt(number, points.point, points.directions);
+  if (position?.order !== order) throw unknown(number, order);
   return position;
 }
 
