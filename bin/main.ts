@@ -14,6 +14,7 @@ const COMMANDS: Readonly<Record<string, () => Promise<Command>>> = {
   sites: () => import("./commands/sites.ts"),
   positions: () => import("./commands/positions.ts"),
   modes: () => import("./commands/modes.ts"),
+  split: () => import("./commands/split.ts"),
   polarise: () => import("./commands/polarise.ts"),
 };
 

@@ -1,4 +1,6 @@
 /** Results as text. Takes finished result objects; computes nothing. */
+export { type CorrelationLevels, correlationDiagram, correlationLevels } from "./correlation-diagram.ts";
+export { correlationSvg } from "./correlation-svg.ts";
 export { formatNumber } from "./format-number.ts";
 export { groupText } from "./group-text.ts";
 export { groupName, type HeadingData, headingText } from "./heading.ts";
@@ -8,4 +10,5 @@ export { positionsText } from "./positions-text.ts";
 export { problemText } from "./problem-text.ts";
 export { sitesText } from "./sites-text.ts";
 export { type SpeciesTerm, speciesSum, typographicLabel } from "./species.ts";
+export { splitText } from "./split-text.ts";
 export { type Column, textTable, wrapText } from "./table.ts";

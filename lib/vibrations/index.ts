@@ -33,3 +33,10 @@ export { type RotationCurve, type RotationTable, rotationTable } from "./rotatio
 export { type ScatteringGeometry, scatteringGeometry } from "./scattering-geometry.ts";
 export { BACKSCATTERING, type GeometryResult, geometryResult, separatingGeometries } from "./standard-geometries.ts";
 export { type VibratingSite, vibratingSites } from "./vibrating-sites.ts";
+export { freeUnitsLike, freeUnitsOf } from "./free-unit-names.ts";
+export type { SpeciesCounts } from "./species-counts.ts";
+export { type ExtendedAnswer, type LoneAtomAnswer, type SplitAnswer, type SplitOptions, splitAnswer } from "./split-answer.ts";
+export type { SplitSums } from "./split-sums.ts";
+export type { FreeMode, FreeUnit } from "./tables/free-units.ts";
+export type { InternalMode, UnitAnswer, UnitMotions } from "./unit-answer.ts";
+export { correlateUnit, type FreeSpeciesCorrelation, type UnitCorrelation } from "./unit-correlation.ts";

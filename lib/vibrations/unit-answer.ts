@@ -1,0 +1,133 @@
+import type { Crystal, MolecularSymmetry, MolecularUnit } from "../structure/index.ts";
+import { assignWyckoff } from "../symmetry/index.ts";
+import { activities } from "./activity.ts";
+import type { FactorGroupModes } from "./factor-group.ts";
+import { freeUnitsLike } from "./free-unit-names.ts";
+import { countsOf, type SpeciesCounts } from "./species-counts.ts";
+import type { FreeMode, FreeUnit } from "./tables/free-units.ts";
+import type { FreeSpeciesCorrelation, UnitCorrelation } from "./unit-correlation.ts";
+
+/** One internal mode of the free unit (or several of one species) and what the crystal makes of it. */
+export interface InternalMode {
+  /** Species of the free unit. */
+  readonly species: string;
+  /** `nu3`; null where the unit is not in the table of free units. */
+  readonly name: string | null;
+  readonly description: string | null;
+  /** cm^-1 of the free unit, null where unknown. */
+  readonly freeWavenumber: number | null;
+  /** Modes meant: 1 for a named mode. */
+  readonly count: number;
+  /** Activity of the free unit. */
+  readonly free: { readonly infrared: boolean; readonly raman: boolean };
+  readonly site: SpeciesCounts;
+  readonly factorGroup: SpeciesCounts;
+  /** Bands in the crystal: species of the factor group that are infrared or Raman active. */
+  readonly infrared: number;
+  readonly raman: number;
+  /** Levels into which the site splits the mode, and into which the coupling of units splits those. */
+  readonly siteLevels: number;
+  readonly factorGroupLevels: number;
+}
+
+export interface UnitMotions {
+  readonly site: SpeciesCounts;
+  readonly factorGroup: SpeciesCounts;
+}
+
+export interface UnitAnswer {
+  readonly formula: string;
+  /** Name of the free ion or molecule taken for comparison, null for none. */
+  readonly freeName: string | null;
+  readonly freeSource: string | null;
+  readonly labels: readonly string[];
+  /** Units in the primitive cell. */
+  readonly count: number;
+  readonly pointGroup: string;
+  /** Distance of the atoms from the idealised unit, angstrom. */
+  readonly deviation: { readonly largest: number; readonly mean: number };
+  readonly shapeTolerance: number;
+  readonly siteSymmetry: string;
+  readonly schoenflies: string;
+  readonly internal: readonly InternalMode[];
+  readonly translations: UnitMotions;
+  readonly librations: UnitMotions;
+  /** For every species of the site group, the species of the factor group that it gives. */
+  readonly siteToFactorGroup: readonly { readonly site: string; readonly factorGroup: SpeciesCounts }[];
+}
+
+/** A kind of unit with its shape and its correlation. */
+export interface CorrelatedUnit {
+  readonly unit: MolecularUnit;
+  readonly symmetry: MolecularSymmetry;
+  readonly correlation: UnitCorrelation;
+}
+
+/** Everything that is printed of one kind of unit. */
+export function unitAnswer(
+  crystal: Crystal,
+  modes: FactorGroupModes,
+  { unit, symmetry, correlation }: CorrelatedUnit,
+): UnitAnswer {
+  const free = freeUnitsLike(unit, symmetry.schoenflies)[0] ?? null;
+  const motions = (m: UnitCorrelation["translations"]): UnitMotions => ({
+    site: countsOf(correlation.siteGroup.irreps, m.site),
+    factorGroup: countsOf(modes.group.irreps, m.factorGroup),
+  });
+  const fits = free !== null && namesFit(free, correlation.species);
+  return {
+    formula: unit.formula,
+    freeName: fits ? free.name : null,
+    freeSource: fits ? [free.source, free.note].filter(Boolean).join("; ") : null,
+    labels: unit.labels,
+    count: unit.count,
+    pointGroup: symmetry.schoenflies,
+    deviation: { largest: symmetry.deviation.largest, mean: symmetry.deviation.mean },
+    shapeTolerance: symmetry.tolerance,
+    siteSymmetry: assignWyckoff(crystal.identified, unit.site.operations).siteSymmetry,
+    schoenflies: correlation.siteGroup.schoenflies,
+    internal: correlation.species.flatMap((s) => internalModes(s, fits ? free : null, correlation, modes)),
+    translations: motions(correlation.translations),
+    librations: motions(correlation.librations),
+    siteToFactorGroup: correlation.siteGroup.irreps.map((r, i) => ({
+      site: r.label,
+      factorGroup: countsOf(modes.group.irreps, correlation.siteToFactorGroup[i]!),
+    })),
+  };
+}
+
+/** The table names every internal mode of the unit and no other. */
+function namesFit(free: FreeUnit, species: readonly FreeSpeciesCorrelation[]): boolean {
+  const known = species.reduce((n, s) => n + s.count, 0);
+  const named = (label: string) => free.modes.filter((m) => m.species === label).length;
+  return free.modes.length === known && species.every((s) => named(s.label) === s.count);
+}
+
+function internalModes(
+  s: FreeSpeciesCorrelation,
+  free: FreeUnit | null,
+  correlation: UnitCorrelation,
+  modes: FactorGroupModes,
+): InternalMode[] {
+  const activity = activities(modes.group);
+  const bands = (pick: (i: number) => boolean) => s.factorGroup.reduce((n, count, i) => n + (pick(i) ? count : 0), 0);
+  const common = {
+    species: s.label,
+    free: { infrared: s.infrared, raman: s.raman },
+    site: countsOf(correlation.siteGroup.irreps, s.site),
+    factorGroup: countsOf(modes.group.irreps, s.factorGroup),
+    infrared: bands((i) => activity[i]!.infrared),
+    raman: bands((i) => activity[i]!.raman),
+    siteLevels: s.site.reduce((a, b) => a + b, 0),
+    factorGroupLevels: s.factorGroup.reduce((a, b) => a + b, 0),
+  };
+  const named = free?.modes.filter((m) => m.species === s.label) ?? [];
+  if (named.length === 0) return [{ ...common, name: null, description: null, freeWavenumber: null, count: s.count }];
+  return named.map((m: FreeMode) => ({
+    ...common,
+    name: m.name,
+    description: m.description,
+    freeWavenumber: m.wavenumber,
+    count: 1,
+  }));
+}
