@@ -1,16 +1,5 @@
 import { readCif } from "../../lib/cif/index.ts";
-
-/**
- * Scanning a CIF against `JSON.parse` on the same values re-encoded. A ratio below 1 means that reading the CIF took
- * less time. Both sides run in turn, the fastest round of each counts, and every result is used.
- */
-export interface Measured {
-  readonly name: string;
-  /** Time of ours over time of the reference. */
-  readonly ratio: number;
-  readonly milliseconds: number;
-  readonly megabytes: number;
-}
+import { fastest, type Measurement, milliseconds, ratio } from "./ratio.ts";
 
 const ROUNDS = 9;
 
@@ -47,38 +36,19 @@ export function proseCif(length: number): string {
   return `data_halite\n_exptl_special_details\n;\n${line.repeat(Math.ceil(length / line.length))};\n`;
 }
 
-let sink = 0;
-
-function fastest(ours: () => number, reference: () => number): { ours: number; reference: number } {
-  const best = { ours: Number.POSITIVE_INFINITY, reference: Number.POSITIVE_INFINITY };
-  const sides = { ours, reference };
-  for (let round = 0; round < ROUNDS; round++) {
-    for (const side of ["ours", "reference"] as const) {
-      const start = performance.now();
-      sink += sides[side]();
-      best[side] = Math.min(best[side], performance.now() - start);
-    }
-  }
-  return best;
-}
-
-function against(name: string, cif: string, json: string): Measured {
-  const time = fastest(
-    () => readCif(cif).value.blocks[0]!.names().length,
-    () => Object.keys(JSON.parse(json)).length,
-  );
-  return { name, ratio: time.ours / time.reference, milliseconds: time.ours, megabytes: cif.length / 1e6 };
+/** Reading the CIF against `JSON.parse` on the same values re-encoded. */
+function against(name: string, cif: string, json: string): Measurement {
+  const ours = () => readCif(cif).value.blocks[0]!.names().length;
+  return ratio(name, "JSON.parse", { ours, reference: () => Object.keys(JSON.parse(json)).length }, ROUNDS);
 }
 
 /** How many times longer a text four times as long takes, over four: 1 is linear growth. */
-function growth(name: string, make: (size: number) => string, size: number): Measured {
-  const small = make(size);
-  const large = make(4 * size);
-  const time = fastest(
-    () => readCif(large).problems.length,
-    () => readCif(small).problems.length,
-  );
-  return { name, ratio: time.ours / (4 * time.reference), milliseconds: time.ours, megabytes: large.length / 1e6 };
+function growth(name: string, make: (size: number) => string, size: number): Measurement {
+  const [small, large] = [make(size), make(4 * size)];
+  const sides = { ours: () => readCif(large).problems.length, reference: () => readCif(small).problems.length };
+  const time = fastest(sides, ROUNDS);
+  const detail = `${(large.length / 1e6).toFixed(2)} MB in ${milliseconds(time.ours)}`;
+  return { name, ratio: time.ours / (4 * time.reference), reference: "linear growth", detail };
 }
 
 /** Texts made to be hard: each is a shape that a careless reader goes over again and again. */
@@ -97,25 +67,16 @@ export const HARD_TEXTS: Readonly<Record<string, (size: number) => string>> = {
   "a loop with odd lines": (n) => "data_a\nloop_\n_x\n_y\n" + "1 2\n1\n1 2\n".repeat(n / 10) + "1\n",
 };
 
-export function measure(): Measured[] {
+export function measure(): Measurement[] {
   const rows = reflectionRows(400_000);
   const cif = reflectionCif(rows);
   const asNumbers = rows.map((row) => row.map((cell, i) => (i < 5 ? Number(cell) : cell)));
   const prose = proseCif(5e6);
   const text = prose.slice(prose.indexOf(";\n") + 2, prose.lastIndexOf("\n;"));
   return [
-    against("400,000 reflections against the same strings in JSON", cif, JSON.stringify({ names: NAMES, rows })),
-    against(
-      "400,000 reflections against the same numbers in JSON",
-      cif,
-      JSON.stringify({ names: NAMES, rows: asNumbers }),
-    ),
-    against("text field of 5 MB against the same string in JSON", prose, JSON.stringify({ text })),
-    ...Object.entries(HARD_TEXTS).map(([name, make]) => growth(`growth: ${name}`, make, 240_000)),
+    against("400,000 reflections, the same strings in JSON", cif, JSON.stringify({ names: NAMES, rows })),
+    against("400,000 reflections, the same numbers in JSON", cif, JSON.stringify({ names: NAMES, rows: asNumbers })),
+    against("text field of 5 MB, the same string in JSON", prose, JSON.stringify({ text })),
+    ...Object.entries(HARD_TEXTS).map(([name, make]) => growth(name, make, 240_000)),
   ];
-}
-
-/** Total of all results, so that no work can be optimised away. */
-export function consumed(): number {
-  return sink;
 }

@@ -1,5 +1,5 @@
 import { spawnSync } from "node:child_process";
-import type { Measurement } from "./ratio.ts";
+import { type Measurement, milliseconds } from "./ratio.ts";
 
 const STARTS = 25;
 const MAIN = "dist/bin/main.js";
@@ -14,7 +14,7 @@ export function measure(): Measurement[] {
   };
   return Object.entries(commands).map(([name, args]) => {
     const [ours, bare] = medians(args, ["-e", "0"]);
-    return { name, ratio: ours / bare, reference: "node -e 0", detail: `${ours.toFixed(0)} ms, median of ${STARTS}` };
+    return { name, ratio: ours / bare, reference: "node -e 0", detail: `${milliseconds(ours)}, median of ${STARTS}` };
   });
 }
 

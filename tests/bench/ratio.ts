@@ -31,8 +31,13 @@ export function fastest(sides: Sides, rounds = 20): { readonly ours: number; rea
 /** The ratio of the fastest rounds; values below 1 mean that ours is faster. */
 export function ratio(name: string, reference: string, sides: Sides, rounds = 20): Measurement {
   const best = fastest(sides, rounds);
-  const detail = `${best.ours.toPrecision(3)} ms against ${best.reference.toPrecision(3)} ms`;
+  const detail = `${milliseconds(best.ours)} against ${milliseconds(best.reference)}`;
   return { name, ratio: best.ours / best.reference, reference, detail };
+}
+
+/** A time with three digits at most: `0.42 ms`, `1240 ms`. */
+export function milliseconds(time: number): string {
+  return `${time < 100 ? time.toPrecision(3) : time.toFixed(0)} ms`;
 }
 
 /** Sum of everything returned; printed at the end, which makes it used. */
