@@ -10,7 +10,7 @@ import { positionAt } from "./position-lookup.ts";
 import type { SpaceGroup } from "./space-group.ts";
 import { scalesAlike, type TensorConstraint, tensorConstraint } from "./tensor-constraint.ts";
 import { reverse, type Transformation, transformOperation } from "./transformation.ts";
-import { directionSets, type WyckoffPosition, wyckoffPositions } from "./wyckoff-positions.ts";
+import { directionSets, type WyckoffPosition } from "./wyckoff-positions.ts";
 
 /** A site of a crystal in its place among the Wyckoff positions of its space-group type. */
 export interface SiteAssignment {
@@ -53,13 +53,21 @@ export interface AssignmentGroup {
  * order, so that the operations are not the whole site group of a point
  */
 export function assignWyckoff(context: AssignmentGroup, site: readonly Operation[]): SiteAssignment {
+  if (site.length > 1) return assign(context, site);
+  // most sites of molecular crystals; all alike
+  const known = general.get(context);
+  if (known) return known;
+  const fresh = assign(context, site);
+  general.set(context, fresh);
+  return fresh;
+}
+
+const general = new WeakMap<AssignmentGroup, SiteAssignment>();
+
+function assign(context: AssignmentGroup, site: readonly Operation[]): SiteAssignment {
   const { group, number, toReference } = context;
-  const back = reverse(toReference);
-  const moved = site.map((a) => transformOperation(a, toReference, back));
-  if (moved.some((a) => a === null)) throw unknown(number, site.length);
-  const reference = moved as Operation[];
-  const inReference = fixedPoints(reference);
-  const position = site.length === 1 ? wyckoffPositions(number).at(-1)! : find(number, inReference, site.length);
+  const inReference = fixedPoints(carried(site, number, toReference));
+  const position = find(number, inReference, site.length);
   const own = fixedPoints(site);
   const rotations = site.map((a) => a.W);
   const form = formThrough(own.point, own.directions);
@@ -75,13 +83,25 @@ export function assignWyckoff(context: AssignmentGroup, site: readonly Operation
     referenceConstraint: formatForm(formThrough(inReference.point, inReference.directions)),
     position,
     tensor: tensorConstraint(rotations),
-    tensorHoldsFor: scalesAlike(
-      rotations,
-      group.representatives.map((a) => a.W),
-    )
-      ? "U"
-      : "beta",
+    tensorHoldsFor: holdsForU(rotations, group) ? "U" : "beta",
   };
+}
+
+function holdsForU(rotations: readonly IntMat3[], group: SpaceGroup): boolean {
+  return scalesAlike(
+    rotations,
+    group.representatives.map((a) => a.W),
+  );
+}
+
+/** The operations in the reference setting, still fixing the point as it stands there. */
+function carried(site: readonly Operation[], number: number, toReference: Transformation): Operation[] {
+  const back = reverse(toReference);
+  return site.map((a) => {
+    const moved = transformOperation(a, toReference, back);
+    if (!moved) throw unknown(number, site.length);
+    return moved;
+  });
 }
 
 interface FixedPoints {
