@@ -143,7 +143,7 @@ function culprit(fixing: readonly Operation[], stratum: Stratum, known: readonly
   trivial.add(new Array<number>(size).fill(0).join());
   const candidates = fixing.filter((a) => !trivial.has(characterOn(stratum, a, N).join()));
   const order = (a: Operation) => reduced(characterOn(stratum, a, N), N).modulus;
-  const steps = (a: Operation) => a.w.n.filter((e) => e !== 0).length;
+  const steps = (a: Operation) => a.w.n.filter((e) => e !== 0).length + (a.w.n[0] + a.w.n[1] + a.w.n[2]) / (4 * a.w.d);
   const distance = (a: Operation) => Math.abs(fixedDimension(a) - size);
   const sorted = [...candidates].sort(
     (a, b) => distance(a) - distance(b) || order(b) - order(a) || steps(a) - steps(b),
