@@ -88,6 +88,14 @@ export { type Image, multiplicityOf, orbitOf, wrap } from "./orbit.ts";
 export { type OrderedModel, orderedModel } from "./ordered-model.ts";
 export { nearestDistance, PeriodicPoints } from "./periodic-points.ts";
 export { type Position, type PositionsAnswer, positionsAnswer } from "./positions-answer.ts";
+export {
+  type CellNumbers,
+  LATTICE_TOLERANCE,
+  type LatticeCell,
+  type ReduceAnswer,
+  reduceAnswer,
+  type SymmetricCell,
+} from "./reduce-answer.ts";
 export { type SiteSymmetry, siteSymmetry } from "./site-symmetry.ts";
 export { type SiteAnswer, type SitesAnswer, sitesAnswer } from "./sites-answer.ts";
 export { type AtomGroup, hillFormula, sequenceFormula, unitFormula } from "./unit-formula.ts";
