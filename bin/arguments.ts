@@ -1,4 +1,5 @@
 import parser from "yargs-parser";
+import { UsageProblem } from "./problems.ts";
 
 /** One option of a command. */
 export interface OptionSpec {
@@ -19,11 +20,6 @@ export interface CommandSpec {
   readonly options: Readonly<Record<string, OptionSpec>>;
   /** A command line and what it prints, from a real run. */
   readonly example: { readonly line: string; readonly output: string };
-}
-
-/** Misuse of the command line; ends with status 2. */
-export class UsageProblem extends Error {
-  override readonly name = "UsageProblem";
 }
 
 /** Options that every command takes. */

@@ -1,6 +1,6 @@
 /**
  * Builds dist/: lib/ file by file with declarations (tsc; no Node types, so a Node API in lib/ stops the build), and
- * the command line bundled into dist/bin with one chunk per command, so that a command loads only what it needs.
+ * the command line bundled into dist/bin, one bundle per command, so that a command loads only what it needs.
  * Everything is built beside dist/ and moved into place at the end: a failed build leaves the old one whole.
  */
 import { spawnSync } from "node:child_process";
@@ -23,6 +23,16 @@ const root = dirname(dirname(fileURLToPath(import.meta.url)));
 const started = new Date();
 const target = join(root, "dist");
 const fresh = `${target}-${process.pid}`;
+
+const commandsApart = {
+  name: "commands-apart",
+  setup({ onResolve }) {
+    onResolve({ filter: /^\.\/commands\/[a-z-]+\.ts$/ }, ({ path }) => ({
+      path: path.replace(/\.ts$/, ".js"),
+      external: true,
+    }));
+  },
+};
 
 try {
   compileLibrary();
@@ -57,31 +67,47 @@ function nameEmittedFiles(file) {
   writeFileSync(file, text.replace(/((?:from |import\()"\.[^"]*)\.ts"/g, '$1.js"'));
 }
 
+/**
+ * main.js, which only dispatches, and one whole bundle per command: shared chunks would be loaded one by one, and carry
+ * what other commands need. Code is repeated on disk so that a command loads two files and nothing that it does not use.
+ */
 async function bundleCommandLine() {
   const out = join(fresh, "bin");
   const { version } = JSON.parse(readFileSync(join(root, "package.json"), "utf8"));
-  const { metafile } = await build({
-    // A worker is a file of its own, so it is an entry too; chunks lie beside it, so that a sibling's URL holds anywhere.
-    entryPoints: readdirSync(join(root, "bin"), { recursive: true, encoding: "utf8" })
-      .filter((file) => file === "main.ts" || file.endsWith("worker.ts"))
-      .map((file) => join(root, "bin", file)),
+  const common = {
     absWorkingDir: root,
-    outdir: out,
-    entryNames: "[name]",
-    chunkNames: "[name]-[hash]",
     bundle: true,
-    splitting: true,
     format: "esm",
     platform: "node",
     target: "node20",
-    minify: true, // a quarter less to compile at every start; stacks are never shown
+    minify: true,
+    keepNames: false,
     charset: "utf8",
     legalComments: "none", // all licences go into one file instead
     metafile: true,
     logLevel: "warning",
     define: { SITEFOLD_VERSION: JSON.stringify(version) },
-  });
-  writeFileSync(join(out, "LICENCES.txt"), licences(Object.keys(metafile.inputs)));
+  };
+  const inFolder = (folder) =>
+    readdirSync(join(root, "bin", folder), { withFileTypes: true }).filter((f) => f.isFile());
+  const commands = inFolder("commands").map((f) => join(root, "bin", "commands", f.name));
+  // A worker is a file of its own, so it is an entry too; it lies beside main.js.
+  const workers = inFolder(".")
+    .filter((f) => f.name.endsWith("worker.ts"))
+    .map((f) => join(root, "bin", f.name));
+  const results = [
+    await build({ ...common, entryPoints: commands, outdir: join(out, "commands") }),
+    await build({
+      ...common,
+      entryPoints: [join(root, "bin", "main.ts"), ...workers],
+      outdir: out,
+      splitting: true,
+      chunkNames: "[name]-[hash]",
+      plugins: [commandsApart],
+    }),
+  ];
+  const inputs = results.flatMap(({ metafile }) => Object.keys(metafile.inputs));
+  writeFileSync(join(out, "LICENCES.txt"), licences(inputs));
   const main = join(out, "main.js");
   const code = readFileSync(main, "utf8");
   if (!code.startsWith("#!")) writeFileSync(main, `#!/usr/bin/env node\n${code}`);

@@ -3,17 +3,13 @@ import { type CifBlock, type CifDocument, decodeCif, findLoop, findValue, readCi
 import { InputProblem } from "../lib/problem.ts";
 import { problemText } from "../lib/report/index.ts";
 import type { Arguments } from "./arguments.ts";
+import { LocatedProblem } from "./problems.ts";
 
 /** A file that was read, with its text for the printer of problems. */
 export interface Source {
   readonly file: string;
   readonly text: string;
   readonly document: CifDocument;
-}
-
-/** A fault together with the file it lies in, ready to print; ends with status 3. */
-export class LocatedProblem extends Error {
-  override readonly name = "LocatedProblem";
 }
 
 /** Most syntax errors of one file that are shown; the rest is counted. */

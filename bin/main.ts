@@ -1,8 +1,7 @@
-import { InputProblem } from "../lib/problem.ts";
+import type { InputProblem } from "../lib/problem.ts";
 import type { CommandSpec } from "./arguments.ts";
-import { UsageProblem } from "./arguments.ts";
-import { LocatedProblem } from "./input.ts";
-import { VERSION } from "./output.ts";
+import { UsageProblem } from "./problems.ts";
+import { VERSION } from "./version.ts";
 
 interface Command {
   readonly spec: CommandSpec;
@@ -41,13 +40,22 @@ function say(text: string): number {
   return 0;
 }
 
-/** Status and words for whatever ended a command; a stack is never shown. */
+/**
+ * Status and words for whatever ended a command; a stack is never shown. Commands are bundled apart from this file, so
+ * their errors are told by name, not by class.
+ */
 function conclude(e: unknown): number {
-  if (e instanceof UsageProblem)
-    return complain(`sitefold: ${e.message}\n  sitefold COMMAND --help tells what there is`, 2);
-  if (e instanceof LocatedProblem) return complain(e.message, 3);
-  if (e instanceof InputProblem) return complain(`${e.message}${e.hint ? `\n  ${e.hint}` : ""}`, 3);
-  return complain(`defect in sitefold ${VERSION}, please report it with the input: ${String(e)}`, 4);
+  const { name, message, hint } = e as Partial<InputProblem>;
+  switch (name as string | undefined) {
+    case "UsageProblem":
+      return complain(`sitefold: ${message}\n  sitefold COMMAND --help tells what there is`, 2);
+    case "LocatedProblem":
+      return complain(String(message), 3);
+    case "InputProblem":
+      return complain(`${message}${hint ? `\n  ${hint}` : ""}`, 3);
+    default:
+      return complain(`defect in sitefold ${VERSION}, please report it with the input: ${String(e)}`, 4);
+  }
 }
 
 function complain(text: string, status: number): number {

@@ -1,13 +1,8 @@
 import { rename, rm, writeFile } from "node:fs/promises";
 import { resolve } from "node:path";
 import type { Arguments } from "./arguments.ts";
-import { UsageProblem } from "./arguments.ts";
-import { LocatedProblem } from "./input.ts";
-
-declare const SITEFOLD_VERSION: string;
-
-/** Version of the package, set at build time. */
-export const VERSION: string = SITEFOLD_VERSION;
+import { LocatedProblem, UsageProblem } from "./problems.ts";
+import { VERSION } from "./version.ts";
 
 /** Fields that every JSON document begins with. */
 export interface Heading {

@@ -14,16 +14,10 @@ import {
   spaceGroup,
   type Transformation,
 } from "../../lib/symmetry/index.ts";
-import {
-  type Arguments,
-  COMMON_OPTIONS,
-  type CommandSpec,
-  onlyOperand,
-  parseArguments,
-  UsageProblem,
-} from "../arguments.ts";
+import { type Arguments, COMMON_OPTIONS, type CommandSpec, onlyOperand, parseArguments } from "../arguments.ts";
 import { answerQuestion, askCrystal } from "../ask.ts";
 import { deliver, jsonDocument } from "../output.ts";
+import { UsageProblem } from "../problems.ts";
 
 export const spec: CommandSpec = {
   name: "group",

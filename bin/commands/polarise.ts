@@ -1,8 +1,9 @@
 import { InputProblem } from "../../lib/problem.ts";
 import { polariseText } from "../../lib/report/index.ts";
 import { type PolariseOptions, polariseAnswer } from "../../lib/vibrations/index.ts";
-import { type Arguments, COMMON_OPTIONS, type CommandSpec, UsageProblem } from "../arguments.ts";
+import { type Arguments, COMMON_OPTIONS, type CommandSpec } from "../arguments.ts";
 import { answerQuestion, askCrystal } from "../ask.ts";
+import { UsageProblem } from "../problems.ts";
 
 export const spec: CommandSpec = {
   name: "polarise",

@@ -2,9 +2,10 @@ import { InputProblem } from "../../lib/problem.ts";
 import { correlationSvg, splitText } from "../../lib/report/index.ts";
 import { parseBondPatterns, parseUnitMembers } from "../../lib/structure/index.ts";
 import { type SplitOptions, splitAnswer } from "../../lib/vibrations/index.ts";
-import { type Arguments, COMMON_OPTIONS, type CommandSpec, UsageProblem } from "../arguments.ts";
+import { type Arguments, COMMON_OPTIONS, type CommandSpec } from "../arguments.ts";
 import { answerQuestion, askCrystal } from "../ask.ts";
 import { deliver } from "../output.ts";
+import { UsageProblem } from "../problems.ts";
 
 export const spec: CommandSpec = {
   name: "split",

@@ -8,6 +8,7 @@ import {
   type SpaceGroup,
   settingOperations,
   spaceGroup,
+  spaceGroupType,
 } from "../symmetry/index.ts";
 import type { Declared, DeclaredSymmetry, SymmetrySource } from "./declared-symmetry.ts";
 
@@ -29,7 +30,7 @@ export function compareStatements(
   identified: IdentifiedGroup,
   source: SymmetrySource,
 ): SymmetryDisagreement[] {
-  const { number, summary, setting } = identified;
+  const { number, summary } = identified;
   const found: SymmetryDisagreement[] = [];
   const check = (
     kind: SymmetryDisagreement["kind"],
@@ -41,16 +42,20 @@ export function compareStatements(
     const difference = differenceOf(statement, read, identified);
     if (difference) found.push({ kind, declared: statement, ...difference });
   };
-  const { short, full, older } = setting?.hermannMauguin ?? { short: "", full: "", older: null };
+  const { fullHermannMauguin, hermannMauguin } = spaceGroupType(number);
+  const names = [summary.hermannMauguin, ...(identified.isReference ? [hermannMauguin, fullHermannMauguin] : [])];
   check("hall", declared.hall, [summary.hall], (text) => meaningOfHall(text, number));
-  check("name", declared.hermannMauguin, [short, full, older ?? ""], (text) => meaningOfName(text, number));
+  check("name", declared.hermannMauguin, names, (text) => meaningOfName(text, number));
   check("number", declared.number, [String(number)], (text) => ({ numbers: [Number(text)], groups: null }));
   return found;
 }
 
-/** Letters, digits and signs of a symbol, for a comparison word for word. */
+/** Letters, digits and signs of a symbol, for a comparison word for word; hexagonal axes need not be said. */
 function bare(symbol: string): string {
-  return symbol.replace(/[\s_()]/g, "").toLowerCase();
+  return symbol
+    .replace(/[\s_()]/g, "")
+    .replace(/:h$/i, "")
+    .toLowerCase();
 }
 
 /** What a statement may mean: types, and all groups in the settings it allows (null: it says nothing of settings). */

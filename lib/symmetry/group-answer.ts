@@ -1,12 +1,6 @@
 import { addVectors, IDENTITY, ratMat3, subtractVectors, transformVector } from "../algebra/index.ts";
 import { pointGroup } from "../representation/index.ts";
-import {
-  type AffineForm,
-  formatForm,
-  formFromSetting,
-  imageOfForm,
-  isFixedBy,
-} from "./affine-form.ts";
+import { type AffineForm, formatForm, formFromSetting, imageOfForm, isFixedBy } from "./affine-form.ts";
 import { extendedSymbol } from "./extended-symbol.ts";
 import { geometricMeaning } from "./geometric-meaning.ts";
 import { type GroupProperties, groupProperties } from "./group-properties.ts";
@@ -16,7 +10,7 @@ import { reflectionConditions } from "./reflection-conditions.ts";
 import { assignWyckoff } from "./site-assignment.ts";
 import type { SpaceGroup } from "./space-group.ts";
 import { specialConditions } from "./special-reflection-conditions.ts";
-import type { IdentifiedGroup, SpaceGroupSummary } from "./summary.ts";
+import { conventionalSetting, type IdentifiedGroup, type SpaceGroupSummary } from "./summary.ts";
 import { wyckoffPositions } from "./wyckoff-positions.ts";
 
 export interface OperationAnswer {
@@ -60,7 +54,8 @@ export interface GroupAnswer {
 
 /** Operations with their meaning, reflection conditions and Wyckoff positions of a group in the setting in use. */
 export function groupAnswer(identified: IdentifiedGroup): GroupAnswer {
-  const { group, number, setting, summary } = identified;
+  const { group, number, summary } = identified;
+  const setting = conventionalSetting(identified);
   const { number: _number, geometricClass: _class, ...properties } = groupProperties(number, group.operations);
   const symbols = setting && {
     short: setting.hermannMauguin.short,
@@ -80,8 +75,7 @@ export function groupAnswer(identified: IdentifiedGroup): GroupAnswer {
 }
 
 function wyckoffAnswers(identified: IdentifiedGroup): WyckoffAnswer[] {
-  const { group, number, toReference, setting } = identified;
-  const reference = setting?.reference === true;
+  const { group, number, toReference, isReference: reference } = identified;
   return wyckoffPositions(number).map((position) => {
     const form = reference ? position.form : formFromSetting(position.form, toReference);
     const site = fixingOperations(group, form);

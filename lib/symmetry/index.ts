@@ -36,6 +36,12 @@ export {
   transformPoint,
 } from "./operation.ts";
 export { formatOperation, parseOperation } from "./operation-text.ts";
+export {
+  independentConditions,
+  isSystematicallyAbsent,
+  type ReflectionCondition,
+  reflectionConditions,
+} from "./reflection-conditions.ts";
 export { settingHall, settingOperations } from "./setting-group.ts";
 export { type Setting, settingsOf } from "./settings.ts";
 export {
@@ -47,7 +53,8 @@ export {
 export { type AssignmentGroup, assignWyckoff, type SiteAssignment } from "./site-assignment.ts";
 export { rotationIndex, rotationParts, type SpaceGroup, spaceGroup } from "./space-group.ts";
 export { type SpaceGroupType, spaceGroupType, spaceGroupTypes } from "./space-group-type.ts";
-export { type IdentifiedGroup, identifyGroup, type SpaceGroupSummary } from "./summary.ts";
+export { type SpecialCondition, specialConditions } from "./special-reflection-conditions.ts";
+export { conventionalSetting, type IdentifiedGroup, identifyGroup, type SpaceGroupSummary } from "./summary.ts";
 export {
   chain,
   IDENTITY_TRANSFORMATION,

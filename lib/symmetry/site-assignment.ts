@@ -128,7 +128,7 @@ function ownSymbol({ group, number, toReference }: AssignmentGroup, rotations: r
 }
 
 function find(number: number, points: FixedPoints, order: number): WyckoffPosition {
-  const position = positionAt(number, points.point, points.directions);
+  const position = positionAt(number, points.point, points.directions, order);
   if (position?.order !== order) throw unknown(number, order);
   return position;
 }

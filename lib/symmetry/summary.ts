@@ -1,11 +1,13 @@
-import { determinant, equal, MINUS_IDENTITY } from "../algebra/index.ts";
-import { type CrystalSystem, pointGroup } from "../representation/index.ts";
+import { determinant, equal, equalVectors, IDENTITY, MINUS_IDENTITY, ZERO_VECTOR } from "../algebra/index.ts";
+import { type CrystalClass, type CrystalSystem, crystalClasses } from "../representation/index.ts";
+import { arithmeticClassOf } from "./arithmetic-class.ts";
 import { hallSymbolBy } from "./hall-symbol-of.ts";
+import { directionSystem, formatSymbol, shortSymbol, splitSymbol } from "./hermann-mauguin-symbol.ts";
 import { identify } from "./identification.ts";
 import { type LabelFrames, ownFrame, referenceFrame } from "./label-frame.ts";
 import { matchingSetting } from "./matching-setting.ts";
 import { formatOperation } from "./operation-text.ts";
-import type { Setting } from "./settings.ts";
+import { type Setting, settingsOf } from "./settings.ts";
 import { rotationParts, type SpaceGroup } from "./space-group.ts";
 import { spaceGroupType } from "./space-group-type.ts";
 import type { Transformation } from "./transformation.ts";
@@ -36,40 +38,64 @@ export interface SpaceGroupSummary {
 export interface IdentifiedGroup {
   readonly group: SpaceGroup;
   readonly number: number;
-  /** The conventional setting that the group is written in, null for none. */
-  readonly setting: Setting | null;
+  /** Written exactly as the reference setting. */
+  readonly isReference: boolean;
   readonly summary: SpaceGroupSummary;
   readonly toReference: Transformation;
   readonly frames: LabelFrames;
 }
 
 /**
- * Identifies a group and sums up what is known of it.
+ * Identifies a group and sums up what is known of it. Settings are made only for a group that is not in its reference
+ * setting, since that costs more than all the rest.
  * @throws InputProblem `operations-no-space-group`
  */
 export function identifyGroup(group: SpaceGroup): IdentifiedGroup {
-  const { number, transformation } = identify(group.operations);
-  const type = spaceGroupType(number);
-  const setting = matchingSetting(number, group);
-  const toReference = setting?.reference ? setting.toReference : transformation;
+  const { number, transformation: toReference } = identify(group.operations);
+  const isReference = isIdentity(toReference);
   const rotations = rotationParts(group);
-  const reference = referenceFrame(toReference);
-  const point = pointGroup(rotations, reference);
-  const frames: LabelFrames = { own: ownFrame(group, point.crystalSystem, toReference), reference };
+  const crystalClass = classOfType(number);
+  const frames: LabelFrames = {
+    own: ownFrame(group, crystalClass.crystalSystem, toReference),
+    reference: referenceFrame(toReference),
+  };
   const summary: SpaceGroupSummary = {
     number,
-    hermannMauguin: setting?.hermannMauguin.short ?? type.hermannMauguin,
+    ...namesIn(number, isReference ? null : matchingSetting(number, group), isReference),
     hall: hallSymbolBy(group.operations, number, toReference),
-    schoenflies: type.schoenflies,
-    crystalSystem: point.crystalSystem,
-    pointGroup: { hermannMauguin: point.crystalClass, schoenflies: point.schoenflies },
-    settingName: setting ? (setting.reference ? "reference" : setting.name) : "unconventional",
-    referenceSymbol: type.hermannMauguin,
+    schoenflies: spaceGroupType(number).schoenflies,
+    crystalSystem: crystalClass.crystalSystem,
+    pointGroup: { hermannMauguin: crystalClass.hermannMauguin, schoenflies: crystalClass.schoenflies },
     toReference: { P: formatBasis(toReference.P), p: formatVector(toReference.p) },
     operations: group.operations.map(formatOperation),
     centrings: group.centrings.map(formatVector),
     centrosymmetric: rotations.some((W) => equal(W, MINUS_IDENTITY)),
     sohncke: rotations.every((W) => determinant(W) === 1),
   };
-  return { group, number, setting, summary, toReference, frames };
+  return { group, number, isReference, summary, toReference, frames };
+}
+
+/** The conventional setting in which a group is written, or null if it is in none. */
+export function conventionalSetting({ group, number, isReference }: IdentifiedGroup): Setting | null {
+  return isReference ? settingsOf(number)[0]! : matchingSetting(number, group);
+}
+
+function isIdentity({ P, p }: Transformation): boolean {
+  return P.d === 1 && equal(P.n, IDENTITY) && equalVectors(p, ZERO_VECTOR);
+}
+
+function namesIn(number: number, setting: Setting | null, isReference: boolean) {
+  const type = spaceGroupType(number);
+  const short = formatSymbol(shortSymbol(splitSymbol(type.fullHermannMauguin), directionSystem(number)));
+  return {
+    hermannMauguin: setting?.hermannMauguin.short ?? short,
+    settingName: isReference || setting?.reference ? "reference" : (setting?.name ?? "unconventional"),
+    referenceSymbol: short,
+  };
+}
+
+function classOfType(number: number): CrystalClass {
+  const { geometric } = arithmeticClassOf(number);
+  for (const found of crystalClasses().values()) if (found.hermannMauguin === geometric) return found;
+  throw new RangeError(`no crystal class ${geometric}`);
 }

@@ -27,7 +27,7 @@ export interface WyckoffPosition {
   readonly stabiliser: readonly number[];
 }
 
-const cache: (readonly WyckoffPosition[])[] = [];
+const cache: (WyckoffPosition | undefined)[][] = [];
 
 /**
  * Wyckoff positions of a space-group type (1 to 230) in the reference setting, in the order of their letters, the
@@ -35,12 +35,14 @@ const cache: (readonly WyckoffPosition[])[] = [];
  * @throws RangeError outside 1 to 230
  */
 export function wyckoffPositions(number: number): readonly WyckoffPosition[] {
-  const known = cache[number];
-  if (known) return known;
-  const sets = directionSets(number);
-  const fresh = tabulated(number).map((entry) => position(number, entry, sets));
-  cache[number] = fresh;
-  return fresh;
+  return tabulated(number).map((_, index) => wyckoffPosition(number, index));
+}
+
+/** One position by its place in that list, 0 for the letter a; worked out alone. */
+export function wyckoffPosition(number: number, index: number): WyckoffPosition {
+  cache[number] ??= [];
+  cache[number][index] ??= position(number, tabulated(number)[index]!, directionSets(number));
+  return cache[number][index];
 }
 
 /** Sets of symmetry directions that the site-symmetry symbols of a type name. */
@@ -58,13 +60,23 @@ export interface TabulatedPosition {
 }
 
 /** The table's entries of a type; its multiplicities and symbols serve only to check it. */
-export function tabulated(number: number): TabulatedPosition[] {
+export function tabulated(number: number): readonly TabulatedPosition[] {
+  const known = entries.get(number);
+  if (known) return known;
+  const fresh = readTable(number);
+  entries.set(number, fresh);
+  return fresh;
+}
+
+const entries = new Map<number, readonly TabulatedPosition[]>();
+
+function readTable(number: number): TabulatedPosition[] {
   const line =
     number < 75 ? WYCKOFF_1_74[number - 1] : number < 143 ? WYCKOFF_75_142[number - 75] : WYCKOFF_143_230[number - 143];
   if (line === undefined) throw new RangeError(`there is no space-group type ${number}`);
-  const [name, ...entries] = line.split("|");
+  const [name, ...positions] = line.split("|");
   if (name !== String(number)) throw new RangeError(`the table of Wyckoff positions has ${name} at ${number}`);
-  return entries.map((entry) => {
+  return positions.map((entry) => {
     const [label = "", siteSymmetry = "", representative = ""] = entry.split(" ");
     return { multiplicity: Number.parseInt(label, 10), letter: label.at(-1)!, siteSymmetry, representative };
   });
@@ -79,13 +91,17 @@ function position(number: number, entry: TabulatedPosition, sets: DirectionSets)
     if (isFixedBy(a, form)) stabiliser.push(i % count);
   });
   const rotations = stabiliser.map((i) => group.representatives[i]!.W);
+  let listed: readonly string[] | null = null;
   return {
     letter: entry.letter,
     multiplicity: group.operations.length / stabiliser.length,
     siteSymmetry: orientedSymbol(rotations, sets)!,
     order: stabiliser.length,
     representative: entry.representative,
-    coordinates: coordinates(number, form),
+    get coordinates() {
+      listed ??= coordinates(number, form); // long lists, which few ask for
+      return listed;
+    },
     form,
     stabiliser: stabiliser.sort((a, b) => a - b),
   };

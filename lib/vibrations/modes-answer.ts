@@ -66,7 +66,7 @@ export function modesAnswer(crystal: Crystal): ModesAnswer {
       axes: group.axes.text,
     },
     labelAxes: frames.own ? "file" : "reference",
-    labelsInReference: changedLabels(group, pointGroup(group.elements, frames.reference)),
+    labelsInReference: identified.isReference ? {} : changedLabels(group, pointGroup(group.elements, frames.reference)),
     classes: group.classes.map(({ name, size, directions }) => ({ name, size, directions })),
     irreps: modes.species.map((s, i) => ({
       label: s.label,

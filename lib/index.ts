@@ -1,0 +1,42 @@
+/**
+ * The public face: what most programs need, by name. Everything else is exported by its room: `sitefold/cif`,
+ * `sitefold/symmetry`, `sitefold/structure`, `sitefold/representation`, `sitefold/vibrations`, `sitefold/report`.
+ */
+export { type CifBlock, type CifDocument, decodeCif, readCif, writeCif } from "./cif/index.ts";
+export { InputProblem, locate, type ParseResult, type Place, requireClean, type Span } from "./problem.ts";
+export { problemText } from "./report/index.ts";
+export { molecularGroup, type PointGroup, pointGroup, pointGroupTable } from "./representation/index.ts";
+export {
+  type Crystal,
+  crystalFromBlock,
+  crystalOf,
+  molecularUnits,
+  POSITION_TOLERANCE,
+  type PositionsAnswer,
+  positionsAnswer,
+  type SitesAnswer,
+  sitesAnswer,
+} from "./structure/index.ts";
+export {
+  assignWyckoff,
+  type GroupAnswer,
+  groupAnswer,
+  identify,
+  identifyGroup,
+  parseOperation,
+  readGroupName,
+  reflectionConditions,
+  type SpaceGroup,
+  settingsOf,
+  spaceGroup,
+  wyckoffPositions,
+} from "./symmetry/index.ts";
+export {
+  factorGroupModes,
+  type ModesAnswer,
+  modesAnswer,
+  type PolariseAnswer,
+  polariseAnswer,
+  type SplitAnswer,
+  splitAnswer,
+} from "./vibrations/index.ts";
