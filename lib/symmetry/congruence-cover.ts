@@ -1,4 +1,4 @@
-import { mod } from "../algebra/index.ts";
+import { gcd, mod } from "../algebra/index.ts";
 import { type Congruence, generated, holds, type Residues, reduced } from "./congruence.ts";
 
 /** A set of classes of residues, as bits, with the congruences that single it out. */
@@ -38,15 +38,11 @@ export function coveringAlternatives(
   const bitsOf = (inside: (m: Residues) => boolean) =>
     classes.reduce((bits, m, i) => (inside(m) ? bits | (1n << BigInt(i)) : bits), 0n);
   const target = bitsOf((m) => keys.has(m.join()));
-  const singles = singleCandidates(characters, bitsOf);
-  let usable: Candidate[] = [];
-  let open: Candidate[] = [{ bits: bitsOf(() => true), list: [] }];
-  for (let size = 1; size <= LONGEST; size++) {
-    const joined = join(open, singles);
-    usable = [...usable, ...joined.filter((c) => (c.bits & ~target) === 0n)];
-    open = joined.filter((c) => (c.bits & ~target) !== 0n && (c.bits & target) !== 0n);
-    if (usable.reduce((bits, c) => bits | c.bits, 0n) === target) break;
-  }
+  const usable = usableCandidates(
+    singleCandidates(characters, bitsOf),
+    target,
+    bitsOf(() => true),
+  );
   const plain = cover(target, usable);
   if (!cyclic) return { alternatives: plain, shown: plain };
   const satisfied = (list: readonly Congruence[]) => bitsOf((m) => list.every((c) => holds(c, m)));
@@ -57,6 +53,30 @@ export function coveringAlternatives(
   const shown = cover(target, together);
   if (plain.length <= shown.length) return { alternatives: plain, shown: plain };
   return { alternatives: shown.flatMap(exchanged), shown };
+}
+
+/** Largest subsets of the target that up to LONGEST congruences single out; as few congruences as cover it all. */
+function usableCandidates(singles: readonly Candidate[], target: bigint, everything: bigint): Candidate[] {
+  let usable: Candidate[] = [];
+  let open: Candidate[] = [{ bits: everything, list: [] }];
+  let missing = target;
+  for (let size = 1; size <= LONGEST && missing !== 0n; size++) {
+    const joined = join(open, singles);
+    usable = largest([...usable, ...joined.filter((c) => (c.bits & ~target) === 0n)]);
+    missing = target & ~usable.reduce((bits, c) => bits | c.bits, 0n);
+    open = joined.filter((c) => (c.bits & ~target) !== 0n && (c.bits & missing) !== 0n);
+  }
+  return usable;
+}
+
+/** Candidates that lie in no other. */
+function largest(candidates: readonly Candidate[]): Candidate[] {
+  const sized = candidates.map((c) => ({ c, size: count(c.bits), cost: cost(c.list) }));
+  const kept: Candidate[] = [];
+  for (const { c } of sized.sort((a, b) => b.size - a.size || a.cost - b.cost)) {
+    if (!kept.some((k) => (c.bits & ~k.bits) === 0n)) kept.push(c);
+  }
+  return kept;
 }
 
 /** A list of congruences and what cyclic exchange of the three letters makes of it, equal ones once. */
@@ -82,8 +102,10 @@ function relevantCharacters(
   general: readonly Residues[],
   N: number,
 ): Congruence[] {
-  const keys = new Set(kept.map((m) => m.join()));
-  const periods = all.filter((t) => kept.every((m) => keys.has(m.map((e, i) => mod(e + t[i]!, N)).join())));
+  const place = (m: Residues) => m.reduce((sum, e) => sum * N + e, 0);
+  const inside = new Set(kept.map(place));
+  const sum = (m: Residues, t: Residues) => m.reduce((n, e, i) => n * N + ((e + t[i]!) % N), 0);
+  const periods = all.filter((t) => kept.every((m) => inside.has(sum(m, t))));
   const r = all[0]!.length;
   const every = generated(unit(r), N, r);
   const constant = every.filter((c) => periods.every((t) => mod(dot(c, t), N) === 0));
@@ -97,9 +119,9 @@ function relevantCharacters(
   for (const { c, form } of simple) {
     if (seen.has(c.join())) continue;
     // multiples by units and sums with general characters single out the same sets
-    for (let k = 1; k < N; k++) {
+    for (let k = 1; k < form.modulus; k++) {
+      if (gcd(k, form.modulus) !== 1) continue;
       const multiple = c.map((e) => mod(k * e, N));
-      if (reduced(multiple, N).modulus !== form.modulus) continue;
       for (const g of general) seen.add(multiple.map((e, i) => mod(e + g[i]!, N)).join());
     }
     found.push(form);
@@ -138,17 +160,20 @@ function singleCandidates(
 
 /** Intersections of an open candidate with one more congruence; of equal sets the cheapest. */
 function join(open: readonly Candidate[], singles: readonly Candidate[]): Candidate[] {
-  const best = new Map<bigint, Candidate>();
+  const best = new Map<bigint, { a: Candidate; b: Candidate; cost: number }>();
+  const costs = singles.map((b) => cost(b.list));
   for (const a of open) {
-    for (const b of singles) {
+    const own = cost(a.list);
+    singles.forEach((b, i) => {
       const bits = a.bits & b.bits;
-      if (bits === 0n || bits === a.bits) continue;
-      const list = [...a.list, ...b.list];
+      if (bits === 0n || bits === a.bits) return;
       const known = best.get(bits);
-      if (!known || cost(list) < cost(known.list)) best.set(bits, { bits, list });
-    }
+      const together = own + costs[i]!;
+      if (!known) best.set(bits, { a, b, cost: together });
+      else if (together < known.cost) Object.assign(known, { a, b, cost: together });
+    });
   }
-  return [...best.values()];
+  return [...best].map(([bits, { a, b }]) => ({ bits, list: [...a.list, ...b.list] }));
 }
 
 function cover(target: bigint, usable: readonly Candidate[]): Congruence[][] {

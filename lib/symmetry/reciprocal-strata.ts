@@ -11,6 +11,7 @@ import {
 } from "../algebra/index.ts";
 import { formThrough } from "./affine-form.ts";
 import { formatExpression } from "./affine-text.ts";
+import type { SpaceGroup } from "./space-group.ts";
 
 /** A class of reflections for which a condition may hold: all of them, or those in a zone or on a row of the lattice. */
 export interface Stratum {
@@ -32,7 +33,7 @@ export interface Stratum {
  * @param rotations all rotation parts of the group
  * @param fourIndices true to write i = -h-k, on hexagonal axes
  */
-export function reciprocalStrata(rotations: readonly IntMat3[], fourIndices: boolean): Stratum[] {
+function reciprocalStrata(rotations: readonly IntMat3[], fourIndices: boolean): Stratum[] {
   const found = new Map<string, readonly IntVec3[]>();
   for (const W of rotations.flatMap((m) => [m, negate(m)])) {
     const fixed = fixedReflections(W);
@@ -53,6 +54,18 @@ export function reciprocalStrata(rotations: readonly IntMat3[], fourIndices: boo
     chosen.push(named.sort((a, b) => rank(a, fourIndices) - rank(b, fourIndices) || (a.name < b.name ? -1 : 1))[0]!);
   }
   return chosen.sort((a, b) => b.basis.length - a.basis.length || order(a) - order(b) || (a.name < b.name ? -1 : 1));
+}
+
+const cache = new WeakMap<SpaceGroup, readonly Stratum[]>();
+
+/** The classes of reflections of a group, computed once. */
+export function strataOf(group: SpaceGroup): readonly Stratum[] {
+  const known = cache.get(group);
+  if (known) return known;
+  const rotations = group.representatives.map((a) => a.W);
+  const fresh = reciprocalStrata(rotations, onHexagonalAxes(rotations));
+  cache.set(group, fresh);
+  return fresh;
 }
 
 /** Whether hexagonal axes are in use: a threefold rotation about c that carries a onto b or -a-b. */

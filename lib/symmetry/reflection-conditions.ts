@@ -11,7 +11,7 @@ import {
 import { causeOf } from "./extinction-cause.ts";
 import { signedOrder } from "./geometric-class.ts";
 import type { Operation } from "./operation.ts";
-import { coordinatesIn, onHexagonalAxes, reciprocalStrata, type Stratum } from "./reciprocal-strata.ts";
+import { coordinatesIn, type Stratum, strataOf } from "./reciprocal-strata.ts";
 import type { SpaceGroup } from "./space-group.ts";
 
 /** A condition that reflections of a class must meet to be present. */
@@ -37,9 +37,8 @@ export interface ReflectionCondition {
  */
 export function reflectionConditions(group: SpaceGroup): ReflectionCondition[] {
   const N = group.operations.reduce((m, a) => lcm(m, a.w.d), 1);
-  const rotations = group.representatives.map((a) => a.W);
   const conditions: ReflectionCondition[] = [];
-  for (const stratum of reciprocalStrata(rotations, onHexagonalAxes(rotations))) {
+  for (const stratum of strataOf(group)) {
     const fixing = group.operations.filter((a) => stratum.basis.every((h) => fixes(a, h)));
     const size = stratum.basis.length;
     const wider = fixing.filter((a) => fixedDimension(a) > size);
@@ -79,18 +78,20 @@ export interface Characters {
   readonly N: number;
 }
 
-/** The characters that are trivial on every reflection of the class that the general conditions leave. */
+const cache = new WeakMap<SpaceGroup, Map<string, Characters>>();
+
+/** The characters that are trivial on every reflection of the class that the general conditions leave; kept. */
 export function generalCharacters(group: SpaceGroup, stratum: Stratum): Characters {
+  const byClass = cache.get(group) ?? new Map<string, Characters>();
+  cache.set(group, byClass);
+  const known = byClass.get(stratum.key);
+  if (known) return known;
   const N = group.operations.reduce((m, a) => lcm(m, a.w.d), 1);
   const fixing = group.operations.filter((a) => stratum.basis.every((h) => fixes(a, h)));
-  return {
-    characters: generated(
-      fixing.map((a) => characterOn(stratum, a, N)),
-      N,
-      stratum.basis.length,
-    ),
-    N,
-  };
+  const own = fixing.map((a) => characterOn(stratum, a, N));
+  const fresh = { characters: generated(own, N, stratum.basis.length), N };
+  byClass.set(stratum.key, fresh);
+  return fresh;
 }
 
 /** Whether a reflection is absent for every structure with this group; straight from the operations. */

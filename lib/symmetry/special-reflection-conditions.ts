@@ -1,8 +1,18 @@
-import { gcd, type IntVec3, lcm, mod, type RatVec3, subtractVectors } from "../algebra/index.ts";
+import {
+  addVectors,
+  gcd,
+  type IntVec3,
+  lcm,
+  mod,
+  modOne,
+  type RatVec3,
+  subtractVectors,
+  ZERO_VECTOR,
+} from "../algebra/index.ts";
 import { type AffineForm, imageOfForm } from "./affine-form.ts";
 import { congruencesOf, formatCongruences, type Residues } from "./congruence.ts";
 import { coveringAlternatives } from "./congruence-cover.ts";
-import { onHexagonalAxes, reciprocalStrata, type Stratum } from "./reciprocal-strata.ts";
+import { type Stratum, strataOf } from "./reciprocal-strata.ts";
 import {
   type Characters,
   generalCharacters,
@@ -23,11 +33,10 @@ export type SpecialCondition = Omit<ReflectionCondition, "cause" | "implied">;
  * Source: International Tables for Crystallography A (2016), section 2.1.3.13 (ii).
  */
 export function specialConditions(group: SpaceGroup, form: AffineForm): SpecialCondition[] {
-  const rotations = group.representatives.map((a) => a.W);
-  const cyclic = rotations.some((W) => W.join() === "0,0,1,1,0,0,0,1,0");
+  const cyclic = group.representatives.some(({ W }) => W.join() === "0,0,1,1,0,0,0,1,0");
   const orbit = pointsOf(group, form);
   const found: SpecialCondition[] = [];
-  for (const stratum of reciprocalStrata(rotations, onHexagonalAxes(rotations))) {
+  for (const stratum of strataOf(group)) {
     const general = smallest(generalCharacters(group, stratum), orbit);
     const present = presentResidues(orbit, stratum, general);
     if (!present) continue;
@@ -55,19 +64,20 @@ interface OrbitPoint {
 /** Points of the orbit modulo all translations: centrings only repeat the general integral condition. */
 function pointsOf(group: SpaceGroup, form: AffineForm): OrbitPoint[] {
   const points: OrbitPoint[] = [];
+  const seen = new Set<string>();
   for (const a of group.representatives) {
     const { M, t } = imageOfForm(a, form);
-    const directions = [0, 1, 2].map((j): IntVec3 => [M.n[j]!, M.n[3 + j]!, M.n[6 + j]!]);
-    const same = (p: OrbitPoint) =>
-      p.directions.join() === directions.join() && group.centrings.some((c) => equalModulo(p.t, t, c));
-    if (!points.some(same)) points.push({ directions, t });
+    const linear = M.n.join();
+    if (seen.has(pointKey(linear, t, ZERO_VECTOR))) continue;
+    for (const c of group.centrings) seen.add(pointKey(linear, t, c));
+    points.push({ directions: [0, 1, 2].map((j): IntVec3 => [M.n[j]!, M.n[3 + j]!, M.n[6 + j]!]), t });
   }
   return points.map((p) => ({ directions: p.directions, t: subtractVectors(p.t, points[0]!.t) }));
 }
 
-function equalModulo(a: RatVec3, b: RatVec3, c: RatVec3): boolean {
-  const d = lcm(lcm(a.d, b.d), c.d);
-  return a.n.every((e, i) => mod(e * (d / a.d) - b.n[i]! * (d / b.d) - c.n[i]! * (d / c.d), d) === 0);
+function pointKey(linear: string, t: RatVec3, shift: RatVec3): string {
+  const { n, d } = modOne(addVectors(t, shift));
+  return `${linear}|${n.join()}/${d}`;
 }
 
 interface Present {
