@@ -42,7 +42,8 @@ export function resolveSymmetry(declared: DeclaredSymmetry, metric: Metric, arbi
     );
   }
   const { group, source } = base;
-  const identified = identifyGroup(group);
+  const stated = Number(declared.number?.text);
+  const identified = identifyGroup(group, Number.isInteger(stated) ? stated : null);
   const disagreements = compareStatements(declared, identified, source);
   return { identified, source, notes: [...base.notes, ...disagreements.map((d) => d.message)], disagreements };
 }

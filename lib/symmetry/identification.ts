@@ -19,9 +19,10 @@ import { centringsOf, primitiveBasis } from "./centring.ts";
 import { type ClassLattice, classLattice, matrixCode, typeOfTranslations } from "./class-lattice.ts";
 import { conventionalAxes } from "./conventional-axes.ts";
 import { crystalFamily, type GeometricClass, geometricClass, signedOrder } from "./geometric-class.ts";
-import type { Operation } from "./operation.ts";
+import { type Operation, operationKey } from "./operation.ts";
 import { originShift } from "./origin-shift.ts";
-import type { Transformation } from "./transformation.ts";
+import { referenceGroup } from "./reference-group.ts";
+import { IDENTITY_TRANSFORMATION, type Transformation } from "./transformation.ts";
 
 /** Type of a space group, and the way to the reference setting of that type. */
 export interface Identification {
@@ -39,6 +40,7 @@ export interface Identification {
  * its reference setting, else the one with the fewest negative entries in P, then the smallest change of P, then the
  * smallest p. The result depends on nothing but the group.
  * @param operations a complete group with integer W; a list that is no group gives a meaningless answer or an error
+ * @param guess a type to try first: if the operations are exactly those of its reference setting, nothing is searched
  * @throws InputProblem `operations-no-space-group` if the rotation parts form no crystallographic point group that
  * keeps the lattice
  * Sources: R. W. Grosse-Kunstleve, Acta Cryst. A55 (1999) 383 (axes, change-of-basis candidates); origin from the
@@ -46,7 +48,10 @@ export interface Identification {
  * components that no origin shift alters (the class of the translations in the first cohomology of the point group:
  * H. Zassenhaus, Comment. Math. Helv. 21 (1948) 117).
  */
-export function identify(operations: readonly Operation[]): Identification {
+export function identify(operations: readonly Operation[], guess: number | null = null): Identification {
+  if (guess !== null && isReferenceOf(guess, operations)) {
+    return { number: guess, transformation: IDENTITY_TRANSFORMATION };
+  }
   const input = conventional(operations);
   for (const parent of arithmeticClasses(input.geometric)) {
     const lattice = classLattice(parent);
@@ -55,6 +60,15 @@ export function identify(operations: readonly Operation[]): Identification {
     if (found) return found;
   }
   throw noSpaceGroup("they belong to none of the 230 types");
+}
+
+/** Whether the operations are those of the reference setting of a type; false for a number that is none. */
+function isReferenceOf(number: number, operations: readonly Operation[]): boolean {
+  if (!Number.isInteger(number) || number < 1 || number > 230) return false;
+  const reference = referenceGroup(number);
+  if (reference.operations.length !== operations.length) return false;
+  const keys = new Set(operations.map(operationKey));
+  return reference.operations.every((a) => keys.has(operationKey(a)));
 }
 
 /** The group carried to conventional axes of its family. */

@@ -50,7 +50,13 @@ export {
   settleByCell,
   WRITTEN_METRIC_TOLERANCE,
 } from "./settle-by-cell.ts";
-export { type AssignmentGroup, assignWyckoff, type SiteAssignment } from "./site-assignment.ts";
+export {
+  type AssignmentGroup,
+  assignWyckoff,
+  nameSite,
+  type SiteAssignment,
+  type SiteName,
+} from "./site-assignment.ts";
 export { rotationIndex, rotationParts, type SpaceGroup, spaceGroup } from "./space-group.ts";
 export { type SpaceGroupType, spaceGroupType, spaceGroupTypes } from "./space-group-type.ts";
 export { type SpecialCondition, specialConditions } from "./special-reflection-conditions.ts";

@@ -9,7 +9,7 @@ import { orientedSymbol } from "./oriented-site-symmetry.ts";
 import { positionAt } from "./position-lookup.ts";
 import type { SpaceGroup } from "./space-group.ts";
 import { scalesAlike, type TensorConstraint, tensorConstraint } from "./tensor-constraint.ts";
-import { reverse, type Transformation, transformOperation } from "./transformation.ts";
+import { IDENTITY_TRANSFORMATION, reverse, type Transformation, transformOperation } from "./transformation.ts";
 import { directionSets, type WyckoffPosition } from "./wyckoff-positions.ts";
 
 /** A site of a crystal in its place among the Wyckoff positions of its space-group type. */
@@ -36,6 +36,12 @@ export interface SiteAssignment {
   /** `U` where the constraint holds for U_ij as it stands, `beta` where only for beta_ij (skew cells). */
   readonly tensorHoldsFor: "U" | "beta";
 }
+
+/** Position and site symmetry without the constraints, which cost more. */
+export type SiteName = Pick<
+  SiteAssignment,
+  "letter" | "multiplicity" | "referenceMultiplicity" | "siteSymmetry" | "order"
+>;
 
 /** What assigning sites asks of a group: itself, its type, the way to the reference setting. */
 export interface AssignmentGroup {
@@ -64,26 +70,37 @@ export function assignWyckoff(context: AssignmentGroup, site: readonly Operation
 
 const general = new WeakMap<AssignmentGroup, SiteAssignment>();
 
+/** The name of a site only, as `assignWyckoff` finds it. @throws InputProblem `site-group-unknown` */
+export function nameSite(context: AssignmentGroup, site: readonly Operation[]): SiteName {
+  return named(context, site, find(context, fixedPoints(carried(site, context)), site.length));
+}
+
+function named(context: AssignmentGroup, site: readonly Operation[], position: WyckoffPosition): SiteName {
+  const rotations = site.map((a) => a.W);
+  return {
+    letter: position.letter,
+    multiplicity: context.group.operations.length / site.length,
+    referenceMultiplicity: position.multiplicity,
+    siteSymmetry: ownSymbol(context, rotations) ?? position.siteSymmetry,
+    order: site.length,
+  };
+}
+
 function assign(context: AssignmentGroup, site: readonly Operation[]): SiteAssignment {
-  const { group, number, toReference } = context;
-  const inReference = fixedPoints(carried(site, number, toReference));
-  const position = find(number, inReference, site.length);
+  const inReference = fixedPoints(carried(site, context));
+  const position = find(context, inReference, site.length);
   const own = fixedPoints(site);
   const rotations = site.map((a) => a.W);
   const form = formThrough(own.point, own.directions);
   return {
-    letter: position.letter,
-    multiplicity: group.operations.length / site.length,
-    referenceMultiplicity: position.multiplicity,
-    siteSymmetry: ownSymbol(context, rotations) ?? position.siteSymmetry,
+    ...named(context, site, position),
     referenceSiteSymmetry: position.siteSymmetry,
-    order: site.length,
     constraint: formatForm(form),
     form,
     referenceConstraint: formatForm(formThrough(inReference.point, inReference.directions)),
     position,
     tensor: tensorConstraint(rotations),
-    tensorHoldsFor: holdsForU(rotations, group) ? "U" : "beta",
+    tensorHoldsFor: holdsForU(rotations, context.group) ? "U" : "beta",
   };
 }
 
@@ -95,7 +112,8 @@ function holdsForU(rotations: readonly IntMat3[], group: SpaceGroup): boolean {
 }
 
 /** The operations in the reference setting, still fixing the point as it stands there. */
-function carried(site: readonly Operation[], number: number, toReference: Transformation): Operation[] {
+function carried(site: readonly Operation[], { number, toReference }: AssignmentGroup): readonly Operation[] {
+  if (toReference === IDENTITY_TRANSFORMATION) return site;
   const back = reverse(toReference);
   return site.map((a) => {
     const moved = transformOperation(a, toReference, back);
@@ -127,7 +145,7 @@ function ownSymbol({ group, number, toReference }: AssignmentGroup, rotations: r
   return frame && frame.z[2] !== 0 ? orientedSymbol(rotations, directionSets(number)) : null;
 }
 
-function find(number: number, points: FixedPoints, order: number): WyckoffPosition {
+function find({ number }: AssignmentGroup, points: FixedPoints, order: number): WyckoffPosition {
   const position = positionAt(number, points.point, points.directions, order);
   if (position?.order !== order) throw unknown(number, order);
   return position;

@@ -48,11 +48,15 @@ export interface IdentifiedGroup {
 /**
  * Identifies a group and sums up what is known of it. Settings are made only for a group that is not in its reference
  * setting, since that costs more than all the rest.
+ * @param guess a type to try first, such as the number that the file states
  * @throws InputProblem `operations-no-space-group`
  */
-export function identifyGroup(group: SpaceGroup): IdentifiedGroup {
-  const { number, transformation: toReference } = identify(group.operations);
-  const isReference = isIdentity(toReference);
+export function identifyGroup(group: SpaceGroup, guess: number | null = null): IdentifiedGroup {
+  const { number, transformation } = identify(group.operations, guess);
+  const isReference = isIdentity(transformation);
+  const setting = isReference ? null : matchingSetting(number, group);
+  // of the many ways to the reference setting, letters of positions follow the one that defines the setting
+  const toReference = setting?.toReference ?? transformation;
   const rotations = rotationParts(group);
   const crystalClass = classOfType(number);
   const frames: LabelFrames = {
@@ -61,7 +65,7 @@ export function identifyGroup(group: SpaceGroup): IdentifiedGroup {
   };
   const summary: SpaceGroupSummary = {
     number,
-    ...namesIn(number, isReference ? null : matchingSetting(number, group), isReference),
+    ...namesIn(number, setting, isReference),
     hall: hallSymbolBy(group.operations, number, toReference),
     schoenflies: spaceGroupType(number).schoenflies,
     crystalSystem: crystalClass.crystalSystem,

@@ -1,6 +1,6 @@
 import { type PointGroup, pointGroup } from "../representation/index.ts";
 import type { Crystal } from "../structure/index.ts";
-import { assignWyckoff, type IdentifiedGroup } from "../symmetry/index.ts";
+import { type IdentifiedGroup, nameSite } from "../symmetry/index.ts";
 import { type FactorGroupModes, factorGroupModes, type ModeTotals, type SiteModes } from "./factor-group.ts";
 
 /** A species of the factor group as the JSON contract lays it out. */
@@ -88,7 +88,7 @@ export function modesAnswer(crystal: Crystal): ModesAnswer {
 }
 
 function siteModes(modes: SiteModes, identified: IdentifiedGroup, group: PointGroup): SiteModesAnswer {
-  const assigned = assignWyckoff(identified, modes.site.symmetry.operations);
+  const assigned = nameSite(identified, modes.site.symmetry.operations);
   return {
     label: modes.label,
     wyckoff: assigned.letter,
