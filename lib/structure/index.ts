@@ -96,6 +96,7 @@ export {
   reduceAnswer,
   type SymmetricCell,
 } from "./reduce-answer.ts";
+export { cross3, dot3, length3, minus3, unit3 } from "./rotation-fit.ts";
 export { type SiteSymmetry, siteSymmetry } from "./site-symmetry.ts";
 export { type SiteAnswer, type SitesAnswer, sitesAnswer } from "./sites-answer.ts";
 export { type AtomGroup, hillFormula, sequenceFormula, unitFormula } from "./unit-formula.ts";

@@ -59,8 +59,9 @@ export interface UnitSource {
   /** Invariant under the space group. */
   readonly metric: Metric;
   readonly atoms: readonly CellAtom[];
-  readonly bonds: readonly Bond[];
   readonly components: readonly Component[];
+  /** The bonds within each component. */
+  readonly bonds: readonly (readonly Bond[])[];
 }
 
 /** Components of a graph sorted into orbits of the space group, by the first of each; exact. */
@@ -101,10 +102,7 @@ export function describeUnit(source: UnitSource, action: AtomAction, orbit: Comp
   const members = [...source.components[orbit.first]!.members].sort((a, b) => a.atom - b.atom);
   const at = new Map(members.map((m, i) => [m.atom, i]));
   const unitAtoms = members.map((m) => unitAtom(source, m));
-  const within = bonds.flatMap((b) => {
-    const [i, j] = [at.get(b.first), at.get(b.second)];
-    return i !== undefined && j !== undefined ? [[i, j] as const] : [];
-  });
+  const within = bonds[orbit.first]!.map((b) => [at.get(b.first)!, at.get(b.second)!] as const);
   const elements = unitAtoms.map((a) => a.element);
   const masses = elements.map((e) => element(e)?.mass ?? 0);
   const centre = (weights: readonly number[]) => {

@@ -1,8 +1,8 @@
 import { gcd, type IntVec3, primitiveRow } from "../algebra/index.ts";
 import type { BondChoice } from "./bond-choice.ts";
-import { componentsOf } from "./bond-graph.ts";
+import { type Component, componentsOf } from "./bond-graph.ts";
 import type { BondOptions } from "./bond-overrides.ts";
-import { bondsOf } from "./bonds.ts";
+import { type Bond, bondsOf } from "./bonds.ts";
 import { AtomAction } from "./cell-atoms.ts";
 import type { Crystal } from "./crystal.ts";
 import { invariantMetric } from "./invariant-metric.ts";
@@ -57,7 +57,7 @@ export function molecularUnits(crystal: Crystal, options: BondOptions = {}): Uni
   const metric = invariantMetric(crystal.metric, crystal.group);
   const { atoms, bonds, choice, notes } = bondsOf({ ...crystal, metric }, options);
   const components = componentsOf(atoms.length, bonds);
-  const source: UnitSource = { crystal, metric, atoms, bonds, components };
+  const source: UnitSource = { crystal, metric, atoms, components, bonds: sorted(bonds, components) };
   const action = new AtomAction(crystal, atoms);
   const units: MolecularUnit[] = [];
   const extended: ExtendedUnit[] = [];
@@ -69,6 +69,17 @@ export function molecularUnits(crystal: Crystal, options: BondOptions = {}): Uni
     else loneAtoms.push(loneAtom(source, orbit));
   }
   return { units, extended, loneAtoms, choice, notes };
+}
+
+/** The bonds of each component. */
+function sorted(bonds: readonly Bond[], components: readonly Component[]): Bond[][] {
+  const owner = new Map<number, number>();
+  components.forEach((c, k) => {
+    for (const m of c.members) owner.set(m.atom, k);
+  });
+  const lists: Bond[][] = components.map(() => []);
+  for (const b of bonds) lists[owner.get(b.first)!]!.push(b);
+  return lists;
 }
 
 function loneAtom({ crystal, atoms, components }: UnitSource, orbit: ComponentOrbit): LoneAtom {

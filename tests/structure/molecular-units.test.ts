@@ -162,6 +162,7 @@ describe("molecularUnits", () => {
     ["chalcanthite", ["Cu(H2O)4 x 1", "Cu(H2O)4 x 1", "SO4 x 2", "H2O x 2"], [], []],
     ["potassium-dihydrogen-phosphate", ["H2PO4 x 2"], [], ["K"]],
     ["ammonium-chloride", ["NH4 x 1"], [], ["Cl"]],
+    ["vivianite", ["Fe(H2O)4 x 1", "PO4 x 2", "H2O x 4"], [], ["Fe2"]],
     ["urea", ["CH4N2O x 2"], [], []],
     ["fullerene-fm-3", ["C60 x 1"], [], []],
   ])("takes %s apart as chemists do", (name, units, extended, lone) => {
