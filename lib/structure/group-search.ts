@@ -9,7 +9,7 @@ import { closedSet, groupsContaining, type PartialTable, partialTable } from "./
 const SEARCH_FACTOR = 3;
 
 /** What is exact passes even where the tolerance is 0; rounding lies far below; angstrom. */
-const ROUNDING = 1e-6;
+export const ROUNDING = 1e-6;
 
 /** A group among the operations of a body, with exact matrices. */
 export interface GroupOfBody {

@@ -1,5 +1,6 @@
 import type { Body } from "./approximate-operations.ts";
 import { apply3, type Mat3, type Vec3 } from "./cell.ts";
+import { ROUNDING } from "./group-search.ts";
 import { cross3, dot3, length3, minus3, unit3 } from "./rotation-fit.ts";
 import { symmetricEigen } from "./symmetric-eigen.ts";
 
@@ -35,7 +36,9 @@ export function fitLine(
   const ends = highest === "Dinfh" ? paired(body, onLine) : null;
   const within = (places: readonly number[]) => {
     const idealised = places.map((t): Vec3 => [t * axis[0], t * axis[1], t * axis[2]]);
-    return idealised.every((q, k) => length3(minus3(q, points[k]!)) <= tolerance) ? idealised : null;
+    return idealised.every((q, k) => length3(minus3(q, points[k]!)) <= Math.max(tolerance, ROUNDING))
+      ? idealised
+      : null;
   };
   const centred = ends && within(ends);
   if (centred) return { schoenflies: "Dinfh", axis, idealised: centred, reverses };

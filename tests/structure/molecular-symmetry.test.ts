@@ -366,6 +366,11 @@ describe("linear molecules", () => {
     );
   });
 
+  test("are linear for a tolerance of 0 too, where symmetry makes them so", () => {
+    const unit = molecularUnits(fixture("carbon-dioxide")).units[0]!;
+    expect(molecularSymmetry(unit, { tolerance: 0 }).schoenflies).toBe("Dinfh");
+  });
+
   test("may be bent within the tolerance, and keep the site group on their axis", () => {
     const bent: Vec3[] = [
       [0, 0.06, 0],
