@@ -1,9 +1,9 @@
 import { InputProblem } from "../../lib/problem.ts";
 import { correlationSvg, splitText } from "../../lib/report/index.ts";
-import { parseBondPatterns, parseUnitMembers } from "../../lib/structure/index.ts";
+import { orderedModel, parseBondPatterns, parseUnitMembers } from "../../lib/structure/index.ts";
 import { type SplitOptions, splitAnswer } from "../../lib/vibrations/index.ts";
 import { type Arguments, COMMON_OPTIONS, type CommandSpec } from "../arguments.ts";
-import { answerQuestion, askCrystal } from "../ask.ts";
+import { answerQuestion, askCrystal, type Question } from "../ask.ts";
 import { deliver } from "../output.ts";
 import { UsageProblem } from "../problems.ts";
 
@@ -37,6 +37,10 @@ export const spec: CommandSpec = {
       value: "UNIT=GROUP",
       describe: 'take a lower group for a unit, "SO4=C2v"; may be repeated',
     },
+    ordered: {
+      type: "boolean",
+      describe: "where sites exclude each other, take an ordered model in a subgroup instead of the average",
+    },
     diagram: { type: "boolean", describe: "draw the correlation of each unit as text" },
     svg: { type: "boolean", describe: "print the correlation diagrams as SVG instead of the answer" },
   },
@@ -44,14 +48,25 @@ export const spec: CommandSpec = {
 };
 
 export async function run(words: readonly string[]): Promise<number> {
-  const question = await askCrystal(words, spec);
-  const { args } = question;
+  const asked = await askCrystal(words, spec);
+  const { args } = asked;
+  const question = args.flag("ordered") ? ordered(asked) : asked;
   const answer = usage(() => splitAnswer(question.crystal, readOptions(args)));
   if (args.flag("svg")) {
     await deliver(correlationSvg(answer.units, answer.factorGroup), args, question.file === "-" ? null : question.file);
     return 0;
   }
   return answerQuestion(question, answer, () => splitText(answer, args.flag("diagram")));
+}
+
+/** The same question of an ordered model of the crystal; unchanged, with a note, where none is needed or possible. */
+function ordered(asked: Question): Question {
+  const model = orderedModel(asked.crystal);
+  const note = model
+    ? `ordered model: of sites that exclude each other one is taken; the space group falls to a subgroup of index ${model.index}`
+    : "no ordered model: no sites exclude each other, or no subgroup of the same lattice orders them";
+  const heading = { ...asked.heading, notes: [...asked.heading.notes, note] };
+  return { ...asked, crystal: model?.crystal ?? asked.crystal, heading };
 }
 
 function readOptions(args: Arguments): SplitOptions {

@@ -43,7 +43,8 @@ export function compareStatements(
     if (difference) found.push({ kind, declared: statement, ...difference });
   };
   const { fullHermannMauguin, hermannMauguin } = spaceGroupType(number);
-  const names = [summary.hermannMauguin, ...(identified.isReference ? [hermannMauguin, fullHermannMauguin] : [])];
+  const own = summary.settingName === "unconventional" ? [] : [summary.hermannMauguin];
+  const names = [...own, ...(identified.isReference ? [hermannMauguin, fullHermannMauguin] : [])];
   check("hall", declared.hall, [summary.hall], (text) => meaningOfHall(text, number));
   check("name", declared.hermannMauguin, names, (text) => meaningOfName(text, number));
   check("number", declared.number, [String(number)], (text) => ({ numbers: [Number(text)], groups: null }));
@@ -96,10 +97,11 @@ function differenceOf(
     const inUse = (g: SpaceGroup) =>
       g.operations.length === keys.size && g.operations.every((a) => keys.has(operationKey(a)));
     if (groups === null || groups().some(inUse)) return null;
-    return {
-      level: "setting",
-      message: `${what} is the right type, No. ${number}, in another setting than the one in use`,
-    };
+    const primitive = group.centrings.length === 1 && /^\s*['"]?[ABCFIR]/i.test(statement.text);
+    const how = primitive
+      ? "but the operations are those of a primitive cell"
+      : "in another setting than the one in use";
+    return { level: "setting", message: `${what} is the right type, No. ${number}, ${how}` };
   } catch (e) {
     if (!(e instanceof InputProblem)) throw e;
     return { level: "unreadable", message: `${what} could not be read: ${e.message}` };
