@@ -24,7 +24,7 @@ export interface ConventionalCell {
 }
 
 /** How the axes may be changed within a conventional cell, and which of two cells is preferred. */
-interface Choice {
+export interface AxisChoice {
   readonly changes: readonly IntMat3[];
   /** Smaller is better, term by term. */
   readonly order: (g: Mat3) => readonly number[];
@@ -47,7 +47,7 @@ export function conventionalCell(axes: LatticeAxes, symmetry: LatticeSymmetry): 
 }
 
 function preferred(axes: LatticeAxes, type: BravaisType, start: RatMat3): RatMat3 {
-  const choice = choiceOf(type);
+  const choice = axisChoice(type);
   if (!choice) return start;
   let P = start;
   let best = choice.order(gramIn(axes, P));
@@ -72,7 +72,8 @@ function gramIn(axes: LatticeAxes, P: RatMat3): Mat3 {
 /** Differences below this share of the first term are ties; dimensionless. */
 const TIE = 1e-9;
 
-function precedes(x: readonly number[], y: readonly number[]): boolean {
+/** Whether terms come before others in order, rounding apart. */
+export function precedes(x: readonly number[], y: readonly number[]): boolean {
   const tie = TIE * Math.abs(y[0]!);
   for (let i = 0; i < x.length; i++) {
     if (x[i]! < y[i]! - tie) return true;
@@ -81,7 +82,8 @@ function precedes(x: readonly number[], y: readonly number[]): boolean {
   return false;
 }
 
-function choiceOf(type: BravaisType): Choice | null {
+/** The freedom of choice in a conventional cell of a type, null where symmetry leaves none. */
+export function axisChoice(type: BravaisType): AxisChoice | null {
   switch (type) {
     case "mP":
       return { changes: planeChanges(() => true), order: monoclinicOrder };

@@ -99,4 +99,21 @@ export {
 export { cross3, dot3, length3, minus3, unit3 } from "./rotation-fit.ts";
 export { type SiteSymmetry, siteSymmetry } from "./site-symmetry.ts";
 export { type SiteAnswer, type SitesAnswer, sitesAnswer } from "./sites-answer.ts";
+export {
+  type DisplacingOperation,
+  type FoundOperation,
+  type SymmetriseAnswer,
+  type SymmetrisedSite,
+  type SymmetriseOptions,
+  symmetriseAnswer,
+} from "./symmetrise-answer.ts";
+export { type CellChoice, type SymmetrisedCrystal, symmetrisedCrystal } from "./symmetrised-crystal.ts";
+export {
+  FARTHEST_DISPLACEMENT,
+  type HigherGroup,
+  SEARCH_TOLERANCE,
+  type SearchOptions,
+  type SymmetrySearch,
+  searchSymmetry,
+} from "./symmetry-search.ts";
 export { type AtomGroup, hillFormula, sequenceFormula, unitFormula } from "./unit-formula.ts";
