@@ -6,7 +6,9 @@ const WIDTH = 110;
 
 /** The whole answer of `group` for a person. */
 export function groupText(answer: GroupAnswer): string {
-  return [subject(answer), operationTable(answer), conditionTable(answer), wyckoffTable(answer)].join("\n\n");
+  const parts = [subject(answer), operationTable(answer), conditionTable(answer), wyckoffTable(answer)];
+  if (answer.letterExchanges.length > 0) parts.push(exchangeText(answer));
+  return parts.join("\n\n");
 }
 
 function subject({ spaceGroup: g }: GroupAnswer): string {
@@ -56,6 +58,19 @@ function wyckoffTable({ spaceGroup: { wyckoff } }: GroupAnswer): string {
     { heading: "extra conditions" },
   ];
   return `Wyckoff positions\n${textTable(columns, rows)}`;
+}
+
+/** Letters mean something only up to these changes, so a comparison of two structures must allow for them. */
+function exchangeText({ letterExchanges }: GroupAnswer): string {
+  const rows = letterExchanges.map(({ change, letters, anyCell }) => [
+    change,
+    Object.entries(letters)
+      .map(([from, to]) => `${from}->${to}`)
+      .join(" "),
+    anyCell ? "" : "only in a cell with these axes alike",
+  ]);
+  const columns = [{ heading: "axes;origin" }, { heading: "letters" }, { heading: "" }];
+  return `Choices of the reference setting that exchange letters\n${textTable(columns, rows)}`;
 }
 
 /** Coordinates of a position on as many lines as they need. */

@@ -1,6 +1,7 @@
 import { addVectors, IDENTITY, ratMat3, subtractVectors, transformVector } from "../algebra/index.ts";
 import { pointGroup } from "../representation/index.ts";
 import { type AffineForm, formatForm, formFromSetting, imageOfForm, isFixedBy } from "./affine-form.ts";
+import { letterExchanges } from "./euclidean-normaliser.ts";
 import { extendedSymbol } from "./extended-symbol.ts";
 import { geometricMeaning } from "./geometric-meaning.ts";
 import { type GroupProperties, groupProperties } from "./group-properties.ts";
@@ -11,6 +12,7 @@ import { assignWyckoff } from "./site-assignment.ts";
 import type { SpaceGroup } from "./space-group.ts";
 import { specialConditions } from "./special-reflection-conditions.ts";
 import { conventionalSetting, type IdentifiedGroup, type SpaceGroupSummary } from "./summary.ts";
+import { formatTransformation } from "./transformation-text.ts";
 import { wyckoffPositions } from "./wyckoff-positions.ts";
 
 export interface OperationAnswer {
@@ -39,6 +41,16 @@ export interface WyckoffAnswer {
   readonly conditions: readonly string[];
 }
 
+/** A change of the reference setting under which the group looks the same, and what becomes of the letters. */
+export interface LetterExchange {
+  /** `a,b,c;0,0,1/2`: new axes, then the new origin. */
+  readonly change: string;
+  /** New letter by old one, those that change. */
+  readonly letters: Readonly<Record<string, string>>;
+  /** False where only a cell of special shape allows it. */
+  readonly anyCell: boolean;
+}
+
 /** A space group in one setting: what `group` prints. */
 export interface GroupAnswer {
   readonly spaceGroup: Omit<SpaceGroupSummary, "operations"> &
@@ -50,6 +62,8 @@ export interface GroupAnswer {
     };
   /** The representatives modulo the centring translations, in their order. */
   readonly meanings: readonly OperationAnswer[];
+  /** Other choices of origin or axes of the reference setting that leave the operations alone but exchange letters. */
+  readonly letterExchanges: readonly LetterExchange[];
 }
 
 /** Operations with their meaning, reflection conditions and Wyckoff positions of a group in the setting in use. */
@@ -71,6 +85,11 @@ export function groupAnswer(identified: IdentifiedGroup): GroupAnswer {
   return {
     spaceGroup: { ...summary, ...properties, symbols, conditions, wyckoff: wyckoffAnswers(identified) },
     meanings: group.representatives.map((a) => ({ xyz: formatOperation(a), meaning: geometricMeaning(a).text })),
+    letterExchanges: letterExchanges(number).map(({ transformation, letters, anyCell }) => ({
+      change: formatTransformation(transformation),
+      letters: Object.fromEntries(Object.entries(letters).filter(([from, to]) => from !== to)),
+      anyCell,
+    })),
   };
 }
 

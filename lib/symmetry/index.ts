@@ -13,6 +13,7 @@ export {
   type ConditionAnswer,
   type GroupAnswer,
   groupAnswer,
+  type LetterExchange,
   type OperationAnswer,
   type WyckoffAnswer,
 } from "./group-answer.ts";
