@@ -1,8 +1,9 @@
 import { type IntMat3, inverseRatMat, type RatMat3, ratMat3 } from "../algebra/index.ts";
 import { InputProblem } from "../problem.ts";
+import type { AtomSite } from "./atom-site.ts";
 import { apply3, type Mat3, type Metric, type Vec3 } from "./cell.ts";
 import { cellAtoms } from "./cell-atoms.ts";
-import type { Crystal, CrystalSite } from "./crystal.ts";
+import type { Crystal } from "./crystal.ts";
 import { axesOf, type LatticeAxes } from "./lattice-axes.ts";
 import { niggliReduction } from "./niggli-reduction.ts";
 
@@ -59,7 +60,7 @@ export function wholeCell(crystal: Crystal): { readonly given: readonly GivenAto
 }
 
 /** Atoms are alike by element, charge apart, and occupancy; labels do not count. */
-function speciesName(site: CrystalSite): string {
+export function speciesName(site: AtomSite): string {
   return `${site.element ?? site.typeSymbol ?? site.label} ${site.occupancy.toFixed(3)}`;
 }
 
@@ -71,7 +72,8 @@ function speciesByRarity(names: readonly string[]): number[] {
   return names.map((name) => rank.get(name)!);
 }
 
-function atomSet(metric: Metric, basis: RatMat3, points: readonly Vec3[], species: Int32Array): AtomSet {
+/** @param points fractional in the cell of the metric */
+export function atomSet(metric: Metric, basis: RatMat3, points: readonly Vec3[], species: Int32Array): AtomSet {
   const back = floatMatrix(inverseRatMat(basis));
   const x = new Float64Array(3 * points.length);
   points.forEach((p, k) => {

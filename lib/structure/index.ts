@@ -18,6 +18,7 @@ export { type Component, componentsOf, type PeriodicEdge } from "./bond-graph.ts
 export type { BondOptions } from "./bond-overrides.ts";
 export { HALIDE_TOLERANCE, SHELL_GAP } from "./bond-rules.ts";
 export { type Bond, type BondList, bondsOf } from "./bonds.ts";
+export { type BrokenOperation, brokenOperations, type ListedCell } from "./broken-operations.ts";
 export {
   apply3,
   type Cell,
