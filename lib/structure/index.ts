@@ -37,6 +37,7 @@ export { AtomAction, type CellAtom, cellAtoms, type LatticeAtom } from "./cell-a
 export type { SymmetryDisagreement } from "./compare-statements.ts";
 export { cellContents, contentsMisfit } from "./composition.ts";
 export { BOND_TOLERANCE, type BondRule, NEAR_LIMIT, radiusSum } from "./contact-table.ts";
+export { type ConventionalCell, conventionalCell } from "./conventional-cell.ts";
 export { covalentRadius, RADII_SOURCE } from "./covalent-radius.ts";
 export {
   type Crystal,
@@ -71,6 +72,8 @@ export { type Element, element, readLabel, readTypeSymbol, type SpeciesReading }
 export { type Formula, formatFormula, hillOrder, parseFormula } from "./formula-text.ts";
 export { CENTRED_HYDROGEN } from "./hydrogen-rule.ts";
 export { invariantMetric } from "./invariant-metric.ts";
+export { axesOf, changeAxes, type LatticeAxes } from "./lattice-axes.ts";
+export { type LatticeSymmetry, latticeSymmetries } from "./lattice-symmetry.ts";
 export {
   type FiniteSymmetry,
   type LinearSymmetry,
@@ -85,6 +88,7 @@ export {
 export type { MolecularUnit, UnitAtom, UnitSite } from "./molecular-unit.ts";
 export { type ExtendedUnit, type LoneAtom, molecularUnits, type UnitAnalysis } from "./molecular-units.ts";
 export { type Contact, contactsWithin, type SearchResult } from "./neighbour-search.ts";
+export { niggliReduction } from "./niggli-reduction.ts";
 export { type Image, multiplicityOf, orbitOf, wrap } from "./orbit.ts";
 export { type OrderedModel, orderedModel } from "./ordered-model.ts";
 export { nearestDistance, PeriodicPoints } from "./periodic-points.ts";
