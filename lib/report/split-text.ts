@@ -1,4 +1,5 @@
 import type { InternalMode, SpeciesCounts, SplitAnswer, UnitAnswer } from "../vibrations/index.ts";
+import { plainSum, speciesContentText, unitContentText } from "./content-text.ts";
 import { correlationDiagram } from "./correlation-diagram.ts";
 import { formatNumber } from "./format-number.ts";
 import { type SpeciesTerm, speciesSum, typographicLabel } from "./species.ts";
@@ -43,6 +44,7 @@ function unitText(unit: UnitAnswer, answer: SplitAnswer): string {
   const fit = `atoms at most ${formatNumber(unit.deviation.largest, 3)} Å from it, ${formatNumber(unit.shapeTolerance, 2)} Å allowed`;
   const lines = [
     `free unit ${unit.pointGroup} (${fit}); site ${unit.siteSymmetry} (${unit.schoenflies}); factor group ${answer.factorGroup.schoenflies}`,
+    ...(unit.kinds.length > 0 ? [unitContentText(unit)] : []),
     ...(unit.freeSource ? [`wavenumbers of the free unit: ${unit.freeSource}`] : []),
   ];
   const columns: Column[] = [
@@ -56,9 +58,9 @@ function unitText(unit: UnitAnswer, answer: SplitAnswer): string {
     { heading: "what" },
   ];
   const rows = [
-    ...unit.internal.map((m) => internalRow(m, active)),
-    motionRow("librations", unit.librations, active),
-    motionRow("translations", unit.translations, active),
+    ...unit.internal.map((m) => internalRow(m, unit, active)),
+    ...librationRows(unit, active),
+    motionRow("translations", plainSum(unit.translations.free), unit.translations, active),
   ];
   const under = lines.map((l) => `  ${wrapText(l, WIDTH - 2, "    ")}`);
   return [wrapText(head, WIDTH, "    "), ...under, textTable(columns, rows)].join("\n");
@@ -73,7 +75,7 @@ function activityMarks({ activity }: SplitAnswer): Marks {
   return (label) => marks.get(label) ?? [];
 }
 
-function internalRow(m: InternalMode, active: Marks): string[] {
+function internalRow(m: InternalMode, unit: UnitAnswer, active: Marks): string[] {
   const free = `${m.count > 1 ? m.count : ""}${typographicLabel(m.species)}`;
   const marks = [...(m.free.raman ? ["R"] : []), ...(m.free.infrared ? ["IR"] : [])];
   return [
@@ -84,12 +86,27 @@ function internalRow(m: InternalMode, active: Marks): string[] {
     sumOf(m.factorGroup, active),
     m.infrared === 0 ? "." : String(m.infrared),
     m.raman === 0 ? "." : String(m.raman),
-    m.description ?? (m.count > 1 ? `each of the ${m.count} like this` : ""),
+    m.description ?? contentOf(m, unit),
   ];
 }
 
-function motionRow(what: string, m: UnitAnswer["librations"], active: Marks): string[] {
-  return [`  ${what}`, "", "", sumOf(m.site), sumOf(m.factorGroup, active)];
+/** What modes without a name are made of. */
+function contentOf({ species, count }: InternalMode, { content }: UnitAnswer): string {
+  const text = speciesContentText(content[species]);
+  return count > 1 ? `${text}; each like this` : text;
+}
+
+/** Librations of water one by one, since each has a name. */
+function librationRows(unit: UnitAnswer, active: Marks): string[][] {
+  const named = unit.librationsBySpecies.filter((l) => l.name !== "libration");
+  if (named.length === 0) return [motionRow("librations", plainSum(unit.librations.free), unit.librations, active)];
+  return named.map((l) => motionRow(`libration, ${l.name}`, typographicLabel(l.species), l, active));
+}
+
+type Motion = Pick<UnitAnswer["librations"], "site" | "factorGroup">;
+
+function motionRow(what: string, free: string, m: Motion, active: Marks): string[] {
+  return [`  ${what}`, free, "", sumOf(m.site), sumOf(m.factorGroup, active)];
 }
 
 function sumOf(counts: SpeciesCounts, active: Marks = () => []): string {

@@ -1,5 +1,15 @@
 /** Modes of a crystal at k = 0: sites to factor group, activities, counts. */
 export { type Activity, activities } from "./activity.ts";
+export {
+  COORDINATE_KINDS,
+  type CoordinateContent,
+  type CoordinateKind,
+  type CoordinateSet,
+  type CoordinateSetAnswer,
+  coordinateContent,
+  type KindContent,
+  rigidMotions,
+} from "./coordinate-content.ts";
 export { countedCharacters } from "./counted-characters.ts";
 export { type CrystalTensors, crystalTensors, hyperRamanTensors } from "./crystal-tensors.ts";
 export {
@@ -9,6 +19,7 @@ export {
   type ModeTotals,
   type SiteModes,
 } from "./factor-group.ts";
+export { freeUnitsLike, freeUnitsOf } from "./free-unit-names.ts";
 export {
   formatDirection,
   formatGeometry,
@@ -17,6 +28,7 @@ export {
   type WrittenDirection,
   type WrittenGeometry,
 } from "./geometry-text.ts";
+export { RANK_TOLERANCE } from "./invariant-span.ts";
 export { type IrrepAnswer, type ModesAnswer, modesAnswer, type SiteModesAnswer } from "./modes-answer.ts";
 export {
   type AllowedSpecies,
@@ -30,13 +42,20 @@ export {
 } from "./polarise-answer.ts";
 export { intensityOf, type PolarPart, type SpeciesScattering, scatteringOf } from "./raman-scattering.ts";
 export { type RotationCurve, type RotationTable, rotationTable } from "./rotation-curve.ts";
+export { type Scaffold, type Star, unitScaffold, unitStars } from "./scaffold.ts";
 export { type ScatteringGeometry, scatteringGeometry } from "./scattering-geometry.ts";
-export { BACKSCATTERING, type GeometryResult, geometryResult, separatingGeometries } from "./standard-geometries.ts";
-export { type VibratingSite, vibratingSites } from "./vibrating-sites.ts";
-export { freeUnitsLike, freeUnitsOf } from "./free-unit-names.ts";
 export type { SpeciesCounts } from "./species-counts.ts";
-export { type ExtendedAnswer, type LoneAtomAnswer, type SplitAnswer, type SplitOptions, splitAnswer } from "./split-answer.ts";
+export {
+  type ExtendedAnswer,
+  type LoneAtomAnswer,
+  type SplitAnswer,
+  type SplitOptions,
+  splitAnswer,
+} from "./split-answer.ts";
 export type { SplitSums } from "./split-sums.ts";
+export { BACKSCATTERING, type GeometryResult, geometryResult, separatingGeometries } from "./standard-geometries.ts";
 export type { FreeMode, FreeUnit } from "./tables/free-units.ts";
-export type { InternalMode, UnitAnswer, UnitMotions } from "./unit-answer.ts";
+export type { InternalMode, NamedLibration, UnitAnswer, UnitMotions } from "./unit-answer.ts";
+export { type KindAnswer, type SpeciesContent, type UnitContent, unitContent } from "./unit-content.ts";
 export { correlateUnit, type FreeSpeciesCorrelation, type UnitCorrelation } from "./unit-correlation.ts";
+export { type VibratingSite, vibratingSites } from "./vibrating-sites.ts";

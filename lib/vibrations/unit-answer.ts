@@ -1,10 +1,13 @@
 import type { Crystal, MolecularSymmetry, MolecularUnit } from "../structure/index.ts";
 import { assignWyckoff } from "../symmetry/index.ts";
 import { activities } from "./activity.ts";
+import type { CoordinateSetAnswer } from "./coordinate-content.ts";
 import type { FactorGroupModes } from "./factor-group.ts";
 import { freeUnitsLike } from "./free-unit-names.ts";
+import { rigidModes } from "./rigid-modes.ts";
 import { countsOf, type SpeciesCounts } from "./species-counts.ts";
 import type { FreeMode, FreeUnit } from "./tables/free-units.ts";
+import { type KindAnswer, type SpeciesContent, unitContent } from "./unit-content.ts";
 import type { FreeSpeciesCorrelation, UnitCorrelation } from "./unit-correlation.ts";
 
 /** One internal mode of the free unit (or several of one species) and what the crystal makes of it. */
@@ -31,6 +34,18 @@ export interface InternalMode {
 }
 
 export interface UnitMotions {
+  /** Species of the free unit. */
+  readonly free: SpeciesCounts;
+  readonly site: SpeciesCounts;
+  readonly factorGroup: SpeciesCounts;
+}
+
+/** Librations of one species. */
+export interface NamedLibration {
+  /** `twist`, `rock` and `wag` of water: about its twofold axis, in its plane, out of it; else `libration`. */
+  readonly name: "twist" | "rock" | "wag" | "libration";
+  readonly species: string;
+  readonly count: number;
   readonly site: SpeciesCounts;
   readonly factorGroup: SpeciesCounts;
 }
@@ -52,6 +67,13 @@ export interface UnitAnswer {
   readonly internal: readonly InternalMode[];
   readonly translations: UnitMotions;
   readonly librations: UnitMotions;
+  /** The librations one species of the free unit at a time; those of water by name. */
+  readonly librationsBySpecies: readonly NamedLibration[];
+  /** What the internal modes of each species of the free unit are made of. */
+  readonly content: Readonly<Record<string, SpeciesContent>>;
+  /** Stretches, bends and so on with their species; redundant ones told. */
+  readonly kinds: readonly KindAnswer[];
+  readonly coordinates: readonly CoordinateSetAnswer[];
   /** For every species of the site group, the species of the factor group that it gives. */
   readonly siteToFactorGroup: readonly { readonly site: string; readonly factorGroup: SpeciesCounts }[];
 }
@@ -70,10 +92,12 @@ export function unitAnswer(
   { unit, symmetry, correlation }: CorrelatedUnit,
 ): UnitAnswer {
   const free = freeUnitsLike(unit, symmetry.schoenflies)[0] ?? null;
-  const motions = (m: UnitCorrelation["translations"]): UnitMotions => ({
-    site: countsOf(correlation.siteGroup.irreps, m.site),
-    factorGroup: countsOf(modes.group.irreps, m.factorGroup),
+  const names = { site: correlation.siteGroup.irreps, factorGroup: modes.group.irreps };
+  const counts = (m: UnitCorrelation["translations"]) => ({
+    site: countsOf(names.site, m.site),
+    factorGroup: countsOf(names.factorGroup, m.factorGroup),
   });
+  const rigid = rigidModes(unit, symmetry, correlation);
   const fits = free !== null && namesFit(free, correlation.species);
   return {
     formula: unit.formula,
@@ -87,8 +111,10 @@ export function unitAnswer(
     siteSymmetry: assignWyckoff(crystal.identified, unit.site.operations).siteSymmetry,
     schoenflies: correlation.siteGroup.schoenflies,
     internal: correlation.species.flatMap((s) => internalModes(s, fits ? free : null, correlation, modes)),
-    translations: motions(correlation.translations),
-    librations: motions(correlation.librations),
+    translations: { free: rigid.translations, ...counts(correlation.translations) },
+    librations: { free: rigid.rotations, ...counts(correlation.librations) },
+    librationsBySpecies: rigid.librations.map((l) => ({ ...l, ...counts(l) })),
+    ...unitContent(unit, symmetry, correlation, names),
     siteToFactorGroup: correlation.siteGroup.irreps.map((r, i) => ({
       site: r.label,
       factorGroup: countsOf(modes.group.irreps, correlation.siteToFactorGroup[i]!),
