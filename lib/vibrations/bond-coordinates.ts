@@ -10,7 +10,7 @@ import {
   unit3,
   type Vec3,
 } from "../structure/index.ts";
-import type { InternalCoordinate } from "./internal-coordinates.ts";
+import type { InternalCoordinate } from "./internal-coordinate.ts";
 import type { SparseRow } from "./invariant-span.ts";
 import type { Scaffold } from "./scaffold.ts";
 

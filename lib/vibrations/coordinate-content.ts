@@ -1,6 +1,7 @@
 import { type CharacterTable, decompose } from "../representation/index.ts";
 import { cross3, type Vec3 } from "../structure/index.ts";
-import { type InternalCoordinate, internalCoordinates } from "./internal-coordinates.ts";
+import type { InternalCoordinate } from "./internal-coordinate.ts";
+import { internalCoordinates } from "./internal-coordinates.ts";
 import { InvariantSpan, type SparseRow } from "./invariant-span.ts";
 import type { Scaffold, Star } from "./scaffold.ts";
 import type { SpeciesCounts } from "./species-counts.ts";

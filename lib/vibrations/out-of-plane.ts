@@ -1,7 +1,7 @@
 import { determinant, trace } from "../algebra/index.ts";
 import { cross3, dot3, length3, type Mat3, minus3, unit3, type Vec3 } from "../structure/index.ts";
 import { across, along, times3 } from "./bond-coordinates.ts";
-import type { InternalCoordinate } from "./internal-coordinates.ts";
+import type { InternalCoordinate } from "./internal-coordinate.ts";
 import type { SparseRow } from "./invariant-span.ts";
 import type { Scaffold, Star } from "./scaffold.ts";
 
