@@ -35,6 +35,11 @@ export const COMMON_OPTIONS = {
   output: { type: "string", value: "FILE", alias: "o", describe: "write to FILE instead of the terminal" },
 } as const satisfies Record<string, OptionSpec>;
 
+/** For commands that write species. */
+export const SPECIES_OPTIONS = {
+  f: { type: "boolean", describe: "write F for triply degenerate species instead of T (JSON keeps T)" },
+} as const satisfies Record<string, OptionSpec>;
+
 export interface Arguments {
   readonly operands: readonly string[];
   readonly text: (name: string) => string | null;

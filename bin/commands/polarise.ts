@@ -1,7 +1,7 @@
 import { InputProblem } from "../../lib/problem.ts";
-import { polariseText } from "../../lib/report/index.ts";
+import { polariseText, speciesWriter } from "../../lib/report/index.ts";
 import { type PolariseOptions, polariseAnswer } from "../../lib/vibrations/index.ts";
-import { type Arguments, COMMON_OPTIONS, type CommandSpec } from "../arguments.ts";
+import { type Arguments, COMMON_OPTIONS, type CommandSpec, SPECIES_OPTIONS } from "../arguments.ts";
 import { answerQuestion, askCrystal } from "../ask.ts";
 import { UsageProblem } from "../problems.ts";
 
@@ -11,6 +11,7 @@ export const spec: CommandSpec = {
   summary: "Raman tensors, infrared dipoles and what each scattering geometry shows.",
   options: {
     ...COMMON_OPTIONS,
+    ...SPECIES_OPTIONS,
     geometry: {
       type: "string",
       many: true,
@@ -42,7 +43,9 @@ export async function run(words: readonly string[]): Promise<number> {
   const question = await askCrystal(words, spec);
   const options = readOptions(question.args);
   const answer = usage(() => polariseAnswer(question.crystal, options));
-  return answerQuestion(question, answer, () => polariseText(answer));
+  return answerQuestion(question, answer, () =>
+    polariseText(answer, speciesWriter(question.args.flag("f") ? "F" : "T")),
+  );
 }
 
 function readOptions(args: Arguments): PolariseOptions {

@@ -1,8 +1,8 @@
 import { InputProblem } from "../../lib/problem.ts";
-import { correlationSvg, splitText } from "../../lib/report/index.ts";
+import { correlationSvg, speciesWriter, splitText } from "../../lib/report/index.ts";
 import { orderedModel, parseBondPatterns, parseUnitMembers } from "../../lib/structure/index.ts";
 import { type SplitOptions, splitAnswer } from "../../lib/vibrations/index.ts";
-import { type Arguments, COMMON_OPTIONS, type CommandSpec } from "../arguments.ts";
+import { type Arguments, COMMON_OPTIONS, type CommandSpec, SPECIES_OPTIONS } from "../arguments.ts";
 import { answerQuestion, askCrystal, type Question } from "../ask.ts";
 import { deliver } from "../output.ts";
 import { UsageProblem } from "../problems.ts";
@@ -13,6 +13,7 @@ export const spec: CommandSpec = {
   summary: "Modes of molecules and ions: free unit to site group to factor group; internal, librations, translations.",
   options: {
     ...COMMON_OPTIONS,
+    ...SPECIES_OPTIONS,
     bond: { type: "string", many: true, value: "PAIR", describe: 'make this pair a bond, "W-O<1.95"; may be repeated' },
     "no-bond": {
       type: "string",
@@ -52,11 +53,16 @@ export async function run(words: readonly string[]): Promise<number> {
   const { args } = asked;
   const question = args.flag("ordered") ? ordered(asked) : asked;
   const answer = usage(() => splitAnswer(question.crystal, readOptions(args)));
+  const write = speciesWriter(args.flag("f") ? "F" : "T");
   if (args.flag("svg")) {
-    await deliver(correlationSvg(answer.units, answer.factorGroup), args, question.file === "-" ? null : question.file);
+    await deliver(
+      correlationSvg(answer.units, answer.factorGroup, write),
+      args,
+      question.file === "-" ? null : question.file,
+    );
     return 0;
   }
-  return answerQuestion(question, answer, () => splitText(answer, args.flag("diagram")));
+  return answerQuestion(question, answer, () => splitText(answer, args.flag("diagram"), write));
 }
 
 /** The same question of an ordered model of the crystal; unchanged, with a note, where none is needed or possible. */

@@ -1,5 +1,5 @@
-import type { SpeciesContent, SpeciesCounts, UnitAnswer } from "../vibrations/index.ts";
-import { speciesSum, typographicLabel } from "./species.ts";
+import type { SpeciesContent, UnitAnswer } from "../vibrations/index.ts";
+import type { SpeciesWriter } from "./species.ts";
 
 const KIND_NAMES: Readonly<Record<keyof SpeciesContent, readonly [one: string, many: string]>> = {
   stretch: ["stretch", "stretches"],
@@ -19,12 +19,15 @@ export function speciesContentText(content: SpeciesContent | undefined): string 
 }
 
 /** `stretches (4 S-O) A₁ + T₂; bends (6 O-S-O) E + T₂, redundant A₁`: the internal coordinates of a unit. */
-export function unitContentText({ kinds, coordinates }: Pick<UnitAnswer, "kinds" | "coordinates">): string {
+export function unitContentText(
+  { kinds, coordinates }: Pick<UnitAnswer, "kinds" | "coordinates">,
+  write: SpeciesWriter,
+): string {
   return kinds
     .map(({ kind, free, redundant }) => {
       const named = coordinateNames(coordinates.filter((c) => c.kind === kind));
-      const left = Object.keys(redundant).length > 0 ? `, redundant ${plainSum(redundant)}` : "";
-      return `${KIND_NAMES[kind][1]}${named ? ` (${named})` : ""} ${plainSum(free)}${left}`;
+      const left = Object.keys(redundant).length > 0 ? `, redundant ${write.sum(redundant)}` : "";
+      return `${KIND_NAMES[kind][1]}${named ? ` (${named})` : ""} ${write.sum(free)}${left}`;
     })
     .join("; ");
 }
@@ -34,9 +37,4 @@ export function coordinateNames(sets: readonly { readonly name: string; readonly
   const counts = new Map<string, number>();
   for (const { name, count } of sets) counts.set(name, (counts.get(name) ?? 0) + count);
   return [...counts].map(([name, n]) => `${n} ${name}`).join(", ");
-}
-
-/** A sum of species without marks. */
-export function plainSum(counts: SpeciesCounts): string {
-  return speciesSum(Object.entries(counts).map(([label, count]) => ({ label: typographicLabel(label), count })));
 }

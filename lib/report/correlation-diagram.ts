@@ -1,5 +1,5 @@
 import type { UnitAnswer } from "../vibrations/index.ts";
-import { typographicLabel } from "./species.ts";
+import { type SpeciesWriter, speciesWriter } from "./species.ts";
 
 /** One line of a diagram: a species of one level, and those of the next level that it leads to. */
 interface Level {
@@ -44,21 +44,25 @@ function freeLabel(species: string, names: readonly string[], count: number): st
  * The correlation as text, one line for each path: `A1' ν1 ── A1 ─┬─ A1g`. A species that several lead to is repeated, with its name
  * in parentheses from the second time on.
  */
-export function correlationDiagram(unit: UnitAnswer, factorGroup: { readonly schoenflies: string }): string {
+export function correlationDiagram(
+  unit: UnitAnswer,
+  factorGroup: { readonly schoenflies: string },
+  write: SpeciesWriter = speciesWriter(),
+): string {
   const levels = correlationLevels(unit, factorGroup);
-  const typeset = (text: string) => text.replace(/^\S+/, typographicLabel);
+  const typeset = (text: string) => text.replace(/^\S+/, (label) => write.label(label));
   const rows: [string, string, string][] = [];
   const drawn = new Set<string>();
   for (const f of levels.free) {
     f.to.forEach((s, i) => {
       const left = i === 0 ? typeset(f.label) : "";
       if (drawn.has(s)) {
-        rows.push([left, `(${typographicLabel(s)})`, "as above"]);
+        rows.push([left, `(${write.label(s)})`, "as above"]);
         return;
       }
       drawn.add(s);
       for (const [j, t] of levels.site.find((l) => l.label === s)!.to.entries()) {
-        rows.push([j === 0 ? left : "", j === 0 ? typographicLabel(s) : "", typographicLabel(t)]);
+        rows.push([j === 0 ? left : "", j === 0 ? write.label(s) : "", write.label(t)]);
       }
     });
   }

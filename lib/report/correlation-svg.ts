@@ -1,6 +1,6 @@
 import type { UnitAnswer } from "../vibrations/index.ts";
 import { correlationLevels } from "./correlation-diagram.ts";
-import { typographicLabel } from "./species.ts";
+import { type SpeciesWriter, speciesWriter } from "./species.ts";
 
 const ROW = 26;
 const COLUMNS = [90, 300, 510] as const;
@@ -8,11 +8,15 @@ const GAP = 58; // half the room that a label takes between two lines
 const TOP = 60;
 
 /** Correlation diagrams of all units as one SVG, one below the other; black lines on white, no fonts needed. */
-export function correlationSvg(units: readonly UnitAnswer[], factorGroup: { readonly schoenflies: string }): string {
+export function correlationSvg(
+  units: readonly UnitAnswer[],
+  factorGroup: { readonly schoenflies: string },
+  write: SpeciesWriter = speciesWriter(),
+): string {
   let y = 0;
   const pieces: string[] = [];
   for (const unit of units) {
-    const { body, height } = oneDiagram(unit, factorGroup, y);
+    const { body, height } = oneDiagram(unit, factorGroup, y, write);
     pieces.push(body);
     y += height;
   }
@@ -26,7 +30,12 @@ export function correlationSvg(units: readonly UnitAnswer[], factorGroup: { read
   ].join("\n");
 }
 
-function oneDiagram(unit: UnitAnswer, factorGroup: { readonly schoenflies: string }, top: number) {
+function oneDiagram(
+  unit: UnitAnswer,
+  factorGroup: { readonly schoenflies: string },
+  top: number,
+  write: SpeciesWriter,
+) {
   const levels = correlationLevels(unit, factorGroup);
   const rows = Math.max(levels.free.length, levels.site.length, levels.factorGroup.length);
   const height = TOP + rows * ROW + 24;
@@ -39,15 +48,22 @@ function oneDiagram(unit: UnitAnswer, factorGroup: { readonly schoenflies: strin
   const factor = place(levels.factorGroup);
   levels.free.forEach((f, i) => {
     const y = at(levels.free.length, i);
-    parts.push(text(COLUMNS[0], y + 5, f.label.replace(/^\S+/, typographicLabel), "middle"));
+    parts.push(
+      text(
+        COLUMNS[0],
+        y + 5,
+        f.label.replace(/^\S+/, (label) => write.label(label)),
+        "middle",
+      ),
+    );
     for (const s of f.to) parts.push(line(COLUMNS[0] + GAP, y, COLUMNS[1] - GAP / 2, site.get(s)!));
   });
   for (const s of levels.site) {
     const y = site.get(s.label)!;
-    parts.push(text(COLUMNS[1], y + 5, typographicLabel(s.label), "middle"));
+    parts.push(text(COLUMNS[1], y + 5, write.label(s.label), "middle"));
     for (const t of s.to) parts.push(line(COLUMNS[1] + GAP / 2, y, COLUMNS[2] - GAP / 2, factor.get(t)!));
   }
-  for (const [label, y] of factor) parts.push(text(COLUMNS[2], y + 5, typographicLabel(label), "middle"));
+  for (const [label, y] of factor) parts.push(text(COLUMNS[2], y + 5, write.label(label), "middle"));
   return { body: parts.join("\n"), height };
 }
 

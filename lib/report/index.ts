@@ -8,7 +8,17 @@ export { modesText } from "./modes-text.ts";
 export { polariseText } from "./polarise-text.ts";
 export { positionsText } from "./positions-text.ts";
 export { problemText } from "./problem-text.ts";
+export { reduceText } from "./reduce-text.ts";
 export { sitesText } from "./sites-text.ts";
-export { type SpeciesTerm, speciesSum, typographicLabel } from "./species.ts";
+export {
+  type SpeciesTerm,
+  type SpeciesWriter,
+  speciesSum,
+  speciesWriter,
+  type TripleLetter,
+  typographicLabel,
+} from "./species.ts";
 export { splitText } from "./split-text.ts";
+export { symmetriseText } from "./symmetrise-text.ts";
+export { symmetrisedCif } from "./symmetrised-cif.ts";
 export { type Column, textTable, wrapText } from "./table.ts";

@@ -1,16 +1,17 @@
 import type { IrrepAnswer, ModesAnswer } from "../vibrations/index.ts";
-import { type SpeciesTerm, speciesSum, typographicLabel } from "./species.ts";
+import { type SpeciesWriter, speciesWriter } from "./species.ts";
 import { type Column, textTable, wrapText } from "./table.ts";
 
 const WIDTH = 110;
 
 /** The whole answer of `modes` for a person, below the heading. */
-export function modesText(answer: ModesAnswer): string {
-  return [subject(answer), sums(answer), speciesTable(answer), siteTable(answer), countsText(answer)].join("\n\n");
+export function modesText(answer: ModesAnswer, write: SpeciesWriter = speciesWriter()): string {
+  const parts = [subject(answer, write), sums(answer, write), speciesTable(answer, write), siteTable(answer, write)];
+  return [...parts, countsText(answer)].join("\n\n");
 }
 
 /** What was reduced, and the axes of the labels. */
-function subject(answer: ModesAnswer): string {
+function subject(answer: ModesAnswer, write: SpeciesWriter): string {
   const { factorGroup, primitiveCellsInCell: cells, labelsInReference } = answer;
   const reduced = cells === 1 ? "the cell is primitive" : `the cell of the file holds ${cells} primitive cells`;
   const axes =
@@ -19,16 +20,20 @@ function subject(answer: ModesAnswer): string {
     `${answer.atomsInPrimitiveCell} vibrating atoms in the primitive cell (${reduced})`,
     `factor group ${factorGroup.hermannMauguin} (${factorGroup.schoenflies}); labels in the ${axes}${factorGroup.axes ? `: ${factorGroup.axes}` : ""}`,
   ];
-  const swaps = Object.entries(labelsInReference).map(([a, b]) => `${typographicLabel(a)} is ${typographicLabel(b)}`);
+  const swaps = Object.entries(labelsInReference).map(([a, b]) => `${write.label(a)} is ${write.label(b)}`);
   if (swaps.length > 0) lines.push(`in the axes of the reference setting ${swaps.join(", ")}`);
   return lines.map((line) => wrapText(line, WIDTH, "    ")).join("\n");
 }
 
 /** Species and activity as papers write them. */
-function sums(answer: ModesAnswer): string {
+function sums(answer: ModesAnswer, write: SpeciesWriter): string {
+  const activity = new Map(
+    answer.irreps.map((s) => [s.label, [...(s.raman ? ["R"] : []), ...(s.infrared ? ["IR"] : [])]]),
+  );
+  const marks = (label: string) => activity.get(label) ?? [];
   const line = (name: string, pick: (s: IrrepAnswer) => number, marked = false) => {
-    const text = `Γ(${name}) = ${speciesSum(answer.irreps.map((s) => term(s, pick(s), marked)))}`;
-    return wrapText(text, WIDTH, "    ");
+    const counts = Object.fromEntries(answer.irreps.map((s) => [s.label, pick(s)]));
+    return wrapText(`Γ(${name}) = ${write.sum(counts, marked ? marks : undefined)}`, WIDTH, "    ");
   };
   const only = (keep: (s: IrrepAnswer) => boolean) => (s: IrrepAnswer) => (keep(s) ? s.optic : 0);
   return [
@@ -50,12 +55,7 @@ function sums(answer: ModesAnswer): string {
   ].join("\n");
 }
 
-function term(s: IrrepAnswer, count: number, marked: boolean): SpeciesTerm {
-  const marks = marked ? [...(s.raman ? ["R"] : []), ...(s.infrared ? ["IR"] : [])] : [];
-  return { label: typographicLabel(s.label), count, marks };
-}
-
-function speciesTable(answer: ModesAnswer): string {
+function speciesTable(answer: ModesAnswer, write: SpeciesWriter): string {
   const right = { align: "right" } as const;
   const columns: Column[] = [
     { heading: "species" },
@@ -67,7 +67,7 @@ function speciesTable(answer: ModesAnswer): string {
     { heading: "hyper-Raman" },
   ];
   const rows = answer.irreps.map((s) => [
-    typographicLabel(s.label),
+    write.label(s.label),
     String(s.dimension),
     String(s.total),
     String(s.acoustic),
@@ -79,21 +79,21 @@ function speciesTable(answer: ModesAnswer): string {
 }
 
 /** Which species each site reaches, one column per species of the factor group. */
-function siteTable(answer: ModesAnswer): string {
+function siteTable(answer: ModesAnswer, write: SpeciesWriter): string {
   const columns: Column[] = [
     { heading: "site" },
     { heading: "position" },
     { heading: "symmetry" },
     { heading: "atoms", align: "right" },
     { heading: "displacement in the site group" },
-    ...answer.irreps.map((s): Column => ({ heading: typographicLabel(s.label), align: "right" })),
+    ...answer.irreps.map((s): Column => ({ heading: write.label(s.label), align: "right" })),
   ];
   const rows = answer.sites.map((site) => [
     site.label,
     site.referencePosition,
     `${site.siteSymmetry} (${site.schoenflies})`,
     String(site.atoms),
-    speciesSum(Object.entries(site.siteSpecies).map(([label, count]) => ({ label: typographicLabel(label), count }))),
+    write.sum(site.siteSpecies),
     ...answer.irreps.map((s) => String(site.contributions[s.label] ?? ".")),
   ]);
   return textTable(columns, rows);

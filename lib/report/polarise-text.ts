@@ -1,21 +1,21 @@
 import type { DipoleAnswer, GeometryAnswer, PolariseAnswer, RamanTensorAnswer } from "../vibrations/index.ts";
 import { formatNumber } from "./format-number.ts";
-import { typographicLabel } from "./species.ts";
+import { type SpeciesWriter, speciesWriter } from "./species.ts";
 import { type Column, textTable, wrapText } from "./table.ts";
 
 const WIDTH = 110;
 
 /** The whole answer of `polarise` for a person, below the heading. */
-export function polariseText(answer: PolariseAnswer): string {
+export function polariseText(answer: PolariseAnswer, write: SpeciesWriter = speciesWriter()): string {
   const parts = [
     subject(answer),
-    `Raman tensors (a dot is 0; letters are measured numbers):\n\n${answer.tensors.map(tensorText).join("\n\n")}`,
-    `Infrared dipoles:\n${answer.dipoles.map(dipoleText).join("\n") || "  none"}`,
+    `Raman tensors (a dot is 0; letters are measured numbers):\n\n${answer.tensors.map((t) => tensorText(t, write)).join("\n\n")}`,
+    `Infrared dipoles:\n${answer.dipoles.map((d) => dipoleText(d, write)).join("\n") || "  none"}`,
   ];
-  if (answer.geometries.length > 0) parts.push(`Geometries asked for:\n${geometryTable(answer.geometries)}`);
-  parts.push(`Backscattering from the faces normal to z, x and y:\n${geometryTable(answer.faces)}`);
-  parts.push(separatingText(answer));
-  if (answer.rotation) parts.push(rotationText(answer.rotation));
+  if (answer.geometries.length > 0) parts.push(`Geometries asked for:\n${geometryTable(answer.geometries, write)}`);
+  parts.push(`Backscattering from the faces normal to z, x and y:\n${geometryTable(answer.faces, write)}`);
+  parts.push(separatingText(answer, write));
+  if (answer.rotation) parts.push(rotationText(answer.rotation, write));
   parts.push(wrapText(CAUTION, WIDTH));
   return parts.join("\n\n");
 }
@@ -33,8 +33,8 @@ function subject({ frame, labelAxes, factorGroup, piezoelectric }: PolariseAnswe
 }
 
 /** Partners side by side, three rows each. */
-function tensorText({ irrep, modes, tensor }: RamanTensorAnswer): string {
-  const head = `${typographicLabel(irrep)} (${modes} optic)`;
+function tensorText({ irrep, modes, tensor }: RamanTensorAnswer, write: SpeciesWriter): string {
+  const head = `${write.label(irrep)} (${modes} optic)`;
   const blocks = tensor.map((rows) => {
     const width = Math.max(...rows.flat().map((e) => e.length));
     return rows.map((row) => `[ ${row.map((e) => e.padStart(width)).join("  ")} ]`);
@@ -43,41 +43,41 @@ function tensorText({ irrep, modes, tensor }: RamanTensorAnswer): string {
   return lines.map((line, i) => `${(i === 1 ? head : "").padEnd(16)}${line}`).join("\n");
 }
 
-function dipoleText({ irrep, modes, directions, raman }: DipoleAnswer): string {
+function dipoleText({ irrep, modes, directions, raman }: DipoleAnswer, write: SpeciesWriter): string {
   const along = directions.map((d) => `(${d.map((e) => (e === "." ? "0" : e)).join(", ")})`).join(" and ");
-  return `  ${typographicLabel(irrep)} (${modes} optic): ${along}${raman ? ", LO and TO differ in Raman too" : ""}`;
+  return `  ${write.label(irrep)} (${modes} optic): ${along}${raman ? ", LO and TO differ in Raman too" : ""}`;
 }
 
-function geometryTable(geometries: readonly GeometryAnswer[]): string {
+function geometryTable(geometries: readonly GeometryAnswer[], write: SpeciesWriter): string {
   const columns: Column[] = [
     { heading: "  geometry" },
     { heading: "species seen, with tensor element and amplitude of each partner" },
   ];
   return textTable(
     columns,
-    geometries.map((g) => [`  ${g.geometry}`, g.allowed.map(allowedText).join("; ") || "nothing"]),
+    geometries.map((g) => [`  ${g.geometry}`, g.allowed.map((a) => allowedText(a, write)).join("; ") || "nothing"]),
   );
 }
 
-function allowedText(a: GeometryAnswer["allowed"][number]): string {
+function allowedText(a: GeometryAnswer["allowed"][number], write: SpeciesWriter): string {
   const part = a.part === null ? "" : ` ${a.part === "undetermined" ? "LO or TO" : a.part}`;
-  return `${typographicLabel(a.irrep)}${part} ${a.element}: ${a.tensor.join(" | ")}`;
+  return `${write.label(a.irrep)}${part} ${a.element}: ${a.tensor.join(" | ")}`;
 }
 
-function separatingText({ separating, tensors }: PolariseAnswer): string {
+function separatingText({ separating, tensors }: PolariseAnswer, write: SpeciesWriter): string {
   if (separating === null) return "No five of the axial geometries tell all Raman species apart.";
   if (!tensors.some((t) => t.modes > 0)) return "No mode of this crystal is Raman active in first order.";
   const list = separating.map((g) => g.geometry).join(", ");
-  return `Shortest set that tells all Raman species with modes apart: ${list}\n${geometryTable(separating)}`;
+  return `Shortest set that tells all Raman species with modes apart: ${list}\n${geometryTable(separating, write)}`;
 }
 
-function rotationText(rotation: NonNullable<PolariseAnswer["rotation"]>): string {
+function rotationText(rotation: NonNullable<PolariseAnswer["rotation"]>, write: SpeciesWriter): string {
   const { angles, curves } = rotation;
   const shown = curves.filter((c) => [...c.parallel, ...c.crossed].some((e) => e > 1e-9));
   const columns: Column[] = [
     { heading: "  angle", align: "right" },
     ...shown.flatMap((c): Column[] => [
-      { heading: `${typographicLabel(c.label)} parallel`, align: "right" },
+      { heading: `${write.label(c.label)} parallel`, align: "right" },
       { heading: "crossed", align: "right" },
     ]),
   ];

@@ -15,6 +15,25 @@ function termText({ label, count, marks = [] }: SpeciesTerm): string {
   return `${count === 1 ? "" : count}${label}${marks.length > 0 ? `(${marks.join(",")})` : ""}`;
 }
 
+/** Letter of triply degenerate species: Mulliken's T, or the older F of much infrared and Raman literature. */
+export type TripleLetter = "T" | "F";
+
+/** How species are written for people. Views take one, so that a choice of notation is made in one place. */
+export interface SpeciesWriter {
+  readonly label: (label: string) => string;
+  /** A sum in the order of the counts; `marks` gives what is appended to a species, such as R or IR. */
+  readonly sum: (counts: Readonly<Record<string, number>>, marks?: (label: string) => readonly string[]) => string;
+}
+
+export function speciesWriter(triple: TripleLetter = "T"): SpeciesWriter {
+  const label = (text: string) => typographicLabel(text.replace(/^T/, triple));
+  return {
+    label,
+    sum: (counts, marks = () => []) =>
+      speciesSum(Object.entries(counts).map(([l, count]) => ({ label: label(l), count, marks: marks(l) }))),
+  };
+}
+
 const SUBSCRIPTS = "₀₁₂₃₄₅₆₇₈₉";
 
 /** A Mulliken label set for people: digits as subscripts, primes as primes; letters g and u stay on the line. */

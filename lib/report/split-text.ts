@@ -1,19 +1,20 @@
 import type { InternalMode, SpeciesCounts, SplitAnswer, UnitAnswer } from "../vibrations/index.ts";
-import { plainSum, speciesContentText, unitContentText } from "./content-text.ts";
+import { speciesContentText, unitContentText } from "./content-text.ts";
 import { correlationDiagram } from "./correlation-diagram.ts";
 import { formatNumber } from "./format-number.ts";
-import { type SpeciesTerm, speciesSum, typographicLabel } from "./species.ts";
+import { type SpeciesWriter, speciesWriter } from "./species.ts";
 import { type Column, textTable, wrapText } from "./table.ts";
 
 const WIDTH = 110;
 
 /** The whole answer of `split` for a person, below the heading. */
-export function splitText(answer: SplitAnswer, diagrams = false): string {
-  const parts = [subject(answer), ...answer.units.map((u) => unitText(u, answer))];
-  if (diagrams) parts.push(...answer.units.map((u) => correlationDiagram(u, answer.factorGroup)));
-  if (answer.loneAtoms.length > 0) parts.push(loneText(answer));
-  if (answer.extended.length > 0) parts.push(extendedText(answer));
-  parts.push(sumsText(answer));
+export function splitText(answer: SplitAnswer, diagrams = false, species: SpeciesWriter = speciesWriter()): string {
+  const write = activeWriter(answer, species);
+  const parts = [subject(answer), ...answer.units.map((u) => unitText(u, answer, write))];
+  if (diagrams) parts.push(...answer.units.map((u) => correlationDiagram(u, answer.factorGroup, species)));
+  if (answer.loneAtoms.length > 0) parts.push(loneText(answer, write));
+  if (answer.extended.length > 0) parts.push(extendedText(answer, write));
+  parts.push(sumsText(answer, write));
   return parts.join("\n\n");
 }
 
@@ -37,14 +38,13 @@ function range(shortest: number, longest: number): string {
   return a === b ? `${a} Å` : `${a} to ${b} Å`;
 }
 
-function unitText(unit: UnitAnswer, answer: SplitAnswer): string {
-  const active = activityMarks(answer);
+function unitText(unit: UnitAnswer, answer: SplitAnswer, write: ActiveWriter): string {
   const name = unit.freeName ? ` (${unit.freeName})` : "";
   const head = `${unit.formula}${name}, ${unit.count} in the primitive cell: ${unit.labels.join(" ")}`;
   const fit = `atoms at most ${formatNumber(unit.deviation.largest, 3)} Å from it, ${formatNumber(unit.shapeTolerance, 2)} Å allowed`;
   const lines = [
     `free unit ${unit.pointGroup} (${fit}); site ${unit.siteSymmetry} (${unit.schoenflies}); factor group ${answer.factorGroup.schoenflies}`,
-    ...(unit.kinds.length > 0 ? [unitContentText(unit)] : []),
+    ...(unit.kinds.length > 0 ? [unitContentText(unit, write)] : []),
     ...(unit.freeSource ? [`wavenumbers of the free unit: ${unit.freeSource}`] : []),
   ];
   const columns: Column[] = [
@@ -58,32 +58,35 @@ function unitText(unit: UnitAnswer, answer: SplitAnswer): string {
     { heading: "what" },
   ];
   const rows = [
-    ...unit.internal.map((m) => internalRow(m, unit, active)),
-    ...librationRows(unit, active),
-    motionRow("translations", plainSum(unit.translations.free), unit.translations, active),
+    ...unit.internal.map((m) => internalRow(m, unit, write)),
+    ...librationRows(unit, write),
+    motionRow("translations", write.sum(unit.translations.free), unit.translations, write),
   ];
   const under = lines.map((l) => `  ${wrapText(l, WIDTH - 2, "    ")}`);
   return [wrapText(head, WIDTH, "    "), ...under, textTable(columns, rows)].join("\n");
 }
 
-type Marks = (label: string) => readonly string[];
+/** Writes species, and sums over the factor group with their activity. */
+interface ActiveWriter extends SpeciesWriter {
+  readonly activeSum: (counts: SpeciesCounts) => string;
+}
 
-function activityMarks({ activity }: SplitAnswer): Marks {
+function activeWriter({ activity }: SplitAnswer, species: SpeciesWriter): ActiveWriter {
   const marks = new Map(
     activity.map((a) => [a.label, [...(a.raman ? ["R"] : []), ...(a.infrared ? ["IR"] : [])] as const]),
   );
-  return (label) => marks.get(label) ?? [];
+  return { ...species, activeSum: (counts) => species.sum(counts, (label) => marks.get(label) ?? []) };
 }
 
-function internalRow(m: InternalMode, unit: UnitAnswer, active: Marks): string[] {
-  const free = `${m.count > 1 ? m.count : ""}${typographicLabel(m.species)}`;
+function internalRow(m: InternalMode, unit: UnitAnswer, write: ActiveWriter): string[] {
+  const free = `${m.count > 1 ? m.count : ""}${write.label(m.species)}`;
   const marks = [...(m.free.raman ? ["R"] : []), ...(m.free.infrared ? ["IR"] : [])];
   return [
     `  ${m.name ? m.name.replace(/^nu/, "ν") : "internal"}`,
     free + (marks.length > 0 ? `(${marks.join(",")})` : ""),
     m.freeWavenumber === null ? "" : String(m.freeWavenumber),
-    sumOf(m.site),
-    sumOf(m.factorGroup, active),
+    write.sum(m.site),
+    write.activeSum(m.factorGroup),
     m.infrared === 0 ? "." : String(m.infrared),
     m.raman === 0 ? "." : String(m.raman),
     m.description ?? contentOf(m, unit),
@@ -97,34 +100,24 @@ function contentOf({ species, count }: InternalMode, { content }: UnitAnswer): s
 }
 
 /** Librations of water one by one, since each has a name. */
-function librationRows(unit: UnitAnswer, active: Marks): string[][] {
+function librationRows(unit: UnitAnswer, write: ActiveWriter): string[][] {
   const named = unit.librationsBySpecies.filter((l) => l.name !== "libration");
-  if (named.length === 0) return [motionRow("librations", plainSum(unit.librations.free), unit.librations, active)];
-  return named.map((l) => motionRow(`libration, ${l.name}`, typographicLabel(l.species), l, active));
+  if (named.length === 0) return [motionRow("librations", write.sum(unit.librations.free), unit.librations, write)];
+  return named.map((l) => motionRow(`libration, ${l.name}`, write.label(l.species), l, write));
 }
 
 type Motion = Pick<UnitAnswer["librations"], "site" | "factorGroup">;
 
-function motionRow(what: string, free: string, m: Motion, active: Marks): string[] {
-  return [`  ${what}`, free, "", sumOf(m.site), sumOf(m.factorGroup, active)];
+function motionRow(what: string, free: string, m: Motion, write: ActiveWriter): string[] {
+  return [`  ${what}`, free, "", write.sum(m.site), write.activeSum(m.factorGroup)];
 }
 
-function sumOf(counts: SpeciesCounts, active: Marks = () => []): string {
-  const terms: SpeciesTerm[] = Object.entries(counts).map(([label, count]) => ({
-    label: typographicLabel(label),
-    count,
-    marks: active(label),
-  }));
-  return speciesSum(terms);
-}
-
-function loneText(answer: SplitAnswer): string {
-  const active = activityMarks(answer);
+function loneText(answer: SplitAnswer, write: ActiveWriter): string {
   const rows = answer.loneAtoms.map((a) => [
     `  ${a.label}`,
     String(a.count),
     a.siteSymmetry,
-    sumOf(a.factorGroup, active),
+    write.activeSum(a.factorGroup),
   ]);
   return `Single atoms (translations only)\n${textTable(
     [
@@ -137,23 +130,21 @@ function loneText(answer: SplitAnswer): string {
   )}`;
 }
 
-function extendedText(answer: SplitAnswer): string {
-  const active = activityMarks(answer);
+function extendedText(answer: SplitAnswer, write: ActiveWriter): string {
   return answer.extended
     .map((e) => {
       const along =
         e.direction === null ? "" : e.kind === "chain" ? ` along ${e.direction}` : ` parallel to ${e.direction}`;
       const head = `${e.kind} ${e.formula}${along}, ${e.count} in the primitive cell: ${e.labels.join(" ")}`;
-      return wrapText(`${head}; its atoms together: ${sumOf(e.factorGroup, active)}`, WIDTH, "    ");
+      return wrapText(`${head}; its atoms together: ${write.activeSum(e.factorGroup)}`, WIDTH, "    ");
     })
     .join("\n");
 }
 
-function sumsText(answer: SplitAnswer): string {
-  const active = activityMarks(answer);
+function sumsText(answer: SplitAnswer, write: ActiveWriter): string {
   const { sums } = answer;
   const line = (name: string, counts: SpeciesCounts) =>
-    wrapText(`Γ(${name}) = ${sumOf(counts, active)}`, WIDTH, "    ");
+    wrapText(`Γ(${name}) = ${write.activeSum(counts)}`, WIDTH, "    ");
   const lattice = [
     line("internal", sums.internal),
     line("librations", sums.librations),
