@@ -2,6 +2,7 @@ import { component, determinant, type IntMat3, modOne, vectorOf } from "../algeb
 import { InputProblem } from "../problem.ts";
 import { type AffineExpression, formatExpression, keepExact, parseTriplet } from "./affine-text.ts";
 import type { Operation } from "./operation.ts";
+import { plainOperation } from "./plain-operation.ts";
 
 /**
  * Reads a symmetry operation in Jones-faithful notation, however written: `-X, 1/2+Y, z-0.5`, `x-y`, `.3333+z`.
@@ -11,6 +12,8 @@ import type { Operation } from "./operation.ts";
  * matrix of determinant 1 or -1
  */
 export function parseOperation(text: string): Operation {
+  const plain = plainOperation(text);
+  if (plain && Math.abs(determinant(plain.W)) === 1) return plain;
   const rows = parseTriplet(text, "xyz");
   const entries = rows.flatMap((row) => row.coefficients);
   const W = entries.map((e) => e.n) as unknown as IntMat3;
