@@ -6,6 +6,7 @@ export {
 } from "./affine-text.ts";
 export { centringLetter, centringsOf, primitiveBasis } from "./centring.ts";
 export { extendedSymbol } from "./extended-symbol.ts";
+export { extinctionSymbol } from "./extinction-symbol.ts";
 export { DECIMAL_TOLERANCE, fractionFromDecimal } from "./fraction-text.ts";
 export type { CrystalFamily, GeometricClass } from "./geometric-class.ts";
 export { type GeometricMeaning, geometricMeaning } from "./geometric-meaning.ts";
@@ -37,9 +38,11 @@ export {
   transformPoint,
 } from "./operation.ts";
 export { formatOperation, parseOperation } from "./operation-text.ts";
+export { coordinatesIn } from "./reciprocal-strata.ts";
 export {
   independentConditions,
   isSystematicallyAbsent,
+  meetsConditions,
   type ReflectionCondition,
   reflectionConditions,
 } from "./reflection-conditions.ts";
