@@ -15,6 +15,8 @@ const COMMANDS: Readonly<Record<string, () => Promise<Command>>> = {
   modes: () => import("./commands/modes.ts"),
   split: () => import("./commands/split.ts"),
   polarise: () => import("./commands/polarise.ts"),
+  reduce: () => import("./commands/reduce.ts"),
+  symmetrise: () => import("./commands/symmetrise.ts"),
 };
 
 async function main(words: readonly string[]): Promise<number> {

@@ -1,7 +1,7 @@
 import { determinant, type IntMat3, type IntVec3, multiply } from "../algebra/index.ts";
 import { apply3 } from "./cell.ts";
-import { changeAxes, gramOf, type LatticeAxes, shortenPairs, volumeOfAxes } from "./lattice-axes.ts";
-import { normalSigns, REDUCTION_EPSILON } from "./niggli-reduction.ts";
+import { changeAxes, gramOf, type LatticeAxes, volumeOfAxes } from "./lattice-axes.ts";
+import { niggliReduction, normalSigns, REDUCTION_EPSILON } from "./niggli-reduction.ts";
 
 /** Each step shortens the four vectors; after the first reduction a few are left. */
 const MOST_STEPS = 500;
@@ -15,7 +15,7 @@ const MOST_STEPS = 500;
  * Sources: B. Delaunay, Z. Kristallogr. 84 (1933) 109; E. Selling, J. reine angew. Math. 77 (1874) 143 (reduction).
  */
 export function delaunayReduction(axes: LatticeAxes, epsilon: number = REDUCTION_EPSILON): IntMat3 {
-  const first = shortenPairs(axes);
+  const first = niggliReduction(axes); // the same start whatever the axes, so the same end
   const eps = epsilon * volumeOfAxes(changeAxes(axes, first)) ** (2 / 3);
   const P = selling(axes, first, eps);
   const base = changeAxes(axes, P);

@@ -1,5 +1,6 @@
 /** Atoms at rest: cell and metric, the crystal built from a CIF block, site symmetry and orbits. */
 export { type AtomSite, readAtomSites, readNumber } from "./atom-site.ts";
+export { type BlockLattice, centringsByLetter, latticeFromBlock } from "./block-lattice.ts";
 export type {
   BondChoice,
   BondedPair,

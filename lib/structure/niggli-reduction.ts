@@ -3,10 +3,12 @@ import { InputProblem } from "../problem.ts";
 import { changeAxes, gramOf, type LatticeAxes, shortenPairs, volumeOfAxes } from "./lattice-axes.ts";
 
 /**
- * Terms of the metric tensor that differ by less than this times V^(2/3) count as equal: 0.0001 A in a length of 10 A,
- * below what cells are measured to. Dimensionless.
+ * Terms of the metric tensor that differ by less than this times V^(2/3) count as equal: 0.0025 A in a length of 10 A, a
+ * few s.u. of a measured cell, so that a cell given in rounded numbers reduces as the exact one does. Dimensionless.
  */
-export const REDUCTION_EPSILON = 2e-5;
+export const REDUCTION_EPSILON = 5e-4;
+/** Rounding of doubles, after a cell so skew that its axes are some thousand times the shortest ones. */
+const ROUNDING = 1e-8;
 
 /** A reduction after the first one takes some ten steps. */
 const MOST_STEPS = 500;
@@ -16,7 +18,8 @@ type Form = readonly [number, number, number, number, number, number];
 
 /**
  * The unimodular matrix (determinant 1) that leads from the axes of a primitive cell to its Niggli cell,
- * (a', b', c') = (a, b, c) P.
+ * (a', b', c') = (a, b, c) P. The lattice is reduced as it stands first, and from there with the tolerance, so that the
+ * result does not depend on the axes given even where terms are nearly equal.
  * @param epsilon see REDUCTION_EPSILON
  * @throws InputProblem `cell-too-skew` where rounding of the axes outweighs the lattice
  * Sources: I. Krivy and B. Gruber, Acta Cryst. A32 (1976) 297 (steps); R. W. Grosse-Kunstleve, N. K. Sauter and
@@ -25,17 +28,16 @@ type Form = readonly [number, number, number, number, number, number];
 export function niggliReduction(axes: LatticeAxes, epsilon: number = REDUCTION_EPSILON): IntMat3 {
   const first = shortenPairs(axes);
   const scale = volumeOfAxes(changeAxes(axes, first)) ** (2 / 3);
-  // a tolerance may let near-ties alternate; a smaller one then decides them
-  for (let e = epsilon; e > 1e-14; e /= 100) {
-    const P = descend(axes, first, e * scale);
-    if (P) return P;
+  const reduced = descend(axes, first, ROUNDING * scale);
+  if (!reduced) {
+    throw new InputProblem(
+      "cell-too-skew",
+      "the cell is so skew that rounding of its lengths and angles hides the lattice",
+      null,
+      "give the cell on shorter axes, or with more digits",
+    );
   }
-  throw new InputProblem(
-    "cell-too-skew",
-    "the cell is so skew that rounding of its lengths and angles hides the lattice",
-    null,
-    "give the cell on shorter axes, or with more digits",
-  );
+  return descend(axes, reduced, epsilon * scale) ?? reduced; // near-ties may go round in a circle
 }
 
 function descend(axes: LatticeAxes, first: IntMat3, eps: number): IntMat3 | null {

@@ -1,4 +1,5 @@
 import { equalVectors, modOne } from "../algebra/index.ts";
+import { InputProblem } from "../problem.ts";
 import {
   formatBasis,
   formatOperation,
@@ -97,10 +98,12 @@ export interface SymmetriseOptions {
 
 /**
  * The symmetry that the atoms of a crystal have, whatever the file declares, and the structure made exact in it.
- * @throws InputProblem `atoms-missing`, `cell-not-kept`
+ * @throws InputProblem `tolerance-impossible`, `atoms-missing`, `cell-not-kept`
  */
 export function symmetriseAnswer(crystal: Crystal, options: SymmetriseOptions = {}): SymmetriseAnswer {
   const { tolerance = SEARCH_TOLERANCE, strain = METRIC_TOLERANCE, cell = "conventional" } = options;
+  requireBetween("displacement", tolerance, LARGEST_TOLERANCE, "angstrom");
+  requireBetween("strain", strain, LARGEST_STRAIN, "(a share of the cell edges)");
   const search = searchSymmetry(crystal, { tolerance, strain });
   const symmetrised = symmetrisedCrystal(crystal, search, cell);
   const additional = additionalOperations(search);
@@ -126,6 +129,21 @@ export function symmetriseAnswer(crystal: Crystal, options: SymmetriseOptions = 
     moved: symmetrised.moved,
     sites: sitesOf(symmetrised),
   };
+}
+
+/** Farther off, an image may be nearer to another atom than to its own; angstrom. */
+const LARGEST_TOLERANCE = 1;
+/** A cell strained by more is another cell; dimensionless. */
+const LARGEST_STRAIN = 0.1;
+
+function requireBetween(what: string, value: number, most: number, unit: string): void {
+  if (value > 0 && value <= most) return;
+  throw new InputProblem(
+    "tolerance-impossible",
+    `a tolerance of ${value} for the ${what} cannot tell symmetry from its absence`,
+    null,
+    `give a number above 0, and up to ${most} ${unit}`,
+  );
 }
 
 /** Operations of the group found per cell of the file, over those declared. */

@@ -15,6 +15,12 @@ describe("the worked example of Krivy and Gruber, Acta Cryst. A32 (1976) 297 (nu
       expect(niggli.cell[i]).toBeCloseTo(e, 4);
     });
   });
+
+  it("so does the cell in rounded numbers", () => {
+    const given = metricOf({ a: 3, b: 5.196, c: 2, alpha: 103.92, beta: 109.47, gamma: 134.88 });
+    const rounded = reduceAnswer(given, P).niggli.cell.map((e) => Number(e.toFixed(1)));
+    expect(rounded).toEqual([2, 3, 3, 60, 75.5, 70.5]);
+  });
 });
 
 /**
