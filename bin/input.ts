@@ -1,4 +1,4 @@
-import { readFile } from "node:fs/promises";
+import { readFileSync } from "node:fs";
 import { type CifBlock, type CifDocument, decodeCif, findLoop, findValue, readCif } from "../lib/cif/index.ts";
 import { InputProblem } from "../lib/problem.ts";
 import { problemText } from "../lib/report/index.ts";
@@ -43,7 +43,7 @@ export async function readSource(file: string, args: Arguments): Promise<Source>
 
 async function bytesOf(file: string): Promise<Uint8Array> {
   try {
-    if (file !== "-") return await readFile(file);
+    if (file !== "-") return readFileSync(file);
     const chunks: Buffer[] = [];
     for await (const chunk of process.stdin) chunks.push(chunk as Buffer);
     return Buffer.concat(chunks);

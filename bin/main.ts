@@ -1,44 +1,46 @@
 import type { InputProblem } from "../lib/problem.ts";
-import type { CommandSpec } from "./arguments.ts";
+import { loadCommand } from "./load-command.ts";
 import { UsageProblem } from "./problems.ts";
+import { printOut } from "./standard-output.ts";
 import { VERSION } from "./version.ts";
 
-interface Command {
-  readonly spec: CommandSpec;
-  run(words: readonly string[]): Promise<number>;
-}
-
-const COMMANDS: Readonly<Record<string, () => Promise<Command>>> = {
-  group: () => import("./commands/group.ts"),
-  sites: () => import("./commands/sites.ts"),
-  positions: () => import("./commands/positions.ts"),
-  modes: () => import("./commands/modes.ts"),
-  split: () => import("./commands/split.ts"),
-  polarise: () => import("./commands/polarise.ts"),
-  reduce: () => import("./commands/reduce.ts"),
-  symmetrise: () => import("./commands/symmetrise.ts"),
-};
+/** Each is a file in commands/, bundled apart. */
+const COMMANDS: readonly string[] = [
+  "group",
+  "sites",
+  "positions",
+  "modes",
+  "split",
+  "polarise",
+  "patterns",
+  "reduce",
+  "symmetrise",
+  "vet",
+];
 
 async function main(words: readonly string[]): Promise<number> {
   const [name, ...rest] = words;
   if (name === "--version" || name === "-V") return say(VERSION);
   if (name === undefined || name === "help" || name === "--help" || name === "-h") return help(rest[0]);
-  const load = Object.hasOwn(COMMANDS, name) ? COMMANDS[name] : undefined;
-  if (!load) throw new UsageProblem(`there is no command "${name}"; there are ${Object.keys(COMMANDS).join(", ")}`);
+  if (!COMMANDS.includes(name))
+    throw new UsageProblem(`there is no command "${name}"; there are ${COMMANDS.join(", ")}`);
   if (rest.includes("--help") || rest.includes("-h")) return help(name);
-  return await (await load()).run(rest);
+  return await loadCommand(name).run(rest);
 }
 
 async function help(name: string | undefined): Promise<number> {
   const { commandHelp, overview } = await import("./help.ts");
-  if (name !== undefined && Object.hasOwn(COMMANDS, name))
-    return say(await commandHelp((await COMMANDS[name]!()).spec));
-  const specs = await Promise.all(Object.values(COMMANDS).map(async (load) => (await load()).spec));
-  return say(overview(specs, VERSION));
+  if (name !== undefined && COMMANDS.includes(name)) return say(await commandHelp(loadCommand(name).spec));
+  return say(
+    overview(
+      COMMANDS.map((c) => loadCommand(c).spec),
+      VERSION,
+    ),
+  );
 }
 
 function say(text: string): number {
-  process.stdout.write(`${text}\n`);
+  printOut(`${text}\n`);
   return 0;
 }
 
@@ -65,7 +67,6 @@ function complain(text: string, status: number): number {
   return status;
 }
 
-process.stdout.on("error", (e: NodeJS.ErrnoException) => process.exit(e.code === "EPIPE" ? 0 : 3));
 main(process.argv.slice(2)).then(
   (status) => {
     process.exitCode = status; // never process.exit: it cuts off piped output

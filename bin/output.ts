@@ -1,7 +1,8 @@
-import { rename, rm, writeFile } from "node:fs/promises";
+import { renameSync, rmSync, writeFileSync } from "node:fs";
 import { resolve } from "node:path";
 import type { Arguments } from "./arguments.ts";
 import { LocatedProblem, UsageProblem } from "./problems.ts";
+import { printOut } from "./standard-output.ts";
 import { VERSION } from "./version.ts";
 
 /** Fields that every JSON document begins with. */
@@ -31,7 +32,7 @@ export async function deliver(text: string, args: Arguments, input: string | nul
   const target = args.text("output");
   const whole = text.endsWith("\n") ? text : `${text}\n`;
   if (target === null) {
-    process.stdout.write(whole);
+    printOut(whole);
     return;
   }
   if (input !== null && resolve(target) === resolve(input)) {
@@ -39,10 +40,10 @@ export async function deliver(text: string, args: Arguments, input: string | nul
   }
   const beside = `${target}.${process.pid}.part`;
   try {
-    await writeFile(beside, whole);
-    await rename(beside, target);
+    writeFileSync(beside, whole);
+    renameSync(beside, target);
   } catch (e) {
-    await rm(beside, { force: true });
+    rmSync(beside, { force: true });
     throw new LocatedProblem(
       `${target}: could not be written (${(e as NodeJS.ErrnoException).code}); nothing was changed`,
     );
