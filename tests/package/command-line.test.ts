@@ -1,5 +1,5 @@
 import { execFileSync } from "node:child_process";
-import { readdirSync, readFileSync, statSync } from "node:fs";
+import { existsSync, readdirSync, readFileSync, rmSync, statSync, writeFileSync } from "node:fs";
 import { join } from "node:path";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
 import { installPacked, MANIFEST, type Packed } from "./packed.ts";
@@ -12,20 +12,13 @@ beforeAll(() => {
 });
 afterAll(() => packed.remove());
 
-/** Chunks that a chunk loads before it runs; `import()` is not among them. */
-function staticImports(chunk: string): string[] {
-  const code = readFileSync(join(bin, chunk), "utf8");
-  return [...code.matchAll(/(?:from|\bimport)\s*"\.\/([^"]+\.js)"/g)].map((m) => m[1]!);
-}
+/** Text that only yargs holds. */
+const YARGS = "Did you mean";
+/** A Hall symbol that only the table of the space-group types holds. */
+const SCIENCE = "4vw 2vw 3";
 
-function loadedWith(chunk: string, seen = new Set<string>()): Set<string> {
-  if (seen.has(chunk)) return seen;
-  seen.add(chunk);
-  for (const next of staticImports(chunk)) loadedWith(next, seen);
-  return seen;
-}
-
-const holdsYargs = (chunk: string) => readFileSync(join(bin, chunk), "utf8").includes("Did you mean");
+const names = readdirSync(new URL("../../bin/commands", import.meta.url)).map((f) => f.replace(/\.ts$/, ""));
+const bundle = (file: string) => readFileSync(join(bin, file), "utf8");
 
 describe("the bundled command line", () => {
   it("starts as a program of its own and tells the version of the package", () => {
@@ -35,22 +28,32 @@ describe("the bundled command line", () => {
     expect(execFileSync(process.execPath, [main, "--version"], { encoding: "utf8" }).trim()).toBe(MANIFEST.version);
   });
 
-  it("holds yargs in one chunk, which no command loads to do its work", () => {
-    const chunks = readdirSync(bin).filter((f) => f.endsWith(".js"));
-    const [yargs, ...others] = chunks.filter(holdsYargs);
-    expect(yargs).toBeDefined();
-    expect(others).toEqual([]);
-    const commands = readdirSync(new URL("../../bin/commands", import.meta.url)).map((f) => f.replace(/\.ts$/, ""));
-    const working = chunks.filter((c) => c === "main.js" || commands.some((name) => c.startsWith(`${name}-`)));
-    expect(working.length).toBe(commands.length + 1);
-    for (const chunk of working) expect([...loadedWith(chunk)]).not.toContain(yargs);
+  it("has one bundle for each command, and yargs in none of them", () => {
+    expect(
+      readdirSync(join(bin, "commands"))
+        .filter((f) => f.endsWith(".js"))
+        .sort(),
+    ).toEqual(names.map((n) => `${n}.js`).sort());
+    for (const name of names) expect([name, bundle(`commands/${name}.js`).includes(YARGS)]).toEqual([name, false]);
+    expect(bundle("help.js")).toContain(YARGS);
+    expect(bundle("main.js")).not.toContain(YARGS);
   });
 
   it("starts without loading the science, which comes with the command", () => {
-    // A Hall symbol that only the table of the space-group types holds.
-    const science = (chunk: string) => readFileSync(join(bin, chunk), "utf8").includes("4vw 2vw 3");
-    expect(readdirSync(bin).filter((f) => f.endsWith(".js") && science(f)).length).toBe(1);
-    expect([...loadedWith("main.js")].filter(science)).toEqual([]);
+    expect(bundle("commands/modes.js")).toContain(SCIENCE);
+    expect(bundle("main.js")).not.toContain(SCIENCE);
+  });
+
+  it("answers the same with and without the code compiled at build time", () => {
+    const run = () =>
+      execFileSync(process.execPath, [join(bin, "main.js"), "group", "P 21/c", "--json"], { encoding: "utf8" });
+    const cache = join(bin, "commands", "group.js.cache");
+    expect(existsSync(cache)).toBe(true);
+    const quick = run();
+    rmSync(cache);
+    expect(run()).toBe(quick);
+    writeFileSync(cache, "not compiled code");
+    expect(run()).toBe(quick);
   });
 
   it("carries the licences of what is bundled in it", () => {
