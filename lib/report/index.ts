@@ -5,6 +5,7 @@ export { formatNumber } from "./format-number.ts";
 export { groupText } from "./group-text.ts";
 export { groupName, type HeadingData, headingText } from "./heading.ts";
 export { modesText } from "./modes-text.ts";
+export { patternsText } from "./patterns-text.ts";
 export { polariseText } from "./polarise-text.ts";
 export { positionsText } from "./positions-text.ts";
 export { problemText } from "./problem-text.ts";

@@ -43,3 +43,8 @@ export function typographicLabel(label: string): string {
     .replace(/''/g, "″")
     .replace(/'/g, "′");
 }
+
+/** A function that transforms like a species, set for people: `sqrt3(x2-y2)` as √3(x²-y²). */
+export function functionText(text: string): string {
+  return text.replace(/([xyz])2/g, "$1²").replace(/sqrt/g, "√");
+}

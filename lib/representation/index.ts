@@ -14,7 +14,8 @@ export {
   symmetricSquare,
 } from "./decomposition.ts";
 export type { AxisFrame } from "./direction.ts";
-export type { SpeciesFunctions } from "./functions.ts";
+export { carriedMap, equivariantMaps, mapProduct, type PartnerMap, quarterTurn } from "./equivariant-maps.ts";
+export { type SpeciesFunctions, speciesFunctions } from "./functions.ts";
 export { irrepMatrices, type Rows } from "./irrep-matrices.ts";
 export {
   type LinearGroupName,
@@ -30,7 +31,9 @@ export { type MolecularAxes, type MolecularGroup, molecularGroup, orthogonalGrou
 export { type PointGroup, pointGroup } from "./point-group.ts";
 export { type PointGroupTable, pointGroupTable } from "./point-group-table.ts";
 export type { ReferenceAxes } from "./reference-axes.ts";
+export { formatRoot, type RootForm, rootForm } from "./root-form.ts";
 export { type CrystalClass, type CrystalSystem, crystalClasses } from "./schoenflies.ts";
+export { findSpecies, plainLabel } from "./species-text.ts";
 export { embedding, induce, induceBy, nearestEmbedding, subduce, subduceBy } from "./subduction.ts";
 export {
   axialCharacter,

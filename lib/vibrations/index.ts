@@ -29,7 +29,24 @@ export {
   type WrittenGeometry,
 } from "./geometry-text.ts";
 export { RANK_TOLERANCE } from "./invariant-span.ts";
+export {
+  type AcousticPattern,
+  type AcousticTerm,
+  type ModePattern,
+  type ModePatterns,
+  modePatterns,
+} from "./mode-patterns.ts";
 export { type IrrepAnswer, type ModesAnswer, modesAnswer, type SiteModesAnswer } from "./modes-answer.ts";
+export { opticPatterns } from "./optic-patterns.ts";
+export {
+  type AcousticAnswer,
+  type PatternAnswer,
+  type PatternAtomAnswer,
+  type PatternSpeciesAnswer,
+  type PatternsAnswer,
+  type PatternsOptions,
+  patternsAnswer,
+} from "./patterns-answer.ts";
 export {
   type AllowedSpecies,
   type DipoleAnswer,
@@ -40,6 +57,7 @@ export {
   polariseAnswer,
   type RamanTensorAnswer,
 } from "./polarise-answer.ts";
+export { type PrimitiveAtom, primitiveAtoms } from "./primitive-atoms.ts";
 export { intensityOf, type PolarPart, type SpeciesScattering, scatteringOf } from "./raman-scattering.ts";
 export { type RotationCurve, type RotationTable, rotationTable } from "./rotation-curve.ts";
 export { type Scaffold, type Star, unitScaffold, unitStars } from "./scaffold.ts";
