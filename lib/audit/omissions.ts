@@ -1,0 +1,71 @@
+import { type IntMat3, type IntVec3, negate, type RatVec3 } from "../algebra/index.ts";
+import type { Metric } from "../structure/index.ts";
+import { isForbidden } from "./lattice-centring.ts";
+import { indexKey, largestKey } from "./merge-reflections.ts";
+import { inverseSquareSpacing, keepsReflection, type Observation } from "./observations.ts";
+
+/** Reflections that the same rotations keep: a zone or a row, up to equivalence. */
+interface SpecialClass {
+  readonly listed: IntVec3[];
+  /** Within the limits of the list, but not in it. */
+  readonly unlisted: IntVec3[];
+}
+
+/** Fewer unlisted reflections are chance. */
+const FEWEST_UNLISTED = 3;
+/** Share of the others that must be listed, and the most that counts, since no list is complete for sure. */
+const SHARE = { least: 0.5, most: 0.9 } as const;
+/** However many are left out, what that says is bounded: odds of e^10. */
+const MOST_EVIDENCE = 10;
+
+/** Special reflections of the lattice up to the largest indices and the resolution of a list, by class. */
+export function specialClasses(
+  list: readonly Observation[],
+  metric: Metric,
+  rotations: readonly IntMat3[],
+  centrings: readonly RatVec3[],
+): SpecialClass[] {
+  const matrices = [...rotations, ...rotations.map(negate)];
+  const known = new Set(list.map((r) => indexKey(r.h[0], r.h[1], r.h[2])));
+  const farthest = list.reduce((x, r) => Math.max(x, r.x), 0);
+  const limits = [0, 1, 2].map((i) => list.reduce((m, r) => Math.max(m, ...matrices.map((W) => span(r.h, W, i))), 0));
+  const classes = new Map<string, SpecialClass>();
+  const [H, K, L] = limits as [number, number, number];
+  for (let h = -H; h <= H; h++) {
+    for (let k = -K; k <= K; k++) {
+      for (let l = 0; l <= L; l++) {
+        const index: IntVec3 = [h, k, l];
+        const keeping = matrices.flatMap((W, i) => (i > 0 && keepsReflection(W, index) ? [i] : []));
+        if (keeping.length === 0 || (h === 0 && k === 0 && l === 0)) continue;
+        if (centrings.some((t) => isForbidden(t, index))) continue;
+        const key = indexKey(h, k, l);
+        if (key !== largestKey(index, matrices) || inverseSquareSpacing(metric, index) > farthest) continue;
+        const name = keeping.join();
+        const found = classes.get(name) ?? { listed: [], unlisted: [] };
+        classes.set(name, found);
+        (known.has(key) ? found.listed : found.unlisted).push(index);
+      }
+    }
+  }
+  return [...classes.values()];
+}
+
+function span([h, k, l]: IntVec3, W: IntMat3, i: number): number {
+  return Math.abs(h * W[i]! + k * W[3 + i]! + l * W[6 + i]!);
+}
+
+/**
+ * What the gaps of a list say for a group: where it lists most of a class but none of the reflections that the group
+ * forbids, these have been left out as forbidden. Natural logarithm of the odds, 0 or positive.
+ */
+export function omissionEvidence(classes: readonly SpecialClass[], isAbsent: (h: IntVec3) => boolean): number {
+  let sum = 0;
+  for (const { listed, unlisted } of classes) {
+    if (listed.some(isAbsent)) continue;
+    const gone = unlisted.filter(isAbsent).length;
+    const share = listed.length / (listed.length + unlisted.length - gone);
+    if (gone < FEWEST_UNLISTED || !(share >= SHARE.least)) continue;
+    sum += Math.min(MOST_EVIDENCE, -gone * Math.log(1 - Math.min(share, SHARE.most)));
+  }
+  return sum;
+}
