@@ -1,9 +1,17 @@
+import * as absorption from "./absorption.ts";
 import type { AuditInput } from "./audit-input.ts";
 import * as cellShape from "./cell-shape.ts";
 import * as cellVolume from "./cell-volume.ts";
 import type { Criterion, Finding } from "./finding.ts";
+import * as formulaContents from "./formula-contents.ts";
+import * as massAndElectrons from "./mass-and-electrons.ts";
+import * as occupancies from "./occupancies.ts";
+import * as radiation from "./radiation.ts";
+import * as siteSymmetry from "./site-symmetry.ts";
+import * as specialPositions from "./special-positions.ts";
 import * as symmetryOperations from "./symmetry-operations.ts";
 import * as symmetryStatements from "./symmetry-statements.ts";
+import * as wyckoffLetters from "./wyckoff-letters.ts";
 
 /** One question put to a file, with what it may find. */
 export interface Check {
@@ -12,4 +20,17 @@ export interface Check {
 }
 
 /** Every check, in the order of the findings. A new check is a file of its own and one line here. */
-export const CHECKS: readonly Check[] = [symmetryOperations, symmetryStatements, cellShape, cellVolume];
+export const CHECKS: readonly Check[] = [
+  symmetryOperations,
+  symmetryStatements,
+  cellShape,
+  cellVolume,
+  formulaContents,
+  massAndElectrons,
+  absorption,
+  siteSymmetry,
+  wyckoffLetters,
+  specialPositions,
+  occupancies,
+  radiation,
+];

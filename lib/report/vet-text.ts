@@ -21,17 +21,21 @@ function findingText({ id, severity, message, where, evidence, advice }: Finding
   const { stated, against, difference, tolerance, unit = "", also = [] } = evidence;
   const lines = [
     wrapText(`${severity.toUpperCase()} ${id}: ${message}`, WIDTH, INDENT),
-    wrapText(`${INDENT}at     ${place}`, WIDTH, `${INDENT}       `),
-    wrapText(`${INDENT}says   ${stated.what}: ${shown(stated.value)}`, WIDTH, `${INDENT}       `),
-    wrapText(`${INDENT}but    ${against.what}: ${shown(against.value)}`, WIDTH, `${INDENT}       `),
+    point("at", place),
+    point("says", `${stated.what}: ${shown(stated.value)}`),
+    point("but", `${against.what}: ${shown(against.value)}`),
   ];
   if (difference !== undefined) {
-    const allowed = tolerance === undefined ? "" : `, allowed ${significant(tolerance)}`;
-    lines.push(`${INDENT}differ ${significant(difference)}${allowed}${unit ? ` (${unit})` : ""}`);
+    const allowed = tolerance === undefined ? "" : `, allowed ${significant(tolerance, 3)}`;
+    lines.push(point("differ", `${significant(difference, 4)}${allowed}${unit ? ` (${unit})` : ""}`));
   }
-  if (also.length > 0) lines.push(wrapText(`${INDENT}also   ${list(also)}`, WIDTH, `${INDENT}       `));
-  lines.push(wrapText(`${INDENT}do     ${advice}`, WIDTH, `${INDENT}       `));
-  return lines.join("\n");
+  if (also.length > 0) lines.push(point("also", list(also)));
+  return [...lines, point("do", advice)].join("\n");
+}
+
+function point(word: string, text: string): string {
+  const before = `${INDENT}${word.padEnd(7)}`;
+  return before + wrapText(text, WIDTH - before.length, " ".repeat(before.length));
 }
 
 const MOST_LISTED = 12;
@@ -42,14 +46,14 @@ function list(names: readonly string[]): string {
 }
 
 function shown(value: string | number): string {
-  return typeof value === "string" ? value : significant(value);
+  return typeof value === "string" ? value : significant(value, 6);
 }
 
-/** Four significant digits, without an exponent for the sizes met here. */
-function significant(x: number): string {
+/** So many significant digits, without an exponent for the sizes met here; whole numbers are kept whole. */
+function significant(x: number, digits: number): string {
   if (x === 0) return "0";
-  const digits = Math.max(0, Math.min(10, 3 - Math.floor(Math.log10(Math.abs(x)))));
-  const text = formatNumber(x, digits);
+  const decimals = Math.max(0, Math.min(12, digits - 1 - Math.floor(Math.log10(Math.abs(x)))));
+  const text = formatNumber(x, decimals);
   return text.includes(".") ? text.replace(/\.?0+$/, "") : text;
 }
 
