@@ -40,6 +40,16 @@ export const SPECIES_OPTIONS = {
   f: { type: "boolean", describe: "write F for triply degenerate species instead of T (JSON keeps T)" },
 } as const satisfies Record<string, OptionSpec>;
 
+/** For commands that tell what modes are made of. */
+export const POLYHEDRON_OPTION = {
+  polyhedron: {
+    type: "string",
+    many: true,
+    value: "CENTRE",
+    describe: 'stretches and bends of the first shell about an element or label, "Ti", "K<3.2"; may be repeated',
+  },
+} as const satisfies Record<string, OptionSpec>;
+
 export interface Arguments {
   readonly operands: readonly string[];
   readonly text: (name: string) => string | null;

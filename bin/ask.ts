@@ -1,3 +1,4 @@
+import type { CifBlock } from "../lib/cif/index.ts";
 import { headingText } from "../lib/report/index.ts";
 import { type Crystal, crystalFromBlock, POSITION_TOLERANCE } from "../lib/structure/index.ts";
 import { type Arguments, type CommandSpec, onlyOperand, parseArguments } from "./arguments.ts";
@@ -8,6 +9,8 @@ import { deliver, type Heading, jsonDocument } from "./output.ts";
 export interface Question {
   readonly args: Arguments;
   readonly crystal: Crystal;
+  /** What the crystal was read from. */
+  readonly block: CifBlock;
   readonly file: string;
   readonly heading: Heading;
 }
@@ -26,11 +29,20 @@ export async function askCrystal(words: readonly string[], spec: CommandSpec): P
     notes: [...notes, ...crystal.notes],
     tolerance: { position: tolerance },
   };
-  return { args, crystal, file, heading };
+  return { args, crystal, block, file, heading };
+}
+
+/** The same question with more notes in the heading of its answer. */
+export function withNotes(question: Question, notes: readonly string[]): Question {
+  return { ...question, heading: { ...question.heading, notes: [...question.heading.notes, ...notes] } };
 }
 
 /** Delivers an answer with its space group: as one JSON document, or as text below the heading. */
-export async function answerQuestion(question: Question, answer: object, text: () => string): Promise<number> {
+export async function answerQuestion(
+  question: Omit<Question, "block">,
+  answer: object,
+  text: () => string,
+): Promise<number> {
   const { args, heading, crystal, file } = question;
   const { summary } = crystal.identified;
   const body = args.flag("json")

@@ -25,11 +25,12 @@ const started = new Date();
 const target = join(root, "dist");
 const fresh = `${target}-${process.pid}`;
 
+/** What is imported only when it is needed stays in a bundle of its own: the help, and what one command takes of another. */
 const loadedApart = {
   name: "loaded-apart",
   setup({ onResolve }) {
-    onResolve({ filter: /^\.\/help\.ts$/ }, ({ path, kind }) =>
-      kind === "entry-point" ? null : { path: path.replace(/\.ts$/, ".js"), external: true },
+    onResolve({ filter: /^\.\/[a-z-]+\.ts$/ }, ({ path, kind }) =>
+      kind === "dynamic-import" ? { path: path.replace(/\.ts$/, ".js"), external: true } : null,
     );
   },
 };
@@ -98,7 +99,7 @@ async function bundleCommandLine() {
     .filter((f) => f.name.endsWith("worker.ts"))
     .map((f) => join(root, "bin", f.name));
   const results = [
-    await build({ ...common, entryPoints: commands, outdir: join(out, "commands") }),
+    await build({ ...common, entryPoints: commands, outdir: join(out, "commands"), plugins: [loadedApart] }),
     await build({
       ...common,
       entryPoints: [join(root, "bin", "main.ts"), join(root, "bin", "help.ts"), ...workers],

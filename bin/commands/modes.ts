@@ -1,18 +1,36 @@
 import { modesText, speciesWriter } from "../../lib/report/index.ts";
-import { modesAnswer } from "../../lib/vibrations/index.ts";
-import { COMMON_OPTIONS, type CommandSpec, SPECIES_OPTIONS } from "../arguments.ts";
-import { answerQuestion, askCrystal } from "../ask.ts";
+import { statedFormula } from "../../lib/structure/index.ts";
+import { modesAnswer, structureWarnings } from "../../lib/vibrations/index.ts";
+import { COMMON_OPTIONS, type CommandSpec, POLYHEDRON_OPTION, SPECIES_OPTIONS } from "../arguments.ts";
+import { answerQuestion, askCrystal, withNotes } from "../ask.ts";
 
 export const spec: CommandSpec = {
   name: "modes",
   operands: "FILE",
   summary: "Species of all modes at k = 0 with their infrared, Raman and hyper-Raman activity.",
-  options: { ...COMMON_OPTIONS, ...SPECIES_OPTIONS },
+  options: {
+    ...COMMON_OPTIONS,
+    ...SPECIES_OPTIONS,
+    units: { type: "boolean", describe: "add internal modes, librations and translations of each molecule or ion" },
+    ...POLYHEDRON_OPTION,
+  },
   example: { line: "sitefold modes fixtures/calcite.cif", output: "" },
 };
 
 export async function run(words: readonly string[]): Promise<number> {
-  const question = await askCrystal(words, spec);
-  const answer = modesAnswer(question.crystal);
-  return answerQuestion(question, answer, () => modesText(answer, speciesWriter(question.args.flag("f") ? "F" : "T")));
+  const asked = await askCrystal(words, spec);
+  const { args, crystal, block } = asked;
+  const formula = statedFormula(block);
+  const answer = modesAnswer(crystal, formula);
+  const question = withNotes(asked, structureWarnings(crystal, formula));
+  const write = speciesWriter(args.flag("f") ? "F" : "T");
+  if (!args.flag("units") && args.texts("polyhedron").length === 0) {
+    const more =
+      "Molecules and ions, a line for each of internal modes, R and T: --units; stretches, bends: --polyhedron Ti";
+    return answerQuestion(question, answer, () => `${modesText(answer, write)}\n\n${more}`);
+  }
+  const { unitParts } = await import("./split.ts"); // half as much code again, loaded only if asked for
+  const parts = unitParts(question, answer, write);
+  const text = () => [modesText(answer, write), ...parts.text()].join("\n\n");
+  return answerQuestion(question, { ...answer, ...parts.answer }, text);
 }

@@ -1,11 +1,25 @@
-import { InputProblem } from "../../lib/problem.ts";
-import { correlationSvg, speciesWriter, splitText } from "../../lib/report/index.ts";
-import { orderedModel, parseBondPatterns, parseUnitMembers } from "../../lib/structure/index.ts";
-import { type SplitOptions, splitAnswer } from "../../lib/vibrations/index.ts";
-import { type Arguments, COMMON_OPTIONS, type CommandSpec, SPECIES_OPTIONS } from "../arguments.ts";
-import { answerQuestion, askCrystal, type Question } from "../ask.ts";
+import {
+  correlationSvg,
+  polyhedraText,
+  type SpeciesWriter,
+  speciesWriter,
+  splitText,
+  unitSummaryText,
+} from "../../lib/report/index.ts";
+import { orderedModel, parseBondPatterns, parseUnitMembers, statedFormula } from "../../lib/structure/index.ts";
+import {
+  type ModesAnswer,
+  type SplitOptions,
+  splitAnswer,
+  structureWarnings,
+  unitSummaries,
+} from "../../lib/vibrations/index.ts";
+import { type Arguments, COMMON_OPTIONS, type CommandSpec, POLYHEDRON_OPTION, SPECIES_OPTIONS } from "../arguments.ts";
+import { answerQuestion, askCrystal, type Question, withNotes } from "../ask.ts";
 import { deliver } from "../output.ts";
+import { askedPolyhedra } from "../polyhedra.ts";
 import { UsageProblem } from "../problems.ts";
+import { usage } from "../usage.ts";
 
 export const spec: CommandSpec = {
   name: "split",
@@ -42,6 +56,7 @@ export const spec: CommandSpec = {
       type: "boolean",
       describe: "where sites exclude each other, take an ordered model in a subgroup instead of the average",
     },
+    ...POLYHEDRON_OPTION,
     diagram: { type: "boolean", describe: "draw the correlation of each unit as text" },
     svg: { type: "boolean", describe: "print the correlation diagrams as SVG instead of the answer" },
   },
@@ -52,17 +67,38 @@ export async function run(words: readonly string[]): Promise<number> {
   const asked = await askCrystal(words, spec);
   const { args } = asked;
   const question = args.flag("ordered") ? ordered(asked) : asked;
-  const answer = usage(() => splitAnswer(question.crystal, readOptions(args)));
+  const { crystal, file } = question;
+  const answer = usage(() => splitAnswer(crystal, readOptions(args)));
   const write = speciesWriter(args.flag("f") ? "F" : "T");
   if (args.flag("svg")) {
-    await deliver(
-      correlationSvg(answer.units, answer.factorGroup, write),
-      args,
-      question.file === "-" ? null : question.file,
-    );
+    await deliver(correlationSvg(answer.units, answer.factorGroup, write), args, file === "-" ? null : file);
     return 0;
   }
-  return answerQuestion(question, answer, () => splitText(answer, args.flag("diagram"), write));
+  const polyhedra = askedPolyhedra(args, crystal);
+  const warned = withNotes(question, structureWarnings(crystal, statedFormula(question.block)));
+  return answerQuestion(warned, { ...answer, ...(polyhedra ? { polyhedra } : {}) }, () => {
+    const parts = [splitText(answer, args.flag("diagram"), write)];
+    if (polyhedra) parts.push(polyhedraText(polyhedra, answer.activity, write));
+    return parts.join("\n\n");
+  });
+}
+
+/** What `modes` shows of units and polyhedra if asked; here, so that it loads no more than it shows. */
+export function unitParts({ args, crystal }: Question, { irreps }: ModesAnswer, write: SpeciesWriter): UnitParts {
+  const units = args.flag("units") ? unitSummaries(splitAnswer(crystal)) : null;
+  const polyhedra = askedPolyhedra(args, crystal);
+  return {
+    answer: { ...units, ...(polyhedra ? { polyhedra } : {}) },
+    text: () => [
+      ...(units ? [unitSummaryText(units, write)] : []),
+      ...(polyhedra ? [polyhedraText(polyhedra, irreps, write)] : []),
+    ],
+  };
+}
+
+interface UnitParts {
+  readonly answer: object;
+  readonly text: () => string[];
 }
 
 /** The same question of an ordered model of the crystal; unchanged, with a note, where none is needed or possible. */
@@ -71,8 +107,7 @@ function ordered(asked: Question): Question {
   const note = model
     ? `ordered model: of sites that exclude each other one is taken; the space group falls to a subgroup of index ${model.index}`
     : "no ordered model: no sites exclude each other, or no subgroup of the same lattice orders them";
-  const heading = { ...asked.heading, notes: [...asked.heading.notes, note] };
-  return { ...asked, crystal: model?.crystal ?? asked.crystal, heading };
+  return { ...withNotes(asked, [note]), crystal: model?.crystal ?? asked.crystal };
 }
 
 function readOptions(args: Arguments): SplitOptions {
@@ -93,13 +128,4 @@ function readLowering(text: string): [string, string] {
   if (!unit || !group || rest.length > 0)
     throw new UsageProblem(`--lower "${text}" is not a unit and a group, such as SO4=C2v`);
   return [unit, group];
-}
-
-/** Bonds, units and groups come from the command line, so their faults are faults of usage. */
-function usage<T>(work: () => T): T {
-  try {
-    return work();
-  } catch (e) {
-    throw e instanceof InputProblem ? new UsageProblem(`${e.message}${e.hint ? `\n  ${e.hint}` : ""}`) : e;
-  }
 }

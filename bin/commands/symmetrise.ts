@@ -56,7 +56,7 @@ async function ask(words: readonly string[]): Promise<Question> {
     notes: [...notes, ...crystal.notes],
     tolerance: { position: POSITION_TOLERANCE },
   };
-  return { args, crystal, file, heading };
+  return { args, crystal, block, file, heading };
 }
 
 /** Tolerances and the choice of cell come from the command line, so their faults are faults of usage. */

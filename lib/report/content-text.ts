@@ -1,7 +1,7 @@
 import type { SpeciesContent, UnitAnswer } from "../vibrations/index.ts";
 import type { SpeciesWriter } from "./species.ts";
 
-const KIND_NAMES: Readonly<Record<keyof SpeciesContent, readonly [one: string, many: string]>> = {
+export const KIND_NAMES: Readonly<Record<keyof SpeciesContent, readonly [one: string, many: string]>> = {
   stretch: ["stretch", "stretches"],
   outOfPlane: ["out-of-plane bend", "out-of-plane bends"],
   bend: ["bend", "bends"],

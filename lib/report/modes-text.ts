@@ -6,18 +6,19 @@ const WIDTH = 110;
 
 /** The whole answer of `modes` for a person, below the heading. */
 export function modesText(answer: ModesAnswer, write: SpeciesWriter = speciesWriter()): string {
-  const parts = [subject(answer, write), sums(answer, write), speciesTable(answer, write), siteTable(answer, write)];
-  return [...parts, countsText(answer)].join("\n\n");
+  const parts = [subject(answer, write), sums(answer, write), bothText(answer), speciesTable(answer, write)];
+  return [...parts, siteText(answer, write), polarText(answer, write)].filter(Boolean).join("\n\n");
 }
 
 /** What was reduced, and the axes of the labels. */
 function subject(answer: ModesAnswer, write: SpeciesWriter): string {
-  const { factorGroup, primitiveCellsInCell: cells, labelsInReference } = answer;
-  const reduced = cells === 1 ? "the cell is primitive" : `the cell of the file holds ${cells} primitive cells`;
+  const { factorGroup, atomsInPrimitiveCell: atoms, formulaUnits: units, labelsInReference } = answer;
   const axes =
     answer.labelAxes === "file" ? "axes of the file" : "axes of the reference setting (the file's cell is skew)";
+  const formula = units ? `: ${units.inPrimitiveCell} ${units.formula}` : "";
   const lines = [
-    `${answer.atomsInPrimitiveCell} vibrating atoms in the primitive cell (${reduced})`,
+    `${atoms} vibrating atoms in the primitive cell${formula}`,
+    reduction(answer),
     `factor group ${factorGroup.hermannMauguin} (${factorGroup.schoenflies}); labels in the ${axes}${factorGroup.axes ? `: ${factorGroup.axes}` : ""}`,
   ];
   const swaps = Object.entries(labelsInReference).map(([a, b]) => `${write.label(a)} is ${write.label(b)}`);
@@ -25,34 +26,68 @@ function subject(answer: ModesAnswer, write: SpeciesWriter): string {
   return lines.map((line) => wrapText(line, WIDTH, "    ")).join("\n");
 }
 
-/** Species and activity as papers write them. */
+/** Translations shown of a cell much larger than the primitive one. */
+const SHOWN_CENTRINGS = 4;
+
+function reduction({ primitiveCellsInCell: cells, centrings }: ModesAnswer): string {
+  if (cells === 1) return "the cell of the file is primitive";
+  const shown = centrings.slice(0, SHOWN_CENTRINGS).map((t) => `(${t})`);
+  const more = centrings.length > shown.length ? ` and ${centrings.length - shown.length} more` : "";
+  return `the cell of the file holds ${cells} primitive cells, apart by ${shown.join(", ")}${more}`;
+}
+
+/** Species and activity as papers write them, with the number of bands. */
 function sums(answer: ModesAnswer, write: SpeciesWriter): string {
   const activity = new Map(
     answer.irreps.map((s) => [s.label, [...(s.raman ? ["R"] : []), ...(s.infrared ? ["IR"] : [])]]),
   );
-  const marks = (label: string) => activity.get(label) ?? [];
-  const line = (name: string, pick: (s: IrrepAnswer) => number, marked = false) => {
+  const line = (name: string, pick: (s: IrrepAnswer) => number, unit: "modes" | "bands", marked = false) => {
     const counts = Object.fromEntries(answer.irreps.map((s) => [s.label, pick(s)]));
-    return wrapText(`Γ(${name}) = ${write.sum(counts, marked ? marks : undefined)}`, WIDTH, "    ");
+    const number = answer.irreps.reduce((n, s) => n + pick(s) * (unit === "modes" ? s.dimension : 1), 0);
+    const sum = write.sum(counts, marked ? (label) => activity.get(label) ?? [] : undefined);
+    const counted = number === 0 ? "" : `: ${number} ${number === 1 ? unit.slice(0, -1) : unit}`;
+    return wrapText(`Γ(${name}) = ${sum}${counted}`, WIDTH, "    ");
   };
   const only = (keep: (s: IrrepAnswer) => boolean) => (s: IrrepAnswer) => (keep(s) ? s.optic : 0);
-  return [
-    line("total", (s) => s.total),
-    line("acoustic", (s) => s.acoustic),
-    line("optic", (s) => s.optic, true),
+  const lines = [
+    line("total", (s) => s.total, "modes"),
+    line("acoustic", (s) => s.acoustic, "modes"),
+    `${line("optic", (s) => s.optic, "bands", true)} from ${answer.totals.opticModes} modes`,
     line(
       "Raman",
       only((s) => s.raman),
+      "bands",
     ),
     line(
       "infrared",
       only((s) => s.infrared),
+      "bands",
     ),
     line(
       "silent",
       only((s) => s.silent),
+      "bands",
     ),
-  ].join("\n");
+  ];
+  if (answer.totals.silent > 0) {
+    lines.push(
+      line(
+        "silent, but hyper-Raman active",
+        only((s) => s.silent && s.hyperRaman),
+        "bands",
+      ),
+    );
+  }
+  return lines.join("\n");
+}
+
+/** What infrared and Raman have in common. */
+function bothText({ totals }: ModesAnswer): string {
+  if (totals.mutualExclusion) {
+    return "No band is both infrared and Raman active (mutual exclusion). A degenerate species is one band.";
+  }
+  const bands = `${totals.coincident} band${totals.coincident === 1 ? " is" : "s are"}`;
+  return `${bands} both infrared and Raman active. A degenerate species is one band.`;
 }
 
 function speciesTable(answer: ModesAnswer, write: SpeciesWriter): string {
@@ -78,8 +113,8 @@ function speciesTable(answer: ModesAnswer, write: SpeciesWriter): string {
   return textTable(columns, rows);
 }
 
-/** Which species each site reaches, one column per species of the factor group. */
-function siteTable(answer: ModesAnswer, write: SpeciesWriter): string {
+/** Which species each site reaches, one column per species of the factor group, and sites that a method cannot see. */
+function siteText(answer: ModesAnswer, write: SpeciesWriter): string {
   const columns: Column[] = [
     { heading: "site" },
     { heading: "position" },
@@ -87,6 +122,7 @@ function siteTable(answer: ModesAnswer, write: SpeciesWriter): string {
     { heading: "atoms", align: "right" },
     { heading: "displacement in the site group" },
     ...answer.irreps.map((s): Column => ({ heading: write.label(s.label), align: "right" })),
+    { heading: "reaches" },
   ];
   const rows = answer.sites.map((site) => [
     site.label,
@@ -95,17 +131,25 @@ function siteTable(answer: ModesAnswer, write: SpeciesWriter): string {
     String(site.atoms),
     write.sum(site.siteSpecies),
     ...answer.irreps.map((s) => String(site.contributions[s.label] ?? ".")),
+    [...(site.raman ? ["R"] : []), ...(site.infrared ? ["IR"] : [])].join(",") || "silent",
   ]);
-  return textTable(columns, rows);
+  const still = (method: string, moves: (s: ModesAnswer["sites"][number]) => boolean) => {
+    const labels = answer.sites.filter((s) => !moves(s)).map((s) => s.label);
+    return labels.length > 0 ? [wrapText(`no ${method} active mode moves ${labels.join(", ")}`, WIDTH, "    ")] : [];
+  };
+  return [textTable(columns, rows), ...still("Raman", (s) => s.raman), ...still("infrared", (s) => s.infrared)].join(
+    "\n",
+  );
 }
 
-function countsText({ totals, irreps }: ModesAnswer): string {
-  const optic = irreps.reduce((n, s) => n + s.optic, 0);
-  const coincidence = totals.mutualExclusion
-    ? "no species is active in both (mutual exclusion)"
-    : `${totals.coincident} of them active in both`;
-  return [
-    `Bands (a degenerate species is one band): ${optic} optic, from ${totals.opticModes} modes`,
-    `  infrared ${totals.infraredBands}, Raman ${totals.ramanBands}; ${coincidence}; silent in both ${totals.silent}`,
-  ].join("\n");
+/** Polar species, whose bands depend on the direction of the wave. */
+function polarText({ polarSpecies }: ModesAnswer, write: SpeciesWriter): string {
+  if (polarSpecies.length === 0) return "";
+  const sum = (list: ModesAnswer["polarSpecies"]) => write.sum(Object.fromEntries(list.map((s) => [s.label, s.modes])));
+  const seen = polarSpecies.filter((s) => s.raman);
+  const raman =
+    seen.length === 0
+      ? "none of them is Raman active"
+      : `Raman shows LO or TO of ${seen.map((s) => write.label(s.label)).join(", ")} as the geometry has it (sitefold polarise)`;
+  return wrapText(`LO and TO parts differ in the polar species ${sum(polarSpecies)}; ${raman}`, WIDTH, "    ");
 }

@@ -39,6 +39,12 @@ export type { SymmetryDisagreement } from "./compare-statements.ts";
 export { cellContents, contentsMisfit } from "./composition.ts";
 export { BOND_TOLERANCE, type BondRule, NEAR_LIMIT, radiusSum } from "./contact-table.ts";
 export { type ConventionalCell, conventionalCell } from "./conventional-cell.ts";
+export {
+  type CoordinationPolyhedron,
+  coordinationPolyhedra,
+  type PolyhedronAnalysis,
+} from "./coordination-polyhedra.ts";
+export { coordinationShell, SHELL_REACH, type ShellAtom } from "./coordination-shell.ts";
 export { covalentRadius, RADII_SOURCE } from "./covalent-radius.ts";
 export {
   type Crystal,
@@ -71,6 +77,7 @@ export { type ComponentChoice, chooseComponents } from "./disorder.ts";
 export type { DisplacementTensor } from "./displacement.ts";
 export { type Element, element, readLabel, readTypeSymbol, type SpeciesReading } from "./elements.ts";
 export { type Formula, formatFormula, hillOrder, parseFormula } from "./formula-text.ts";
+export { type FormulaUnits, formulaUnits, statedFormula } from "./formula-units.ts";
 export { CENTRED_HYDROGEN } from "./hydrogen-rule.ts";
 export { invariantMetric } from "./invariant-metric.ts";
 export { axesOf, changeAxes, type LatticeAxes } from "./lattice-axes.ts";
@@ -103,6 +110,7 @@ export {
   type SymmetricCell,
 } from "./reduce-answer.ts";
 export { cross3, dot3, length3, minus3, unit3 } from "./rotation-fit.ts";
+export { formatShellPattern, parseShellPattern, type ShellPattern } from "./shell-text.ts";
 export { type SiteSymmetry, siteSymmetry } from "./site-symmetry.ts";
 export { type SiteAnswer, type SitesAnswer, sitesAnswer } from "./sites-answer.ts";
 export {

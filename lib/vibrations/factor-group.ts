@@ -42,6 +42,8 @@ export interface ModeTotals {
   readonly ramanBands: number;
   readonly coincident: number;
   readonly silent: number;
+  /** Silent bands of species that hyper-Raman scattering shows (totally symmetric tensor). */
+  readonly silentHyperRaman: number;
   readonly opticModes: number;
   /** No species is both infrared and Raman active, as in every group with an inversion. */
   readonly mutualExclusion: boolean;
@@ -118,6 +120,7 @@ function totalsOf(species: readonly ModeSpecies[]): ModeTotals {
     ramanBands: bands((s) => s.raman),
     coincident: bands((s) => s.infrared && s.raman),
     silent: bands((s) => s.silent),
+    silentHyperRaman: bands((s) => s.silent && s.hyperRaman),
     opticModes: species.reduce((n, s) => n + s.optic * s.dimension, 0),
     mutualExclusion: !species.some((s) => s.infrared && s.raman),
   };

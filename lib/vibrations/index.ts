@@ -57,6 +57,12 @@ export {
   polariseAnswer,
   type RamanTensorAnswer,
 } from "./polarise-answer.ts";
+export {
+  type PolyhedraAnswer,
+  type PolyhedraKind,
+  type PolyhedronAnswer,
+  polyhedraAnswer,
+} from "./polyhedra-answer.ts";
 export { type PrimitiveAtom, primitiveAtoms } from "./primitive-atoms.ts";
 export { intensityOf, type PolarPart, type SpeciesScattering, scatteringOf } from "./raman-scattering.ts";
 export { type RotationCurve, type RotationTable, rotationTable } from "./rotation-curve.ts";
@@ -72,8 +78,10 @@ export {
 } from "./split-answer.ts";
 export type { SplitSums } from "./split-sums.ts";
 export { BACKSCATTERING, type GeometryResult, geometryResult, separatingGeometries } from "./standard-geometries.ts";
+export { structureWarnings } from "./structure-warnings.ts";
 export type { FreeMode, FreeUnit } from "./tables/free-units.ts";
 export type { InternalMode, NamedLibration, UnitAnswer, UnitMotions } from "./unit-answer.ts";
 export { type KindAnswer, type SpeciesContent, type UnitContent, unitContent } from "./unit-content.ts";
 export { correlateUnit, type FreeSpeciesCorrelation, type UnitCorrelation } from "./unit-correlation.ts";
+export { type UnitSummaries, type UnitSummary, unitSummaries } from "./unit-summary.ts";
 export { type VibratingSite, vibratingSites } from "./vibrating-sites.ts";

@@ -1,7 +1,13 @@
 import { type PointGroup, pointGroup } from "../representation/index.ts";
-import type { Crystal } from "../structure/index.ts";
-import { type IdentifiedGroup, nameSite } from "../symmetry/index.ts";
-import { type FactorGroupModes, factorGroupModes, type ModeTotals, type SiteModes } from "./factor-group.ts";
+import { type Crystal, type Formula, type FormulaUnits, formulaUnits } from "../structure/index.ts";
+import { formatVector, type IdentifiedGroup, nameSite } from "../symmetry/index.ts";
+import {
+  type FactorGroupModes,
+  factorGroupModes,
+  type ModeSpecies,
+  type ModeTotals,
+  type SiteModes,
+} from "./factor-group.ts";
 
 /** A species of the factor group as the JSON contract lays it out. */
 export interface IrrepAnswer {
@@ -34,12 +40,26 @@ export interface SiteModesAnswer {
   /** Species of the displacement in the site group. */
   readonly siteSpecies: Readonly<Record<string, number>>;
   readonly contributions: Readonly<Record<string, number>>;
+  /** Whether the atoms of the site move in any infrared active, in any Raman active species. */
+  readonly infrared: boolean;
+  readonly raman: boolean;
+}
+
+/** An infrared species with optic modes: its longitudinal and transverse parts have different wavenumbers. */
+export interface PolarSpecies {
+  readonly label: string;
+  readonly modes: number;
+  /** Seen by Raman too, LO or TO as the geometry has it. */
+  readonly raman: boolean;
 }
 
 export interface ModesAnswer {
   readonly atomsInPrimitiveCell: number;
   /** How many primitive cells the cell of the file holds. */
   readonly primitiveCellsInCell: number;
+  /** Translations that make the cell of the file larger than the primitive one, `2/3,1/3,1/3`. */
+  readonly centrings: readonly string[];
+  readonly formulaUnits: FormulaUnits | null;
   readonly factorGroup: { readonly hermannMauguin: string; readonly schoenflies: string; readonly axes: string };
   /** Which axes the labels refer to: those of the file's cell, or of the reference setting if the cell is skew. */
   readonly labelAxes: "file" | "reference";
@@ -49,10 +69,14 @@ export interface ModesAnswer {
   readonly irreps: readonly IrrepAnswer[];
   readonly sites: readonly SiteModesAnswer[];
   readonly totals: ModeTotals;
+  readonly polarSpecies: readonly PolarSpecies[];
 }
 
-/** Species, activities and counts of the modes of a crystal at k = 0, as plain data. */
-export function modesAnswer(crystal: Crystal): ModesAnswer {
+/**
+ * Species, activities and counts of the modes of a crystal at k = 0, as plain data.
+ * @param formula the formula that the file states, for counting formula units
+ */
+export function modesAnswer(crystal: Crystal, formula: Formula | null = null): ModesAnswer {
   const { identified } = crystal;
   const { frames } = identified;
   const modes = factorGroupModes(crystal, frames.own ?? frames.reference);
@@ -60,6 +84,8 @@ export function modesAnswer(crystal: Crystal): ModesAnswer {
   return {
     atomsInPrimitiveCell: modes.atomsInPrimitiveCell,
     primitiveCellsInCell: crystal.group.centrings.length,
+    centrings: crystal.group.centrings.filter(({ n }) => n.some((e) => e !== 0)).map(formatVector),
+    formulaUnits: formulaUnits(crystal, formula),
     factorGroup: {
       hermannMauguin: group.hermannMauguin,
       schoenflies: group.schoenflies,
@@ -82,13 +108,22 @@ export function modesAnswer(crystal: Crystal): ModesAnswer {
       characters: charactersByMatrix(modes, i),
       sites: Object.fromEntries(modes.sites.map((site) => [site.label, site.contributions[i]!])),
     })),
-    sites: modes.sites.map((site) => siteModes(site, identified, group)),
+    sites: modes.sites.map((site) => siteModes(site, identified, modes)),
     totals: modes.totals,
+    polarSpecies: modes.species
+      .filter((s) => s.infrared && s.optic > 0)
+      .map((s) => ({ label: s.label, modes: s.optic, raman: s.raman })),
   };
 }
 
-function siteModes(modes: SiteModes, identified: IdentifiedGroup, group: PointGroup): SiteModesAnswer {
+function siteModes(
+  modes: SiteModes,
+  identified: IdentifiedGroup,
+  { group, species }: FactorGroupModes,
+): SiteModesAnswer {
   const assigned = nameSite(identified, modes.site.symmetry.operations);
+  const reaches = (isActive: (s: ModeSpecies) => boolean) =>
+    species.some((s, i) => isActive(s) && modes.contributions[i]! > 0);
   return {
     label: modes.label,
     wyckoff: assigned.letter,
@@ -99,6 +134,8 @@ function siteModes(modes: SiteModes, identified: IdentifiedGroup, group: PointGr
     atoms: modes.count,
     siteSpecies: byLabel(modes.group.irreps, modes.siteSpecies),
     contributions: byLabel(group.irreps, modes.contributions),
+    infrared: reaches((s) => s.infrared),
+    raman: reaches((s) => s.raman),
   };
 }
 

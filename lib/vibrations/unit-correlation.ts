@@ -58,7 +58,7 @@ interface FreeSpecies {
  * Source: R. S. Halford, J. Chem. Phys. 14 (1946) 8; D. F. Hornig, J. Chem. Phys. 16 (1948) 1063.
  */
 export function correlateUnit(
-  unit: MolecularUnit,
+  unit: Pick<MolecularUnit, "atoms" | "site">,
   symmetry: MolecularSymmetry,
   group: PointGroup,
   frame: AxisFrame,
@@ -118,7 +118,7 @@ function finiteSpecies(symmetry: FiniteSymmetry, siteGroup: PointGroup): FreeSpe
  * Internal modes of a linear molecule: stretches Sigma+, bends Pi, shared among g and u by pairs of equivalent atoms
  * and the atom at the centre, if there is one.
  */
-function linearModes(unit: MolecularUnit, symmetry: LinearSymmetry): FreeSpecies[] {
+function linearModes(unit: Pick<MolecularUnit, "atoms" | "site">, symmetry: LinearSymmetry): FreeSpecies[] {
   const n = unit.atoms.length;
   const { schoenflies, siteReverses } = symmetry;
   const list: [LinearSpecies, number][] = [];

@@ -8,6 +8,8 @@ export interface VibratingSite {
   /** Labels joined with `+`. */
   readonly label: string;
   readonly site: CrystalSite;
+  /** All sites at the position. */
+  readonly sites: readonly CrystalSite[];
   /** Atoms of this site in the primitive cell. */
   readonly count: number;
 }
@@ -23,6 +25,7 @@ export function vibratingSites(crystal: Crystal): VibratingSite[] {
   return [...groups.values()].map((sites) => ({
     label: sites.map((s) => s.label).join("+"),
     site: sites[0]!,
+    sites,
     count: sites[0]!.images.length / crystal.group.centrings.length,
   }));
 }
