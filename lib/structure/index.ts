@@ -15,6 +15,7 @@ export {
   parseBondPatterns,
   parseUnitMembers,
 } from "./bond-choice-text.ts";
+export { bondClasses, isHydrogen } from "./bond-class.ts";
 export { type Component, componentsOf, type PeriodicEdge } from "./bond-graph.ts";
 export type { BondOptions } from "./bond-overrides.ts";
 export { HALIDE_TOLERANCE, SHELL_GAP } from "./bond-rules.ts";
@@ -113,6 +114,7 @@ export { cross3, dot3, length3, minus3, unit3 } from "./rotation-fit.ts";
 export { formatShellPattern, parseShellPattern, type ShellPattern } from "./shell-text.ts";
 export { type SiteSymmetry, siteSymmetry } from "./site-symmetry.ts";
 export { type SiteAnswer, type SitesAnswer, sitesAnswer } from "./sites-answer.ts";
+export { type EigenSystem, symmetricEigen } from "./symmetric-eigen.ts";
 export {
   type DisplacingOperation,
   type FoundOperation,
