@@ -36,8 +36,18 @@ export function speciesWriter(triple: TripleLetter = "T"): SpeciesWriter {
 
 const SUBSCRIPTS = "₀₁₂₃₄₅₆₇₈₉";
 
-/** A Mulliken label set for people: digits as subscripts, primes as primes; letters g and u stay on the line. */
+const GREEK: Readonly<Record<string, string>> = { Sigma: "Σ", Pi: "Π", Delta: "Δ", Phi: "Φ", Gamma: "Γ" };
+
+/**
+ * A Mulliken label set for people: digits as subscripts, primes as primes, Greek letters for linear molecules, where plus
+ * and minus rise (`Sigmag+` is Σg⁺); letters g and u stay on the line.
+ */
 export function typographicLabel(label: string): string {
+  const linear = /^(Sigma|Pi|Delta|Phi|Gamma)([gu]?)([+-]?)$/.exec(label);
+  if (linear) {
+    const [, name = "", parity = "", sign = ""] = linear;
+    return GREEK[name] + parity + (sign === "+" ? "⁺" : sign === "-" ? "⁻" : "");
+  }
   return label
     .replace(/\d/g, (d) => SUBSCRIPTS[Number(d)]!)
     .replace(/''/g, "″")
