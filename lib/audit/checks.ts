@@ -2,11 +2,14 @@ import * as absorption from "./absorption.ts";
 import type { AuditInput } from "./audit-input.ts";
 import * as cellShape from "./cell-shape.ts";
 import * as cellVolume from "./cell-volume.ts";
+import * as displacementSize from "./displacement-size.ts";
+import * as displacementSymmetry from "./displacement-symmetry.ts";
 import type { Criterion, Finding } from "./finding.ts";
 import * as formulaContents from "./formula-contents.ts";
 import * as massAndElectrons from "./mass-and-electrons.ts";
 import * as occupancies from "./occupancies.ts";
 import * as radiation from "./radiation.ts";
+import * as rigidBond from "./rigid-bond.ts";
 import * as siteSymmetry from "./site-symmetry.ts";
 import * as specialPositions from "./special-positions.ts";
 import * as symmetryOperations from "./symmetry-operations.ts";
@@ -32,5 +35,8 @@ export const CHECKS: readonly Check[] = [
   wyckoffLetters,
   specialPositions,
   occupancies,
+  displacementSymmetry,
+  displacementSize,
+  rigidBond,
   radiation,
 ];
