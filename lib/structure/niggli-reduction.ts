@@ -7,8 +7,11 @@ import { changeAxes, gramOf, type LatticeAxes, shortenPairs, volumeOfAxes } from
  * few s.u. of a measured cell, so that a cell given in rounded numbers reduces as the exact one does. Dimensionless.
  */
 export const REDUCTION_EPSILON = 5e-4;
-/** Rounding of doubles, after a cell so skew that its axes are some thousand times the shortest ones. */
-const ROUNDING = 1e-8;
+/**
+ * The same for the first reduction: rounding of doubles, in a cell whose axes are some thousand times the shortest ones.
+ * Terms that differ by just as much can make the steps go round in a circle; then the next number decides.
+ */
+const ROUNDINGS = [1e-8, 1e-10, 1e-6, 1e-12] as const;
 
 /** A reduction after the first one takes some ten steps. */
 const MOST_STEPS = 500;
@@ -28,7 +31,8 @@ type Form = readonly [number, number, number, number, number, number];
 export function niggliReduction(axes: LatticeAxes, epsilon: number = REDUCTION_EPSILON): IntMat3 {
   const first = shortenPairs(axes);
   const scale = volumeOfAxes(changeAxes(axes, first)) ** (2 / 3);
-  const reduced = descend(axes, first, ROUNDING * scale);
+  let reduced: IntMat3 | null = null;
+  for (const rounding of ROUNDINGS) reduced ??= descend(axes, first, rounding * scale);
   if (!reduced) {
     throw new InputProblem(
       "cell-too-skew",
@@ -37,7 +41,7 @@ export function niggliReduction(axes: LatticeAxes, epsilon: number = REDUCTION_E
       "give the cell on shorter axes, or with more digits",
     );
   }
-  return descend(axes, reduced, epsilon * scale) ?? reduced; // near-ties may go round in a circle
+  return descend(axes, reduced, epsilon * scale) ?? reduced; // or in a circle, as above
 }
 
 function descend(axes: LatticeAxes, first: IntMat3, eps: number): IntMat3 | null {

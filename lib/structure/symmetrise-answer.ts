@@ -117,7 +117,7 @@ export function symmetriseAnswer(crystal: Crystal, options: SymmetriseOptions = 
     notKept: part.missing.map(formatOperation),
     additional: additionalTexts(additional, search, symmetrised),
     additionalComplete: additional.complete,
-    higher: higherGroups(crystal, search, additional),
+    higher: higherGroups(crystal, search, additional, { tolerance, strain }),
     tolerance: { position: crystal.tolerance, displacement: tolerance, strain },
     cellChoice: cell,
     cell: cellNumbers(symmetrised.crystal.metric.cell),

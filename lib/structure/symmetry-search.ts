@@ -130,28 +130,36 @@ export interface HigherGroup {
   readonly index: number;
 }
 
-/** Searches with a larger tolerance that are made at most; each costs as much as the first. */
-const MOST_STEPS = 6;
+/** Searches that are made at most, without and with strain; each costs as much as the first. */
+const MOST_STEPS = 4;
 
-/** The groups that a larger tolerance would find, step by step. */
+/**
+ * The groups that a larger tolerance would find, step by step: those that strain the cell no more than the group found
+ * first, then those that do.
+ * @param limits of the search that found nothing higher
+ */
 export function higherGroups(
   crystal: Crystal,
   found: SymmetrySearch,
   { operations }: AdditionalOperations,
+  limits: Required<SearchOptions>,
 ): HigherGroup[] {
-  const steps: HigherGroup[] = [];
-  let size = sizeOf(found);
-  const first = size;
-  let tried = 0;
-  for (const level of levelsOf(operations)) {
-    if (tried++ >= MOST_STEPS) break;
-    const next = searchSymmetry(crystal, level);
-    if (sizeOf(next) <= size) continue;
-    size = sizeOf(next);
-    const { number } = identify(next.exact.operations);
-    steps.push({ ...level, number, hermannMauguin: spaceGroupType(number).hermannMauguin, index: size / first });
-  }
-  return steps;
+  const first = sizeOf(found);
+  const unstrained = levelsOf(
+    operations.filter((a) => a.strain <= limits.strain),
+    limits,
+  );
+  const strained = operations.some((a) => a.strain > limits.strain) ? levelsOf(operations, limits) : [];
+  return [unstrained, strained].flatMap((levels) => {
+    let size = first;
+    return levels.slice(0, MOST_STEPS).flatMap((level): HigherGroup[] => {
+      const next = searchSymmetry(crystal, level);
+      if (sizeOf(next) <= size) return [];
+      size = sizeOf(next);
+      const { number } = identify(next.exact.operations);
+      return [{ ...level, number, hermannMauguin: spaceGroupType(number).hermannMauguin, index: size / first }];
+    });
+  });
 }
 
 /** Operations per atom given: grows with the point group and with the translations. */
@@ -162,14 +170,14 @@ function sizeOf({ given, folded, group }: SymmetrySearch): number {
 /** Displacements nearer to each other than this are one step; angstrom. */
 const SAME_LEVEL = 0.005;
 
-/** Distinct levels of displacement, each with the largest strain met up to it. */
-function levelsOf(operations: readonly AdditionalOperation[]): { tolerance: number; strain: number }[] {
-  const levels: { tolerance: number; strain: number }[] = [];
-  let strain = METRIC_TOLERANCE;
+/** Distinct levels of displacement, from that of the search upwards, each with the largest strain met up to it. */
+function levelsOf(operations: readonly AdditionalOperation[], least: Required<SearchOptions>) {
+  const levels: Required<SearchOptions>[] = [];
+  let { strain } = least;
   for (const { largest, strain: own } of operations) {
     strain = Math.max(strain, own);
     const last = levels.at(-1);
-    const level = { tolerance: largest + SAME_LEVEL, strain };
+    const level = { tolerance: Math.max(least.tolerance, largest + SAME_LEVEL), strain };
     if (last && largest <= last.tolerance) levels[levels.length - 1] = level;
     else levels.push(level);
   }
