@@ -8,9 +8,9 @@ export interface RootForm {
 }
 
 /** Largest error of the square of a component of a unit vector; rounding in our sums stays below 1e-14. Dimensionless. */
-const SQUARE_TOLERANCE = 1e-12;
-/** Largest denominator of a square. Two fractions with such denominators differ by 2.5e-9 at least. */
-const LARGEST_DENOMINATOR = 20_000;
+const SQUARE_TOLERANCE = 1e-13;
+/** Largest denominator of a square. One number in two thousand lies so near to such a fraction by chance. */
+const LARGEST_DENOMINATOR = 100_000;
 /** Largest common denominator that is still worth printing. */
 const LARGEST_NORM = 10_000_000;
 

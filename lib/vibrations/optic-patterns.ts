@@ -5,47 +5,89 @@ const NOTHING = 1e-9;
 
 /**
  * The patterns without the rigid translations: in every species that holds some, the repeats that take part in them
- * are replaced by orthonormal sums orthogonal to them, one fewer for every translation. Repeats that take no part stay.
- * All displacements of an optic pattern add up to 0, so the mean of the atoms rests (not the centre of mass: patterns
- * carry no masses).
+ * are replaced by orthonormal sums orthogonal to them, one fewer for every translation. First come sums within each
+ * site, in which the mean of its atoms rests, then rigid motions of the atoms of one site against those of the later
+ * ones. Repeats that take no part stay. All displacements of an optic pattern add up to 0, so the mean of the atoms
+ * rests (not the centre of mass: patterns carry no masses).
  */
 export function opticPatterns(all: ModePatterns): ModePattern[] {
-  const byIrrep = all.group.irreps.map((_, irrep) =>
-    all.patterns.flatMap((p, index) => (p.irrep === irrep ? [index] : [])),
-  );
-  return byIrrep.flatMap((indices, irrep) => {
+  return all.group.irreps.flatMap((_, irrep) => {
     const acoustic = all.acoustic.filter((a) => a.irrep === irrep);
     const involved = new Set(acoustic.flatMap((a) => a.terms.map((t) => t.pattern)));
-    const untouched = indices.filter((i) => !involved.has(i)).map((i) => all.patterns[i]!);
+    const untouched = all.patterns.filter((p, index) => p.irrep === irrep && !involved.has(index));
     const touched = [...involved].sort((a, b) => a - b);
-    const mixed = complement(acoustic, touched).map((z) => summed(all, touched, z));
-    return numbered([...untouched, ...mixed]);
+    const sums = [...withinSites(all, acoustic, touched), ...betweenSites(all, acoustic, touched)];
+    return numbered([...untouched, ...sums.map((z) => summed(all, touched, z))]);
   });
 }
 
-/** Factors of a sum: real and imaginary parts, where i is the quarter turn of the partners. */
+/** Factors of a sum over some patterns: real and imaginary parts, where i is the quarter turn of the partners. */
 interface Factors {
   readonly re: Float64Array;
   readonly im: Float64Array;
 }
 
-/**
- * Orthonormal factors orthogonal to the acoustic ones. Each unit factor in turn loses its part along those before it,
- * so the k-th sum sets one repeat against the later ones.
- */
-function complement(acoustic: readonly AcousticPattern[], touched: readonly number[]): Factors[] {
-  const n = touched.length;
-  const done: Factors[] = acoustic.map(({ terms }) => {
-    const z: Factors = { re: new Float64Array(n), im: new Float64Array(n) };
-    for (const t of terms) {
-      const k = touched.indexOf(t.pattern);
-      z.re[k] = t.factor;
-      z.im[k] = t.turned;
-    }
-    return z;
+const noFactors = (n: number): Factors => ({ re: new Float64Array(n), im: new Float64Array(n) });
+
+/** A rigid translation of the atoms of some sites, of length 1, and its share of the whole translation. */
+function rigidPart(
+  { patterns }: ModePatterns,
+  { terms }: AcousticPattern,
+  touched: readonly number[],
+  site: number,
+): { z: Factors; share: number } {
+  const z = noFactors(touched.length);
+  const own = terms.filter((t) => patterns[t.pattern]!.sites[0] === site);
+  const share = Math.sqrt(own.reduce((sum, t) => sum + t.factor ** 2 + t.turned ** 2, 0));
+  for (const t of own) {
+    const k = touched.indexOf(t.pattern);
+    z.re[k] = t.factor / share;
+    z.im[k] = t.turned / share;
+  }
+  return { z, share };
+}
+
+/** Sums over the repeats of one site orthogonal to its rigid translations. */
+function withinSites(all: ModePatterns, acoustic: readonly AcousticPattern[], touched: readonly number[]): Factors[] {
+  return sitesOf(all, touched).flatMap((site) => {
+    const rigid = acoustic.map((a) => rigidPart(all, a, touched, site).z);
+    const own = touched.flatMap((index, k) => (all.patterns[index]!.sites[0] === site ? [k] : []));
+    return complement(rigid, own, touched.length);
   });
-  for (let k = 0; k < n; k++) {
-    const z: Factors = { re: new Float64Array(n), im: new Float64Array(n) };
+}
+
+/** Rigid translations of whole sites against each other. */
+function betweenSites(all: ModePatterns, acoustic: readonly AcousticPattern[], touched: readonly number[]): Factors[] {
+  const sites = sitesOf(all, touched);
+  return acoustic.flatMap((a) => {
+    const parts = sites.map((site) => rigidPart(all, a, touched, site));
+    const whole: Factors = { re: Float64Array.from(parts, (p) => p.share), im: new Float64Array(sites.length) };
+    const against = complement([whole], [...sites.keys()], sites.length);
+    return against.map((factors) => {
+      const z = noFactors(touched.length);
+      parts.forEach((p, s) => {
+        for (let k = 0; k < touched.length; k++) {
+          z.re[k]! += factors.re[s]! * p.z.re[k]!;
+          z.im[k]! += factors.re[s]! * p.z.im[k]!;
+        }
+      });
+      return z;
+    });
+  });
+}
+
+function sitesOf({ patterns }: ModePatterns, touched: readonly number[]): number[] {
+  return [...new Set(touched.map((index) => patterns[index]!.sites[0]!))].sort((a, b) => a - b);
+}
+
+/**
+ * Orthonormal factors orthogonal to those given, out of some unit factors. Each unit factor in turn loses its part
+ * along those before it, so the k-th sum sets one of them against the later ones.
+ */
+function complement(given: readonly Factors[], units: readonly number[], n: number): Factors[] {
+  const done = [...given];
+  for (const k of units) {
+    const z = noFactors(n);
     z.re[k] = 1;
     for (const u of done) subtractPart(z, u, k);
     const square = z.re.reduce((sum, e, j) => sum + e * e + z.im[j]! ** 2, 0);
@@ -57,7 +99,7 @@ function complement(acoustic: readonly AcousticPattern[], touched: readonly numb
     }
     done.push(z);
   }
-  return done.slice(acoustic.length);
+  return done.slice(given.length);
 }
 
 /** Takes off the part along u that the k-th unit factor has. */
