@@ -6,6 +6,7 @@ import * as displacementSize from "./displacement-size.ts";
 import * as displacementSymmetry from "./displacement-symmetry.ts";
 import type { Criterion, Finding } from "./finding.ts";
 import * as formulaContents from "./formula-contents.ts";
+import * as geometryLists from "./geometry-lists.ts";
 import * as massAndElectrons from "./mass-and-electrons.ts";
 import * as occupancies from "./occupancies.ts";
 import * as radiation from "./radiation.ts";
@@ -38,5 +39,6 @@ export const CHECKS: readonly Check[] = [
   displacementSymmetry,
   displacementSize,
   rigidBond,
+  geometryLists,
   radiation,
 ];
