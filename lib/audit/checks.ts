@@ -2,19 +2,24 @@ import * as absorption from "./absorption.ts";
 import type { AuditInput } from "./audit-input.ts";
 import * as cellShape from "./cell-shape.ts";
 import * as cellVolume from "./cell-volume.ts";
+import * as contacts from "./contacts.ts";
 import * as displacementSize from "./displacement-size.ts";
 import * as displacementSymmetry from "./displacement-symmetry.ts";
 import type { Criterion, Finding } from "./finding.ts";
 import * as formulaContents from "./formula-contents.ts";
 import * as geometryLists from "./geometry-lists.ts";
+import * as labels from "./labels.ts";
 import * as massAndElectrons from "./mass-and-electrons.ts";
+import * as missedSymmetry from "./missed-symmetry.ts";
 import * as occupancies from "./occupancies.ts";
 import * as radiation from "./radiation.ts";
+import * as requiredItems from "./required-items.ts";
 import * as rigidBond from "./rigid-bond.ts";
 import * as siteSymmetry from "./site-symmetry.ts";
 import * as specialPositions from "./special-positions.ts";
 import * as symmetryOperations from "./symmetry-operations.ts";
 import * as symmetryStatements from "./symmetry-statements.ts";
+import * as uncertainties from "./uncertainties.ts";
 import * as wyckoffLetters from "./wyckoff-letters.ts";
 
 /** One question put to a file, with what it may find. */
@@ -40,5 +45,10 @@ export const CHECKS: readonly Check[] = [
   displacementSize,
   rigidBond,
   geometryLists,
+  contacts,
+  labels,
+  requiredItems,
+  uncertainties,
+  missedSymmetry,
   radiation,
 ];
