@@ -13,6 +13,7 @@ const COMMANDS: readonly string[] = [
   "split",
   "polarise",
   "patterns",
+  "point",
   "reduce",
   "symmetrise",
   "vet",

@@ -1,9 +1,8 @@
-import { InputProblem } from "../../lib/problem.ts";
 import { patternsText, speciesWriter } from "../../lib/report/index.ts";
 import { patternsAnswer } from "../../lib/vibrations/index.ts";
 import { COMMON_OPTIONS, type CommandSpec, SPECIES_OPTIONS } from "../arguments.ts";
 import { answerQuestion, askCrystal } from "../ask.ts";
-import { UsageProblem } from "../problems.ts";
+import { usage } from "../usage.ts";
 
 export const spec: CommandSpec = {
   name: "patterns",
@@ -31,13 +30,4 @@ export async function run(words: readonly string[]): Promise<number> {
     }),
   );
   return answerQuestion(question, answer, () => patternsText(answer, speciesWriter(args.flag("f") ? "F" : "T")));
-}
-
-/** Site and species come from the command line, so their faults are faults of usage. */
-function usage<T>(work: () => T): T {
-  try {
-    return work();
-  } catch (e) {
-    throw e instanceof InputProblem ? new UsageProblem(`${e.message}${e.hint ? `\n  ${e.hint}` : ""}`) : e;
-  }
 }

@@ -6,6 +6,7 @@ export { groupText } from "./group-text.ts";
 export { groupName, type HeadingData, headingText } from "./heading.ts";
 export { modesText } from "./modes-text.ts";
 export { patternsText } from "./patterns-text.ts";
+export { pointText } from "./point-text.ts";
 export { polariseText } from "./polarise-text.ts";
 export { polyhedraText } from "./polyhedra-text.ts";
 export { positionsText } from "./positions-text.ts";
@@ -13,6 +14,8 @@ export { problemText } from "./problem-text.ts";
 export { reduceText } from "./reduce-text.ts";
 export { sitesText } from "./sites-text.ts";
 export {
+  classText,
+  functionText,
   type SpeciesTerm,
   type SpeciesWriter,
   speciesSum,

@@ -50,7 +50,7 @@ function describe({ infrared, raman, dimension, partnersLike }: PatternSpeciesAn
   const active = [...(infrared ? ["infrared"] : []), ...(raman ? ["Raman"] : [])].join(" and ");
   const partners =
     dimension === 1 ? "" : `, ${dimension} partners${partnersLike ? ` like ${functionText(partnersLike)}` : ""}`;
-  return `${active ? `${active} active` : "silent"}${partners}`;
+  return `${active ? `${active} active` : "silent in first order"}${partners}`;
 }
 
 function patternText(p: PatternAnswer, { atoms }: PatternsAnswer, write: SpeciesWriter): string {

@@ -2,6 +2,7 @@ import type { DipoleAnswer, GeometryAnswer, PolariseAnswer, RamanTensorAnswer } 
 import { formatNumber } from "./format-number.ts";
 import { type SpeciesWriter, speciesWriter } from "./species.ts";
 import { type Column, textTable, wrapText } from "./table.ts";
+import { tensorRows } from "./tensor-rows.ts";
 
 const WIDTH = 110;
 
@@ -32,15 +33,8 @@ function subject({ frame, labelAxes, factorGroup, piezoelectric }: PolariseAnswe
   return lines.map((line) => wrapText(line, WIDTH, "    ")).join("\n");
 }
 
-/** Partners side by side, three rows each. */
 function tensorText({ irrep, modes, tensor }: RamanTensorAnswer, write: SpeciesWriter): string {
-  const head = `${write.label(irrep)} (${modes} optic)`;
-  const blocks = tensor.map((rows) => {
-    const width = Math.max(...rows.flat().map((e) => e.length));
-    return rows.map((row) => `[ ${row.map((e) => e.padStart(width)).join("  ")} ]`);
-  });
-  const lines = [0, 1, 2].map((i) => blocks.map((b) => b[i]!).join("   "));
-  return lines.map((line, i) => `${(i === 1 ? head : "").padEnd(16)}${line}`).join("\n");
+  return tensorRows(`${write.label(irrep)} (${modes} optic)`, tensor);
 }
 
 function dipoleText({ irrep, modes, directions, raman }: DipoleAnswer, write: SpeciesWriter): string {

@@ -58,3 +58,18 @@ export function typographicLabel(label: string): string {
 export function functionText(text: string): string {
   return text.replace(/([xyz])2/g, "$1²").replace(/sqrt/g, "√");
 }
+
+const SUPERSCRIPTS = "⁰¹²³⁴⁵⁶⁷⁸⁹";
+
+/** The name of a class or an element set for people: `2S8^3` as 2S₈³, `3sigma_d` as 3σd, `C2''` as C₂″. */
+export function classText(name: string): string {
+  return name
+    .replace(/([CS])(\d+)/, (_, letter: string, n: string) => letter + n.replace(/\d/g, (d) => SUBSCRIPTS[Number(d)]!))
+    .replace(/\^(\d+)/, (_, n: string) => n.replace(/\d/g, (d) => SUPERSCRIPTS[Number(d)]!))
+    .replace("sigma", "σ")
+    .replace("_", "")
+    .replace("phi", "φ")
+    .replace("inf ", "∞")
+    .replace(/''/, "″")
+    .replace(/'/, "′");
+}

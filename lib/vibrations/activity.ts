@@ -1,7 +1,8 @@
-import type { IntMat3 } from "../algebra/index.ts";
 import {
   decompose,
   hyperRamanGeneralCharacter,
+  type Matrix3,
+  type MolecularGroup,
   type PointGroup,
   symmetricCubeCharacter,
   symmetricSquareCharacter,
@@ -24,8 +25,9 @@ export interface Activity {
 }
 
 /** Activity of each species of a point group, in the order of its irreps. */
-export function activities(group: PointGroup): Activity[] {
-  const holds = (character: (W: IntMat3) => number) => decompose(group, group.elements.map(character));
+export function activities(group: PointGroup | MolecularGroup): Activity[] {
+  const elements: readonly Matrix3[] = group.elements;
+  const holds = (character: (W: Matrix3) => number) => decompose(group, elements.map(character));
   const infrared = holds(vectorCharacter);
   const raman = holds(symmetricSquareCharacter);
   const hyper = holds(symmetricCubeCharacter);

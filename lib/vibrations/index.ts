@@ -19,6 +19,7 @@ export {
   type ModeTotals,
   type SiteModes,
 } from "./factor-group.ts";
+export type { PointAnswer, PointClassAnswer, PointOptions, PointSpeciesAnswer } from "./finite-point-answer.ts";
 export { freeUnitsLike, freeUnitsOf } from "./free-unit-names.ts";
 export {
   formatDirection,
@@ -47,6 +48,9 @@ export {
   type PatternsOptions,
   patternsAnswer,
 } from "./patterns-answer.ts";
+export { pointAnswer } from "./point-answer.ts";
+export { type PointName, readPointName } from "./point-name.ts";
+export type { PointTensorsAnswer } from "./point-tensors.ts";
 export {
   type AllowedSpecies,
   type DipoleAnswer,
@@ -69,6 +73,7 @@ export { type RotationCurve, type RotationTable, rotationTable } from "./rotatio
 export { type Scaffold, type Star, unitScaffold, unitStars } from "./scaffold.ts";
 export { type ScatteringGeometry, scatteringGeometry } from "./scattering-geometry.ts";
 export type { SpeciesCounts } from "./species-counts.ts";
+export type { ProductAnswer } from "./species-product.ts";
 export {
   type ExtendedAnswer,
   type LoneAtomAnswer,
@@ -79,6 +84,7 @@ export {
 export type { SplitSums } from "./split-sums.ts";
 export { BACKSCATTERING, type GeometryResult, geometryResult, separatingGeometries } from "./standard-geometries.ts";
 export { structureWarnings } from "./structure-warnings.ts";
+export type { SubgroupAnswer } from "./subgroup-answer.ts";
 export type { FreeMode, FreeUnit } from "./tables/free-units.ts";
 export type { InternalMode, NamedLibration, UnitAnswer, UnitMotions } from "./unit-answer.ts";
 export { type KindAnswer, type SpeciesContent, type UnitContent, unitContent } from "./unit-content.ts";
