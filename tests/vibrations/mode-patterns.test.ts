@@ -102,7 +102,7 @@ describe("mode patterns", () => {
           expect(reached).toEqual(site.contributions);
         });
       }),
-      { numRuns: 60 },
+      { numRuns: 30 },
     );
   });
 
@@ -134,7 +134,7 @@ describe("mode patterns", () => {
         const count = (irrep: number) => optic.filter((p) => p.irrep === irrep).length;
         expect(species.map((_, i) => count(i))).toEqual(species.map((s) => s.optic));
       }),
-      { numRuns: 40 },
+      { numRuns: 30 },
     );
   });
 
@@ -184,7 +184,7 @@ describe("mode patterns", () => {
           }
         });
       }),
-      { numRuns: 40 },
+      { numRuns: 30 },
     );
   });
 });
@@ -203,7 +203,7 @@ describe("the answer on mode patterns", () => {
           expect(Math.max(...errors)).toBeLessThan(1e-12);
         }
       }),
-      { numRuns: 40 },
+      { numRuns: 30 },
     );
   });
 
