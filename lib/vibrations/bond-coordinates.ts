@@ -10,8 +10,8 @@ import {
   unit3,
   type Vec3,
 } from "../structure/index.ts";
+import type { SparseRow } from "./independent-species.ts";
 import type { InternalCoordinate } from "./internal-coordinate.ts";
-import type { SparseRow } from "./invariant-span.ts";
 import type { Scaffold } from "./scaffold.ts";
 
 /** Angles from here on count as straight, with two bends across; degrees. No angle of a cage or a shell comes near. */

@@ -1,8 +1,8 @@
-import { type CharacterTable, decompose } from "../representation/index.ts";
+import { decompose, type MolecularGroup, type PointGroup } from "../representation/index.ts";
 import { cross3, type Vec3 } from "../structure/index.ts";
+import { IndependentSpecies, type SparseRow } from "./independent-species.ts";
 import type { InternalCoordinate } from "./internal-coordinate.ts";
 import { internalCoordinates } from "./internal-coordinates.ts";
-import { InvariantSpan, type SparseRow } from "./invariant-span.ts";
 import type { Scaffold, Star } from "./scaffold.ts";
 import type { SpeciesCounts } from "./species-counts.ts";
 
@@ -52,21 +52,21 @@ export interface CoordinateContent {
 export function coordinateContent<A>(
   scaffold: Scaffold<A>,
   stars: readonly Star<A>[],
-  group: CharacterTable,
+  group: PointGroup | MolecularGroup,
   rigid: readonly SparseRow[],
 ): CoordinateContent {
   const coordinates = internalCoordinates(scaffold, stars);
   const orbits = orbitsOf(scaffold, coordinates);
-  const span = new InvariantSpan(scaffold.action);
-  span.extend(rigid);
+  const space = new IndependentSpecies(scaffold.action, group);
+  space.extend(rigid);
   const sets = orbits.map((orbit) => describeSet(scaffold, orbit, group));
   const kinds = COORDINATE_KINDS.map((kind): KindContent => {
-    const rows = coordinates.filter((c) => c.kind === kind).flatMap((c) => c.rows);
+    const rows = orbits.map((o) => o.members[0]!).flatMap((c) => (c.kind === kind ? c.rows : []));
     const own = sets.filter((s) => s.kind === kind);
     return {
       kind,
       all: group.irreps.map((_, i) => own.reduce((sum, s) => sum + s.species[i]!, 0)),
-      independent: decompose(group, span.extend(rows)),
+      independent: space.extend(rows),
     };
   });
   return { sets, kinds };
@@ -105,15 +105,21 @@ function orbitsOf<A>(s: Scaffold<A>, coordinates: readonly InternalCoordinate<A>
   return orbits;
 }
 
-function describeSet<A>(s: Scaffold<A>, { members, keys }: Orbit<A>, group: CharacterTable): CoordinateSet {
+function describeSet<A>(
+  s: Scaffold<A>,
+  { members, keys }: Orbit<A>,
+  group: PointGroup | MolecularGroup,
+): CoordinateSet {
   const [first] = members as [InternalCoordinate<A>];
-  const characters = s.action.matrices.map((R, g) =>
+  const character = (g: number) =>
     members.reduce((sum, c, k) => {
       const images = c.atoms.map((a) => s.image(g, a));
       if (`${c.kind} ${c.key(images)}` !== keys[k]) return sum;
-      return sum + c.character(R, (atom) => s.key([c.atoms[0]!, atom]) === s.key([images[0]!, s.image(g, atom)]));
-    }, 0),
-  );
+      const isFixed = (atom: A) => s.key([c.atoms[0]!, atom]) === s.key([images[0]!, s.image(g, atom)]);
+      return sum + c.character(s.action.matrices[g]!, isFixed);
+    }, 0);
+  const perClass = group.classes.map((c) => character(c.members[0]!));
+  const characters = group.classOf.map((k) => perClass[k]!);
   return {
     kind: first.kind,
     name: first.name,

@@ -8,7 +8,7 @@ import {
   type PolyhedronAnalysis,
   type Vec3,
 } from "../structure/index.ts";
-import type { SparseRow } from "./invariant-span.ts";
+import type { SparseRow } from "./independent-species.ts";
 import type { Scaffold, Star } from "./scaffold.ts";
 
 /** An atom of the primitive cell that stands for others: which, and by how many cells it is away from its translate. */

@@ -29,7 +29,7 @@ export {
   type WrittenDirection,
   type WrittenGeometry,
 } from "./geometry-text.ts";
-export { RANK_TOLERANCE } from "./invariant-span.ts";
+export { RANK_TOLERANCE } from "./independent-species.ts";
 export {
   type AcousticPattern,
   type AcousticTerm,

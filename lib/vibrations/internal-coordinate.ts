@@ -1,5 +1,5 @@
 import type { Mat3 } from "../structure/index.ts";
-import type { SparseRow } from "./invariant-span.ts";
+import type { SparseRow } from "./independent-species.ts";
 
 /** A coordinate, or the few that one arrangement of atoms gives, as the two bends of a straight angle. */
 export interface InternalCoordinate<A> {

@@ -1,5 +1,5 @@
 import type { MolecularUnit, Vec3 } from "../structure/index.ts";
-import type { DisplacementAction } from "./invariant-span.ts";
+import type { DisplacementAction } from "./independent-species.ts";
 
 /**
  * Atoms with bonds and a group that keeps them: what internal coordinates are built on. `A` names an atom: an index in a
@@ -47,12 +47,17 @@ export interface Star<A> {
   readonly ligands: readonly A[];
 }
 
-/** The stars of all atoms of a molecule, one neighbour alone included. */
-export function unitStars({ atoms, bonds }: Pick<MolecularUnit, "atoms" | "bonds">): Star<number>[] {
-  const around: number[][] = atoms.map(() => []);
-  for (const [a, b] of bonds) {
-    around[a]!.push(b);
-    around[b]!.push(a);
+/**
+ * The stars of all atoms of a molecule. Where its group carries a bond onto a pair that is just not bonded, that pair
+ * counts as bonded too.
+ */
+export function unitStars({ unit, permutations }: Pick<ShapedAtoms, "unit" | "permutations">): Star<number>[] {
+  const around = unit.atoms.map(() => new Set<number>());
+  for (const [a, b] of unit.bonds) {
+    for (const p of permutations) {
+      around[p[a]!]!.add(p[b]!);
+      around[p[b]!]!.add(p[a]!);
+    }
   }
-  return around.map((ligands, centre) => ({ centre, ligands }));
+  return around.map((ligands, centre) => ({ centre, ligands: [...ligands].sort((a, b) => a - b) }));
 }

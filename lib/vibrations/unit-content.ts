@@ -91,13 +91,9 @@ interface Content {
 
 function finiteContent(unit: Pick<MolecularUnit, "atoms" | "bonds">, symmetry: FiniteSymmetry): Content {
   const { irreps } = symmetry.group;
-  const scaffold = unitScaffold({ unit, ...symmetry });
-  const { sets, kinds } = coordinateContent(
-    scaffold,
-    unitStars(unit),
-    symmetry.group,
-    rigidMotions(symmetry.idealised),
-  );
+  const shaped = { unit, ...symmetry };
+  const rigid = rigidMotions(symmetry.idealised);
+  const { sets, kinds } = coordinateContent(unitScaffold(shaped), unitStars(shaped), symmetry.group, rigid);
   const left = kinds.map((k) => k.all.map((n, i) => n - k.independent[i]!));
   return {
     counts: new Map(kinds.map((k) => [k.kind, countsOf(irreps, k.independent)])),

@@ -48,7 +48,7 @@ export function contentOf(unit: ShapedUnit, lowerTo?: string) {
   const { group, idealised } = symmetry;
   const content = coordinateContent(
     unitScaffold({ unit, ...symmetry }),
-    unitStars(unit),
+    unitStars({ unit, ...symmetry }),
     group,
     rigidMotions(idealised),
   );

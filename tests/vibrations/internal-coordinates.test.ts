@@ -86,6 +86,22 @@ describe("internal coordinates of molecules as in textbooks (from memory)", () =
   });
 });
 
+test("a ring that is not quite planar keeps its stretches, bends and torsions apart", () => {
+  const shift = fc.integer({ min: -30, max: 30 }).map((n) => n / 1000); // angstrom
+  fc.assert(
+    fc.property(fc.array(shift, { minLength: 36, maxLength: 36 }), (shifts) => {
+      const moved = benzene.map((text, k) => {
+        const [element, ...numbers] = text.split(" ");
+        return [element, ...numbers.map((x, i) => Number(x) + shifts[3 * k + i]!)].join(" ");
+      });
+      for (const group of [undefined, "C1"]) {
+        expect(contentOf(molecule(moved, 1.7), group).kinds.map((k) => k.modes)).toEqual([12, 6, 9]);
+      }
+    }),
+    { numRuns: 40 },
+  );
+});
+
 describe("the content of a unit", () => {
   const NAMES = ["calcite", "gypsum", "benzene", "urea", "alpha-sulfur", "carbon-dioxide", "realgar", "chalcanthite"];
 
