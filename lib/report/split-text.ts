@@ -96,7 +96,7 @@ function internalRow(m: InternalMode, unit: UnitAnswer, write: ActiveWriter): st
 /** What modes without a name are made of. */
 function contentOf({ species, count }: InternalMode, { content }: UnitAnswer): string {
   const text = speciesContentText(content[species]);
-  return count > 1 ? `${text}; each like this` : text;
+  return count > 1 ? `${text}; the row is for one` : text;
 }
 
 /** Librations of water one by one, since each has a name. */

@@ -59,7 +59,7 @@ function alternativeWarnings(crystal: Crystal): string[] {
   const warnings: string[] = [];
   if (split.length > 0) {
     warnings.push(
-      `split sites: ${some(split.map((s) => s.label))} and the sites they stand in for are never there together; both are counted here`,
+      `split sites: ${some(split.map((s) => s.label))} and the sites they stand in for are never there together; counts by site hold both, units one of them`,
     );
   }
   if (contested.length > 0) {
