@@ -149,12 +149,11 @@ function contents(input: AuditInput, c: StatedComposition, factor: number): Find
   });
 }
 
-/** Items in which programs for structures describe solvent that was taken out of the data. */
-const MASKS = [
-];
+/** Data names of voids or masks: solvent was taken out of the data, whatever software wrote the item. */
+const MASK = /_(?:void|voids|mask|masks|masked)(?:_|$)/i;
 
 function hasMask({ block }: AuditInput): boolean {
-  return MASKS.some((name) => block.has(name));
+  return block.names().some((name) => MASK.test(name));
 }
 
 function hydrogen(input: AuditInput, c: StatedComposition, factor: number): Finding[] {
