@@ -41,7 +41,8 @@ export async function readSource(file: string, args: Arguments): Promise<Source>
   return { file: name, text, document: value };
 }
 
-async function bytesOf(file: string): Promise<Uint8Array> {
+/** @throws LocatedProblem if the file cannot be read; `-` is standard input */
+export async function bytesOf(file: string): Promise<Uint8Array> {
   try {
     if (file !== "-") return readFileSync(file);
     const chunks: Buffer[] = [];

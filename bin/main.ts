@@ -17,6 +17,7 @@ const COMMANDS: readonly string[] = [
   "reduce",
   "symmetrise",
   "vet",
+  "absences",
 ];
 
 async function main(words: readonly string[]): Promise<number> {

@@ -5,7 +5,7 @@ import { acentricDensity } from "./wilson-density.ts";
  * Z. Phys. 106 (1937) 141), harmonics of the wavelength or an intruding twin domain. It bounds what a single reflection
  * says against a condition to a factor 10, so that three at least are needed to upset one. Dimensionless.
  */
-const RAISED_SHARE = 0.1;
+export const RAISED_SHARE = 0.1;
 
 /**
  * What may remain of a forbidden reflection, as a share of the mean intensity: harmonics give some thousandths of a

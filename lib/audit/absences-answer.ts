@@ -4,6 +4,7 @@ import {
   formatBasis,
   formatVector,
   type GroupProperties,
+  groupProperties,
   type IdentifiedGroup,
   independentConditions,
   reflectionConditions,
@@ -60,6 +61,8 @@ export interface AbsencesAnswer {
   readonly violations: readonly ForbiddenReflection[];
   /** Merging R in the Laue class of the declared group. */
   readonly rInt: number | null;
+  /** Laue class of the declared group; null without one. */
+  readonly declaredLaueClass: GroupProperties["laueClass"] | null;
   readonly centring: {
     readonly letter: string | null;
     readonly translations: readonly string[];
@@ -115,6 +118,7 @@ export function absencesAnswer(question: AbsencesQuestion): AbsencesAnswer {
     tested: { reflections: indexed.observations.length, absent: forbidden.length, violations: violations.length },
     violations: violations.slice(0, SHOWN_VIOLATIONS),
     rInt: indexed.rInt,
+    declaredLaueClass: declared ? groupProperties(declared.number).laueClass : null,
     centring: {
       letter: centringLetter(centring.centrings),
       translations: centring.centrings.map(formatVector),

@@ -2,7 +2,7 @@ import type { Metric } from "../structure/index.ts";
 import { isSystematicallyAbsent, reflectionConditions, rotationParts, type SpaceGroup } from "../symmetry/index.ts";
 import { type ConditionTest, testCondition } from "./condition-test.ts";
 import { changeIndices, type IndexMatrix } from "./index-matrix.ts";
-import { type Family, familiesOf, joinFamilies, mergingFigures } from "./merge-reflections.ts";
+import { type Family, familiesOf, mergingFigures } from "./merge-reflections.ts";
 import { type Observation, observe } from "./observations.ts";
 import { asSquares, type ReflectionList } from "./reflection-list.ts";
 
@@ -79,7 +79,7 @@ export function indexedBy(
   const conditions = declared
     ? reflectionConditions(declared).map((c) => testCondition(c, declared, observations))
     : [];
-  const rInt = declared ? mergingFigures(joinFamilies(families, rotations)).rInt : null;
+  const rInt = declared ? mergingFigures(families, rotations).rInt : null;
   return { matrix, why: "", families, used: reflections.length, fractional, observations, conditions, rInt };
 }
 

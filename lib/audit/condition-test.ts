@@ -5,9 +5,9 @@ import { average } from "./mean-intensity.ts";
 import type { Observation } from "./observations.ts";
 
 /**
- * `met`: the odds that the reflections are forbidden are very strong; `violated`: that they are present; `undecided`:
- * neither; `not listed`: the list has reflections of the class, but none that the condition forbids; `not measured`: it
- * has none of the class at all.
+ * `met`: the odds that the reflections are forbidden are very strong; `violated`: that they are present, or too many are
+ * raised; `undecided`: neither; `not listed`: the list has reflections of the class, but none that the condition forbids;
+ * `not measured`: it has none of the class at all.
  */
 export type ConditionVerdict = "met" | "violated" | "undecided" | "not listed" | "not measured";
 
@@ -66,7 +66,7 @@ export function testCondition(
     meanShare: n > 0 ? average(forbidden.map((r) => r.value / r.mean)) : null,
     above: overSigma.filter((v) => v > VIOLATION_SIGMA).length,
     evidence,
-    verdict: verdictOf(tested.length, n, evidence),
+    verdict: verdictOf(tested.length, forbidden, evidence),
     systematicallyWeak: n > 0 && (positive - n / 2) / (Math.sqrt(n) / 2) > SIGN_LIMIT,
   };
 }
@@ -81,9 +81,23 @@ export function isForbiddenBy(condition: ReflectionCondition, group: SpaceGroup,
   return !meetsConditions([condition], group, h);
 }
 
-function verdictOf(tested: number, forbidden: number, evidence: number): ConditionVerdict {
+/**
+ * A forbidden reflection is raised if it is significant and above a tenth of the mean intensity. In sound measurements a
+ * twentieth of them is, by multiple diffraction or an intruding domain; where more are, beyond chance, the many others
+ * that are absent do not outweigh them: such a group forbids too much. Dimensionless.
+ */
+const RAISED = { share: 0.1, usual: 0.05, deviations: 4, fewest: 3 } as const;
+
+function tooManyRaised(forbidden: readonly Observation[]): boolean {
+  const raised = forbidden.filter((r) => r.value > VIOLATION_SIGMA * r.sigma && r.value > RAISED.share * r.mean).length;
+  const expected = RAISED.usual * forbidden.length;
+  const scatter = Math.sqrt(expected * (1 - RAISED.usual));
+  return raised >= RAISED.fewest && raised > expected + RAISED.deviations * scatter;
+}
+
+function verdictOf(tested: number, forbidden: readonly Observation[], evidence: number): ConditionVerdict {
   if (tested === 0) return "not measured";
-  if (forbidden === 0) return "not listed";
-  if (evidence > STRONG_EVIDENCE) return "violated";
+  if (forbidden.length === 0) return "not listed";
+  if (evidence > STRONG_EVIDENCE || tooManyRaised(forbidden)) return "violated";
   return evidence < -STRONG_EVIDENCE ? "met" : "undecided";
 }

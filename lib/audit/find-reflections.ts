@@ -108,7 +108,7 @@ function listOfLoop(loop: CifLoop, { category, value, sigma, quantity }: Columns
   }
   if (reflections.length === 0) return null;
   const dropped = loop.rowCount - reflections.length;
-  const notes = dropped > 0 ? [`${dropped} rows without readable indices or value were left out`] : [];
+  const notes = dropped > 0 ? [`rows without readable indices or value, left out: ${dropped}`] : [];
   const source = `the loop of ${columnName(loop, `${category}.${value}`)}`;
   const kind = category === "_refln" ? "refln" : "diffrn_refln";
   return { kind, reflections, quantity, quantityFrom: "data name", source, notes };

@@ -1,15 +1,24 @@
-import { equal, type IntMat3, type IntVec3, MINUS_IDENTITY } from "../algebra/index.ts";
+import {
+  equal,
+  IDENTITY,
+  type IntMat3,
+  type IntVec3,
+  inverseRatMat,
+  MINUS_IDENTITY,
+  negate,
+  ZERO_VECTOR,
+} from "../algebra/index.ts";
 import type { Metric } from "../structure/index.ts";
 import { isSystematicallyAbsent, rotationParts, type Setting, type SpaceGroup } from "../symmetry/index.ts";
 import { presenceEvidence, STRONG_EVIDENCE } from "./absence-likelihood.ts";
 import { type CandidateCell, candidateCell, familiesIn, metricIn } from "./candidate-cell.ts";
 import { centricityEvidence, type IntensityStatistics, intensityStatistics } from "./intensity-statistics.ts";
-import { type FoundCentring, latticeCentring } from "./lattice-centring.ts";
+import { type FoundCentring, isForbidden, latticeCentring } from "./lattice-centring.ts";
 import { type LaueTests, testLaueGroups } from "./laue-groups.ts";
 import type { Family } from "./merge-reflections.ts";
-import { type Observation, observe } from "./observations.ts";
+import { keepsReflection, type Observation, observe } from "./observations.ts";
 import { omissionEvidence, specialClasses } from "./omissions.ts";
-import { type ReducedLattice, reducedLattice } from "./reduced-lattice.ts";
+import { type ReducedLattice, reducedLattice, rotationsIn } from "./reduced-lattice.ts";
 import { classEvidence } from "./zone-statistics.ts";
 
 /** A space group that may be the one of the crystal; all evidence as natural logarithms of odds, larger is better. */
@@ -41,7 +50,7 @@ export interface FittingGroups {
   readonly groups: readonly FittingGroup[];
 }
 
-const TRICLINIC: readonly IntMat3[] = [[1, 0, 0, 0, 1, 0, 0, 0, 1]];
+const TRICLINIC: readonly IntMat3[] = [IDENTITY];
 
 /**
  * Lattice centring, Laue class and space groups from the cell and the reflections alone.
@@ -49,15 +58,32 @@ const TRICLINIC: readonly IntMat3[] = [[1, 0, 0, 0, 1, 0, 0, 0, 1]];
  * @throws InputProblem `cell-too-skew`
  */
 export function fittingGroups(families: readonly Family[], metric: Metric, angleTolerance: number): FittingGroups {
-  const centring = latticeCentring(observe(families, metric, TRICLINIC, () => false));
+  const centring = latticeCentring(generalReflections(families, metric, angleTolerance));
+  const allowed = families.filter((f) => !centring.centrings.some((t) => isForbidden(t, f.h)));
   const lattice = reducedLattice(metric, centring.centrings, angleTolerance);
-  const laue = testLaueGroups(familiesIn(families, lattice.basis), lattice.rotations);
+  const laue = testLaueGroups(familiesIn(allowed, lattice.basis), lattice.rotations);
   const cell = candidateCell(lattice, centring.centrings, laue.chosen);
   const own = metricIn(metric, cell.P);
-  const observations = observe(familiesIn(families, cell.P), own, cell.rotations, () => false);
+  const observations = observe(familiesIn(allowed, cell.P), own, cell.rotations, () => false);
   const statistics = intensityStatistics(observations);
   const groups = ordered(cell, observations, own, statistics);
   return { centring, lattice, laue, cell, metric: own, observations, statistics, groups };
+}
+
+/** Fewer reflections in general position than this are not relied upon. */
+const FEWEST_GENERAL = 50;
+
+/**
+ * The reflections that no symmetry of the lattice keeps, since glide planes and screw axes do not touch them; all
+ * reflections where these are few.
+ */
+function generalReflections(families: readonly Family[], metric: Metric, angleTolerance: number): Observation[] {
+  const { basis, rotations } = reducedLattice(metric, [ZERO_VECTOR], angleTolerance);
+  const inCell = rotationsIn(inverseRatMat(basis), rotations) ?? TRICLINIC;
+  const keeping = [...inCell, ...inCell.map(negate)].filter((W) => !equal(W, IDENTITY));
+  const all = observe(families, metric, TRICLINIC, () => false);
+  const general = all.filter((r) => !keeping.some((W) => keepsReflection(W, r.h)));
+  return general.length >= FEWEST_GENERAL ? general : all;
 }
 
 function ordered(

@@ -73,15 +73,18 @@ export function groupsInCell(
   }));
 }
 
-/** Settings of the types of a Laue class; the other origin choice has the same absences and is left out. */
-function* settingsOfClass(laueClass: string): Generator<GroupInCell> {
+const known = new Map<string, readonly GroupInCell[]>();
+
+/** Settings of the types of a Laue class, kept; the other origin choice has the same absences and is left out. */
+function settingsOfClass(laueClass: string): readonly GroupInCell[] {
+  const found = known.get(laueClass);
+  if (found) return found;
   const classes = (CLASSES[laueClass] ?? "").split(" ");
-  for (const { number, schoenflies } of spaceGroupTypes()) {
-    if (!classes.includes(schoenflies.split("^")[0]!)) continue;
-    for (const setting of settingsOf(number)) {
-      if (setting.choice !== "1") yield { setting, group: spaceGroup(settingOperations(setting)) };
-    }
-  }
+  const types = spaceGroupTypes().filter((t) => classes.includes(t.schoenflies.split("^")[0]!));
+  const settings = types.flatMap(({ number }) => settingsOf(number).filter((s) => s.choice !== "1"));
+  const fresh = settings.map((setting) => ({ setting, group: spaceGroup(settingOperations(setting)) }));
+  known.set(laueClass, fresh);
+  return fresh;
 }
 
 /** Largest index tried: periods of screw axes and diamond glides divide 6 or 4. */

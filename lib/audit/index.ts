@@ -7,6 +7,7 @@ export {
   absencesAnswer,
   type LaueAnswer,
 } from "./absences-answer.ts";
+export { type AbsencesOptions, absencesQuestion } from "./absences-question.ts";
 export type { CandidateAnswer } from "./candidates-answer.ts";
 export { type ConditionTest, type ConditionVerdict, VIOLATION_SIGMA } from "./condition-test.ts";
 export { type FoundReflections, findReflections, listOfText } from "./find-reflections.ts";

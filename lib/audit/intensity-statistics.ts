@@ -15,8 +15,8 @@ export interface IntensityStatistics {
   readonly reflections: number;
   readonly expectedCentric: number;
   readonly expectedAcentric: number;
-  /** Which of the two it is nearer to, where the difference is clear. */
-  readonly verdict: "centric" | "acentric" | "undecided";
+  /** Which of the two it is nearer to, where the difference is clear; `below acentric` is nearer to a twin's 0.541. */
+  readonly verdict: "centric" | "acentric" | "below acentric" | "undecided";
 }
 
 /** Reflections to a shell of resolution. */
@@ -33,7 +33,6 @@ export const STRUCTURE_SCATTER = 0.05;
 
 /**
  * Mean |E^2 - 1| over reflections in general position, each shell of resolution brought to <E^2> = 1 by itself.
- * @param isAbsent reflections left out
  */
 export function intensityStatistics(list: readonly Observation[]): IntensityStatistics {
   const general = list.filter((r) => !r.special).sort((a, b) => a.x - b.x);
@@ -61,9 +60,10 @@ export function intensityStatistics(list: readonly Observation[]): IntensityStat
 
 function callOf(mean: number, error: number): IntensityStatistics["verdict"] {
   const middle = (EXPECTED_CENTRIC + EXPECTED_ACENTRIC) / 2;
-  const doubt = Math.hypot(error, STRUCTURE_SCATTER);
+  const doubt = Math.hypot(2 * error, STRUCTURE_SCATTER);
   if (Math.abs(mean - middle) < doubt) return "undecided";
-  return mean > middle ? "centric" : "acentric";
+  if (mean > middle) return "centric";
+  return mean + doubt < (EXPECTED_ACENTRIC + EXPECTED_TWINNED) / 2 ? "below acentric" : "acentric";
 }
 
 /** Logarithm of the likelihood of a mean, up to a constant: normal about the expectation. */
@@ -72,5 +72,5 @@ export function centricityEvidence({ meanDeviation, standardError }: IntensitySt
   const expected = centric ? EXPECTED_CENTRIC : EXPECTED_ACENTRIC;
   // a mean beyond both ends favours the nearer no more than at its expectation
   const mean = Math.max(EXPECTED_ACENTRIC, Math.min(EXPECTED_CENTRIC, meanDeviation));
-  return -0.5 * ((mean - expected) / Math.hypot(standardError ?? 0, STRUCTURE_SCATTER)) ** 2;
+  return -0.5 * ((mean - expected) / Math.hypot(standardError ?? 0, STRUCTURE_SCATTER)) ** 2 + 0; // no -0
 }

@@ -1,4 +1,4 @@
-import { IDENTITY, type IntVec3, mod, type RatVec3, ratVec3 } from "../algebra/index.ts";
+import { IDENTITY, type IntVec3, mod, type RatVec3, ratVec3, ZERO_VECTOR } from "../algebra/index.ts";
 import { centringsOf, closeGroup, formatVector } from "../symmetry/index.ts";
 import { presenceEvidence, STRONG_EVIDENCE } from "./absence-likelihood.ts";
 import type { Observation } from "./observations.ts";
@@ -8,7 +8,7 @@ import { MANY_REFLECTIONS } from "./reflection-list.ts";
 export interface TranslationTest {
   /** `1/2,1/2,0` */
   readonly translation: string;
-  /** Reflections listed that it forbids. */
+  /** Reflections listed that it forbids and the translations before it do not. */
   readonly listed: number;
   /** Natural logarithm of the odds that they are present rather than forbidden. */
   readonly evidence: number;
@@ -23,21 +23,40 @@ export interface FoundCentring {
 }
 
 /**
- * The lattice that reflections show in the cell they are indexed in: every translation by halves or thirds of the axes
- * whose forbidden reflections are absent. Finds centrings as well as a cell taken too large.
+ * The lattice that reflections show in the cell they are indexed in: translations by halves or thirds of the axes whose
+ * forbidden reflections are absent, the clearest first, each next one judged by the reflections that those before it
+ * allow. Finds centrings as well as a cell taken too large.
  */
 export function latticeCentring(observations: readonly Observation[]): FoundCentring {
-  const accepted: RatVec3[] = [];
-  const tests = [...translations(2), ...translations(3)].map((t): TranslationTest => {
-    const forbidden = observations.filter((r) => isForbidden(t, r.h));
-    const evidence = forbidden.reduce((sum, r) => sum + presenceEvidence(r.value, r.sigma, r.mean), 0);
-    const omitted = forbidden.length === 0 && observations.length >= MANY_REFLECTIONS;
-    const isLattice = omitted || (forbidden.length > 0 && evidence < -STRONG_EVIDENCE);
-    if (isLattice) accepted.push(t);
-    return { translation: formatVector(t), listed: forbidden.length, evidence, accepted: isLattice };
-  });
-  const operations = accepted.map((w) => ({ W: IDENTITY, w }));
-  return { centrings: centringsOf(closeGroup([{ W: IDENTITY, w: ratVec3([0, 0, 0]) }, ...operations])), tests };
+  const accepted: { t: RatVec3; test: TranslationTest }[] = [];
+  let allowed = observations.map((r) => ({ h: r.h, evidence: presenceEvidence(r.value, r.sigma, r.mean) }));
+  for (;;) {
+    const centrings = closed(accepted.map((a) => a.t));
+    const known = new Set(centrings.map(formatVector));
+    const open = [...translations(2), ...translations(3)].filter((t) => !known.has(formatVector(t)));
+    const tests = open.map((t) => ({ t, test: testTranslation(t, allowed) }));
+    tests.sort((a, b) => a.test.evidence - b.test.evidence);
+    const best = tests.find((a) => a.test.accepted);
+    if (!best) return { centrings, tests: [...accepted, ...tests].map((a) => a.test) };
+    accepted.push(best);
+    allowed = allowed.filter((r) => !isForbidden(best.t, r.h));
+  }
+}
+
+function testTranslation(t: RatVec3, list: readonly { h: IntVec3; evidence: number }[]): TranslationTest {
+  let [listed, evidence] = [0, 0];
+  for (const r of list) {
+    if (!isForbidden(t, r.h)) continue;
+    listed++;
+    evidence += r.evidence;
+  }
+  const omitted = listed === 0 && list.length >= MANY_REFLECTIONS;
+  return { translation: formatVector(t), listed, evidence, accepted: omitted || evidence < -STRONG_EVIDENCE };
+}
+
+function closed(translations: readonly RatVec3[]): RatVec3[] {
+  const operations = [ZERO_VECTOR, ...translations].map((w) => ({ W: IDENTITY, w }));
+  return centringsOf(closeGroup(operations));
 }
 
 /** Whether a translation forbids a reflection: h . t is no integer. */

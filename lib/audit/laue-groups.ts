@@ -1,6 +1,6 @@
 import { equal, IDENTITY, type IntMat3, multiply, negate, ZERO_VECTOR } from "../algebra/index.ts";
 import { type GroupProperties, groupProperties, identify } from "../symmetry/index.ts";
-import { type Family, indexKey, joinFamilies, largestKey, mergeFamily, mergingFigures } from "./merge-reflections.ts";
+import { type Family, indexKey, largestKey, mergeFamily, mergingFigures } from "./merge-reflections.ts";
 
 /** A Laue class in one of the orientations that the lattice allows, with the agreement of its equivalents. */
 export interface LaueGroup {
@@ -50,7 +50,7 @@ export function testLaueGroups(families: readonly Family[], lattice: readonly In
     const tested = rotations.flatMap((W) => byRotation.get(W.join()) ?? []);
     const rWorst = rotations.length > 1 && tested.length > 1 ? Math.max(...tested) : null;
     const { number } = identify([...rotations, ...rotations.map(negate)].map((W) => ({ W, w: ZERO_VECTOR })));
-    const figures = mergingFigures(joinFamilies(families, rotations));
+    const figures = mergingFigures(families, rotations);
     const { laueClass } = groupProperties(number);
     return { laueClass, rotations, ...figures, rWorst, accepted: (rWorst ?? 0) <= limit };
   });
@@ -62,7 +62,7 @@ export function testLaueGroups(families: readonly Family[], lattice: readonly In
 const NOISE = 1 / Math.sqrt(Math.PI);
 
 function basicDisagreement(families: readonly Family[]): number {
-  const { rInt } = mergingFigures(families);
+  const { rInt } = mergingFigures(families, [IDENTITY]);
   let [sigma, value] = [0, 0];
   for (const family of families) {
     const merged = mergeFamily(family);

@@ -13,8 +13,9 @@ export interface ValueAt {
 
 /**
  * Mean intensity in shells of equal number of reflections, joined by straight lines of its logarithm and level beyond the
- * ends. A shell whose mean is not positive takes that of the shell before it.
- * @param list reflections that are neither absent nor special; 1 everywhere if there are none of positive mean
+ * ends. A mean is not taken to be less than its standard error from the scatter, so that shells of nothing but noise get
+ * one that is far below their uncertainties and decide nothing.
+ * @param list reflections that are neither absent nor special; 1 everywhere if there are none but zeros
  */
 export function meanIntensity(list: readonly ValueAt[]): MeanIntensity {
   const sorted = [...list].sort((a, b) => a.x - b.x);
@@ -26,9 +27,9 @@ export function meanIntensity(list: readonly ValueAt[]): MeanIntensity {
       Math.floor(((i + 1) * sorted.length) / shells),
     );
     const mean = average(shell.map((r) => r.value));
-    const last = points.at(-1)?.log;
-    if (!(mean > 0) && last === undefined) continue;
-    points.push({ x: average(shell.map((r) => r.x)), log: mean > 0 ? Math.log(mean) : last! });
+    const variance = average(shell.map((r) => (r.value - mean) ** 2));
+    const least = Math.max(mean, Math.sqrt(variance / shell.length));
+    if (least > 0) points.push({ x: average(shell.map((r) => r.x)), log: Math.log(least) });
   }
   return (x) => Math.exp(interpolate(points, x));
 }

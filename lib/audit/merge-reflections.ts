@@ -45,20 +45,26 @@ export function familiesOf(list: readonly Reflection[]): Family[] {
   return [...families.values()];
 }
 
-/** Families put together that rotation parts of a point group carry into one another; opposites count as one anyway. */
-export function joinFamilies(families: readonly Family[], rotations: readonly IntMat3[]): Family[] {
-  if (rotations.length === 1) return [...families];
+/** Families that rotation parts of a point group carry into one another, by the key of the one that stands for all. */
+function orbitsOf(families: readonly Family[], rotations: readonly IntMat3[]): Map<number, Family[]> {
   const matrices = [...rotations, ...rotations.map(negate)];
-  const joined = new Map<number, { h: IntVec3; values: number[]; sigmas: (number | null)[] }>();
-  for (const { h, values, sigmas } of families) {
-    const key = largestKey(h, matrices);
-    const known = joined.get(key);
-    if (known) {
-      known.values.push(...values);
-      known.sigmas.push(...sigmas);
-    } else joined.set(key, { h: indexOfKey(key), values: [...values], sigmas: [...sigmas] });
+  const orbits = new Map<number, Family[]>();
+  for (const family of families) {
+    const key = largestKey(family.h, matrices);
+    const orbit = orbits.get(key);
+    if (orbit) orbit.push(family);
+    else orbits.set(key, [family]);
   }
-  return [...joined.values()];
+  return orbits;
+}
+
+/** Equivalent families put together; opposites count as one anyway. */
+export function joinFamilies(families: readonly Family[], rotations: readonly IntMat3[]): Family[] {
+  return Array.from(orbitsOf(families, rotations), ([key, orbit]) => ({
+    h: indexOfKey(key),
+    values: orbit.length === 1 ? orbit[0]!.values : orbit.flatMap((f) => f.values),
+    sigmas: orbit.length === 1 ? orbit[0]!.sigmas : orbit.flatMap((f) => f.sigmas),
+  }));
 }
 
 export function mergeFamily({ h, values, sigmas }: Family): Merged {
@@ -67,16 +73,19 @@ export function mergeFamily({ h, values, sigmas }: Family): Merged {
   return { h, value: mean, sigma: sigmaOfMean(values, sigmas, mean), count: n };
 }
 
-export function mergingFigures(families: readonly Family[]): MergingFigures {
+/** Agreement of the equivalents under rotation parts of a point group. */
+export function mergingFigures(families: readonly Family[], rotations: readonly IntMat3[]): MergingFigures {
   let [difference, sum, compared] = [0, 0, 0];
-  for (const { values } of families) {
-    if (values.length < 2) continue;
-    const mean = values.reduce((s, v) => s + v, 0) / values.length;
-    for (const value of values) {
-      difference += Math.abs(value - mean);
-      sum += value;
+  for (const orbit of orbitsOf(families, rotations).values()) {
+    let [n, total] = [0, 0];
+    for (const { values } of orbit) {
+      n += values.length;
+      for (const value of values) total += value;
     }
-    compared += values.length;
+    if (n < 2) continue;
+    for (const { values } of orbit) for (const value of values) difference += Math.abs(value - total / n);
+    sum += total;
+    compared += n;
   }
   return { rInt: sum > 0 ? difference / sum : null, compared };
 }

@@ -1,4 +1,4 @@
-import { type IntMat3, type IntVec3, negate, type RatVec3 } from "../algebra/index.ts";
+import { equal, IDENTITY, type IntMat3, type IntVec3, negate, type RatVec3 } from "../algebra/index.ts";
 import type { Metric } from "../structure/index.ts";
 import { isForbidden } from "./lattice-centring.ts";
 import { indexKey, largestKey } from "./merge-reflections.ts";
@@ -7,7 +7,7 @@ import { inverseSquareSpacing, keepsReflection, type Observation } from "./obser
 /** Reflections that the same rotations keep: a zone or a row, up to equivalence. */
 interface SpecialClass {
   readonly listed: IntVec3[];
-  /** Within the limits of the list, but not in it. */
+  /** Within the resolution of the list, but not in it. */
   readonly unlisted: IntVec3[];
 }
 
@@ -18,7 +18,7 @@ const SHARE = { least: 0.5, most: 0.9 } as const;
 /** However many are left out, what that says is bounded: odds of e^10. */
 const MOST_EVIDENCE = 10;
 
-/** Special reflections of the lattice up to the largest indices and the resolution of a list, by class. */
+/** Special reflections of the lattice up to the resolution of a list, by class. */
 export function specialClasses(
   list: readonly Observation[],
   metric: Metric,
@@ -26,21 +26,22 @@ export function specialClasses(
   centrings: readonly RatVec3[],
 ): SpecialClass[] {
   const matrices = [...rotations, ...rotations.map(negate)];
+  const others = matrices.filter((W) => !equal(W, IDENTITY));
   const known = new Set(list.map((r) => indexKey(r.h[0], r.h[1], r.h[2])));
   const farthest = list.reduce((x, r) => Math.max(x, r.x), 0);
-  const limits = [0, 1, 2].map((i) => list.reduce((m, r) => Math.max(m, ...matrices.map((W) => span(r.h, W, i))), 0));
+  // |h| = |h . a| is at most a / d
+  const { a, b, c } = metric.cell;
+  const [H, K, L] = [a, b, c].map((e) => Math.floor(e * Math.sqrt(farthest))) as [number, number, number];
   const classes = new Map<string, SpecialClass>();
-  const [H, K, L] = limits as [number, number, number];
   for (let h = -H; h <= H; h++) {
     for (let k = -K; k <= K; k++) {
       for (let l = 0; l <= L; l++) {
         const index: IntVec3 = [h, k, l];
-        const keeping = matrices.flatMap((W, i) => (i > 0 && keepsReflection(W, index) ? [i] : []));
-        if (keeping.length === 0 || (h === 0 && k === 0 && l === 0)) continue;
-        if (centrings.some((t) => isForbidden(t, index))) continue;
+        if (!others.some((W) => keepsReflection(W, index)) || (h === 0 && k === 0 && l === 0)) continue;
         const key = indexKey(h, k, l);
         if (key !== largestKey(index, matrices) || inverseSquareSpacing(metric, index) > farthest) continue;
-        const name = keeping.join();
+        if (centrings.some((t) => isForbidden(t, index))) continue;
+        const name = others.flatMap((W, i) => (keepsReflection(W, index) ? [i] : [])).join();
         const found = classes.get(name) ?? { listed: [], unlisted: [] };
         classes.set(name, found);
         (known.has(key) ? found.listed : found.unlisted).push(index);
@@ -48,10 +49,6 @@ export function specialClasses(
     }
   }
   return [...classes.values()];
-}
-
-function span([h, k, l]: IntVec3, W: IntMat3, i: number): number {
-  return Math.abs(h * W[i]! + k * W[3 + i]! + l * W[6 + i]!);
 }
 
 /**

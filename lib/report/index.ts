@@ -1,4 +1,5 @@
 /** Results as text. Takes finished result objects; computes nothing. */
+export { absencesText } from "./absences-text.ts";
 export { type CorrelationLevels, correlationDiagram, correlationLevels } from "./correlation-diagram.ts";
 export { correlationSvg } from "./correlation-svg.ts";
 export { formatNumber } from "./format-number.ts";
