@@ -71,8 +71,24 @@ export function molecularCrystal(seed: number): MolecularCrystal {
       return unit ? [unit] : [];
     });
     if (!placed.some((u) => u.shape)) continue;
-    const crystal = assemble(group, found, placed);
+    const crystal = assemble(group, found, placed, MOST_ATOMS);
     if (crystal) return { crystal, placed };
+  }
+}
+
+/** A crystal of a type with molecules of the shapes named, and atoms of the elements named, all on general positions. */
+export function crystalWith(type: number, kinds: readonly string[], seed: number): Crystal {
+  const random = randomNumbers(seed);
+  const group = spaceGroup(settingOperations(settingsOf(type)[0]!));
+  const narrow = metricOf(cellOfMetric(invariantMetric(group, [1, 2, 3])));
+  for (;;) {
+    const placed = kinds.map((kind) => {
+      const shape = shapes().find((s) => s.name === kind) ?? kind;
+      const centre: Vec3 = [random(), random(), random()];
+      return placeAt(shape, { group, metric: narrow, centre, reach: 0 }, random)!;
+    });
+    const crystal = assemble(group, narrow, placed, Number.POSITIVE_INFINITY);
+    if (crystal) return crystal;
   }
 }
 
@@ -84,20 +100,35 @@ function place(
   random: () => number,
 ): PlacedUnit | null {
   const reach = [0.01, 2, 4, 6, 6][Math.floor(random() * 5)]!;
-  const site = siteSymmetry(group.operations, metric, [random(), random(), random()], reach);
-  const common = { centre: site.point, siteOrder: site.operations.length };
-  const C = metric.toCartesian;
-  const matrices = site.operations.map(({ W }) => multiply3(C, multiply3(W, inverse3(C))));
+  const centre: Vec3 = [random(), random(), random()];
   for (const kind of kinds) {
-    if (typeof kind === "string") {
-      return { shape: null, ...common, axis: [0, 0, 1], atoms: [{ element: kind, place: [0, 0, 0] }] };
-    }
-    const R = orientationOn(elementsOf(kind), matrices, random);
-    if (!R) continue;
-    const atoms = kind.atoms.map((a) => ({ element: a.element, place: apply3(R, a.place) }));
-    return { shape: kind, ...common, axis: [R[2], R[5], R[8]], atoms };
+    const unit = placeAt(kind, { group, metric, centre, reach }, random);
+    if (unit) return unit;
   }
   return null;
+}
+
+/** Where a unit is to stand: on the special position within reach, angstrom, or on the point itself. */
+interface Place {
+  readonly group: SpaceGroup;
+  readonly metric: Metric;
+  readonly centre: Vec3;
+  readonly reach: number;
+}
+
+function placeAt(kind: Shape | string, place: Place, random: () => number): PlacedUnit | null {
+  const { group, metric, centre, reach } = place;
+  const site = siteSymmetry(group.operations, metric, centre, reach);
+  const common = { centre: site.point, siteOrder: site.operations.length };
+  if (typeof kind === "string") {
+    return { shape: null, ...common, axis: [0, 0, 1], atoms: [{ element: kind, place: [0, 0, 0] }] };
+  }
+  const C = metric.toCartesian;
+  const matrices = site.operations.map(({ W }) => multiply3(C, multiply3(W, inverse3(C))));
+  const R = orientationOn(elementsOf(kind), matrices, random);
+  if (!R) return null;
+  const atoms = kind.atoms.map((a) => ({ element: a.element, place: apply3(R, a.place) }));
+  return { shape: kind, ...common, axis: [R[2], R[5], R[8]], atoms };
 }
 
 /** A rotation R such that every matrix of the site is R m R^T with an element m of the molecule's group. */
@@ -143,11 +174,11 @@ function basisOf(u: Vec3, v: Vec3): Mat3 | null {
 }
 
 /** The crystal, its cell widened until the units are apart; null where it would hold too many atoms. */
-function assemble(group: SpaceGroup, narrow: Metric, placed: readonly PlacedUnit[]): Crystal | null {
+function assemble(group: SpaceGroup, narrow: Metric, placed: readonly PlacedUnit[], mostAtoms: number): Crystal | null {
   for (let width = 1; width < 20; width *= 1.25) {
     const metric = metricOf(cellOfMetric(narrow.g.map((e) => e * width * width) as unknown as Mat3));
     const points = instances(group, metric, placed);
-    if (points.length > MOST_ATOMS) return null;
+    if (points.length > mostAtoms) return null;
     const positions = points.map((p) => p.position);
     const touching = contactsWithin(metric, positions, APART).contacts.some(({ first, second, shift }) => {
       return points[first]!.instance !== points[second]!.instance || shift.some((e) => e !== 0);
