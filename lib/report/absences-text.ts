@@ -117,6 +117,9 @@ function violationTable({ violations, tested }: AbsencesAnswer): string {
 const SHOWN_CLASSES = 12;
 
 function laueText({ laueClasses, laueLimit, rBase, declaredLaueClass }: AbsencesAnswer): string {
+  if (laueClasses.every((c) => c.compared === 0)) {
+    return `no reflection is listed together with an equivalent, so Laue classes cannot be tested; ${laueClasses.find((c) => c.chosen)!.laueClass} is the highest that the cell allows`;
+  }
   const columns: Column[] = [
     { heading: "Laue class" },
     { heading: "R of equivalents", ...right },
