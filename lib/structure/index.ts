@@ -36,6 +36,9 @@ export {
   type Vec3,
 } from "./cell.ts";
 export { AtomAction, type CellAtom, cellAtoms, type LatticeAtom } from "./cell-atoms.ts";
+export { type CellTranslations, translationsIn } from "./cell-lattice.ts";
+export { type CellRequest, formatCellRequest, parseCellRequest, requestedCell } from "./cell-request-text.ts";
+export { type ChangedCell, changeOfCell, metricIn, multiplesOf } from "./change-of-cell.ts";
 export type { SymmetryDisagreement } from "./compare-statements.ts";
 export { cellContents, contentsMisfit } from "./composition.ts";
 export { BOND_TOLERANCE, type BondRule, NEAR_LIMIT, radiusSum } from "./contact-table.ts";
@@ -77,8 +80,10 @@ export type { Deviation } from "./deviation.ts";
 export { type ComponentChoice, chooseComponents } from "./disorder.ts";
 export type { DisplacementTensor } from "./displacement.ts";
 export { type Element, element, readLabel, readTypeSymbol, type SpeciesReading } from "./elements.ts";
+export { type ExpandedAtom, type ExpansionOptions, expandedAtoms, type Interval } from "./expanded-atoms.ts";
 export { type Formula, formatFormula, hillOrder, parseFormula } from "./formula-text.ts";
 export { type FormulaUnits, formulaUnits, statedFormula } from "./formula-units.ts";
+export { connectedUnit, gatheredPieces } from "./gathered-pieces.ts";
 export { CENTRED_HYDROGEN } from "./hydrogen-rule.ts";
 export { invariantMetric } from "./invariant-metric.ts";
 export { axesOf, changeAxes, type LatticeAxes } from "./lattice-axes.ts";
