@@ -49,7 +49,7 @@ export interface MolecularCrystal {
 const APART = 3.4;
 
 /** Larger cells would only cost time. */
-const MOST_ATOMS = 250;
+const MOST_ATOMS = 160;
 
 /** All crystal systems, kinds of centring, polar, chiral and centrosymmetric classes, symmorphic or not. */
 const TYPES = [
