@@ -1,6 +1,7 @@
 /**
- * Builds dist/: lib/ file by file with declarations (tsc; no Node types, so a Node API in lib/ stops the build), and
- * the command line bundled into dist/bin, one bundle per command, so that a command loads only what it needs.
+ * Builds dist/: lib/ file by file with declarations (tsc; no Node types, so a Node API in lib/ stops the build), the
+ * schema of the JSON answers, and the command line bundled into dist/bin, one bundle per command, so that a command loads
+ * only what it needs.
  * Everything is built beside dist/ and moved into place at the end: a failed build leaves the old one whole.
  */
 import { spawnSync } from "node:child_process";
@@ -16,7 +17,7 @@ import {
 } from "node:fs";
 import Module, { createRequire } from "node:module";
 import { basename, dirname, join } from "node:path";
-import { fileURLToPath } from "node:url";
+import { fileURLToPath, pathToFileURL } from "node:url";
 import { Script } from "node:vm";
 import { build } from "esbuild";
 
@@ -37,6 +38,7 @@ const loadedApart = {
 
 try {
   compileLibrary();
+  await writeSchema();
   await bundleCommandLine();
   for (const name of readdirSync(join(fresh, "bin", "commands"))) await keepCompiledCode(name);
   rmSync(target, { recursive: true, force: true });
@@ -61,6 +63,13 @@ function compileLibrary() {
   for (const file of readdirSync(join(fresh, "lib"), { recursive: true, encoding: "utf8" })) {
     if (file.endsWith(".d.ts")) nameEmittedFiles(join(fresh, "lib", file));
   }
+}
+
+/** The schema of all JSON answers, as a file that any validator reads. */
+async function writeSchema() {
+  const module = pathToFileURL(join(fresh, "lib", "report", "schema", "answers-schema.js"));
+  const { answersSchema } = await import(module.href);
+  writeFileSync(join(fresh, "schema.json"), `${JSON.stringify(answersSchema(), null, 2)}\n`);
 }
 
 /** tsc renames `./x.ts` to `./x.js` in code but not in declarations, where older compilers and tools stumble over it. */

@@ -1,4 +1,4 @@
-import type { InputProblem } from "../lib/problem.ts";
+import { conclusionOf } from "./conclusion.ts";
 import { loadCommand } from "./load-command.ts";
 import { UsageProblem } from "./problems.ts";
 import { printOut } from "./standard-output.ts";
@@ -46,34 +46,13 @@ function say(text: string): number {
   return 0;
 }
 
-/**
- * Status and words for whatever ended a command; a stack is never shown. Commands are bundled apart from this file, so
- * their errors are told by name, not by class.
- */
-function conclude(e: unknown): number {
-  const { name, message, hint } = e as Partial<InputProblem>;
-  switch (name as string | undefined) {
-    case "UsageProblem":
-      return complain(`sitefold: ${message}\n  sitefold COMMAND --help tells what there is`, 2);
-    case "LocatedProblem":
-      return complain(String(message), 3);
-    case "InputProblem":
-      return complain(`${message}${hint ? `\n  ${hint}` : ""}`, 3);
-    default:
-      return complain(`defect in sitefold ${VERSION}, please report it with the input: ${String(e)}`, 4);
-  }
-}
-
-function complain(text: string, status: number): number {
-  process.stderr.write(`${text}\n`);
-  return status;
-}
-
 main(process.argv.slice(2)).then(
   (status) => {
     process.exitCode = status; // never process.exit: it cuts off piped output
   },
   (e: unknown) => {
-    process.exitCode = conclude(e);
+    const { text, status } = conclusionOf(e);
+    process.stderr.write(`${text}\n`);
+    process.exitCode = status;
   },
 );

@@ -3,7 +3,7 @@ import { criteriaText, criterionText, type VettedBlock, vetTable, vetText } from
 import { POSITION_TOLERANCE } from "../../lib/structure/index.ts";
 import { type Arguments, COMMON_OPTIONS, type CommandSpec, parseArguments } from "../arguments.ts";
 import { blaming, readSource, type Source } from "../input.ts";
-import { deliver, jsonDocument } from "../output.ts";
+import { deliver, type Heading, jsonDocument } from "../output.ts";
 import { LocatedProblem, UsageProblem } from "../problems.ts";
 import { structureBlocks } from "../structure-blocks.ts";
 
@@ -58,15 +58,16 @@ function text(vetted: readonly VettedBlock[]): string {
 }
 
 function json(vetted: readonly VettedBlock[], tolerance: number): string {
-  const common = { command: spec.name, notes: [], tolerance: { position: tolerance } };
   const [only] = vetted;
-  if (vetted.length === 1 && only?.answer) {
-    return jsonDocument({ ...common, source: { file: only.file, block: only.block } }, only.answer);
-  }
+  if (vetted.length === 1 && only?.answer) return jsonDocument(heading(only, tolerance), only.answer);
   const files = vetted.map(({ file, block, answer, problem }) =>
     answer ? { source: { file, block }, ...answer } : { source: { file, block }, problem },
   );
-  return jsonDocument({ ...common, source: { file: "", block: "" } }, { files });
+  return jsonDocument(heading({ file: "", block: "" }, tolerance), { files });
+}
+
+function heading({ file, block }: Heading["source"], tolerance: number): Heading {
+  return { command: spec.name, source: { file, block }, notes: [], tolerance: { position: tolerance } };
 }
 
 function inputOf(args: Arguments): string | null {
@@ -79,6 +80,7 @@ async function explain(id: string, args: Arguments): Promise<number> {
   if (!criterion && id !== "all") throw new UsageProblem(`no finding has the id "${id}"; --explain all lists them`);
   const criteria = criterion ? [criterion] : allCriteria();
   const plain = criterion ? criterionText(criterion) : criteriaText(criteria);
-  await deliver(args.flag("json") ? `${JSON.stringify({ criteria }, null, 2)}\n` : plain, args, null);
+  const document = () => jsonDocument(heading({ file: "", block: "" }, 0), { criteria });
+  await deliver(args.flag("json") ? document() : plain, args, null);
   return 0;
 }

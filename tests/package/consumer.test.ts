@@ -8,7 +8,8 @@ const RESOLUTIONS = [
   { module: "node16", moduleResolution: "node16" },
   { module: "esnext", moduleResolution: "bundler" },
 ];
-const PATHS = Object.keys(MANIFEST.exports).map((path) => path.replace(/^\./, "sitefold"));
+const MODULES = Object.entries(MANIFEST.exports).filter(([path]) => !path.endsWith(".json"));
+const PATHS = MODULES.map(([path]) => path).map((path) => path.replace(/^\./, "sitefold"));
 
 const CONSUMER = `
 import { formatRational, rational } from "sitefold/algebra";
@@ -46,12 +47,17 @@ describe("the packed package", () => {
   });
 
   it("has a file behind every export, types first", () => {
-    for (const target of Object.values(MANIFEST.exports)) {
+    for (const [, target] of MODULES) {
       expect(Object.keys(target)).toEqual(["types", "default"]);
       for (const file of Object.values(target)) {
         expect(existsSync(join(packed.home, file)), file).toBe(true);
       }
     }
+  });
+
+  it("ships the schema of its JSON answers", () => {
+    const read = 'process.stdout.write(require("sitefold/schema.json").$defs.sites.type)';
+    expect(execFileSync(process.execPath, ["-e", read], { cwd: packed.folder, encoding: "utf8" })).toBe("object");
   });
 
   it("exports every room of lib/ that has results to offer", () => {

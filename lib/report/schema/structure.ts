@@ -1,0 +1,159 @@
+import type {
+  HigherGroup,
+  Position,
+  PositionsAnswer,
+  ReduceAnswer,
+  SiteAnswer,
+  SitesAnswer,
+  SymmetriseAnswer,
+} from "../../structure/index.ts";
+import type { SpaceGroupSummary } from "../../symmetry/index.ts";
+import { cellNumbers, type Heading, heading, positionTolerance, spaceGroup, vector, xyz } from "./common.ts";
+import { bravaisType, letter } from "./group.ts";
+import {
+  amount,
+  choice,
+  count,
+  type Fields,
+  flag,
+  list,
+  number,
+  object,
+  orNull,
+  type Shape,
+  text,
+  textLike,
+} from "./shape.ts";
+
+/** An answer about a crystal, as it is printed. */
+export type CrystalDocument<T> = Heading & { readonly spaceGroup: SpaceGroupSummary } & T;
+
+/** Fields in front of every answer about a crystal. */
+export const crystalHeading = (command: string): Fields<Heading & { readonly spaceGroup: SpaceGroupSummary }> => ({
+  ...heading(command),
+  tolerance: positionTolerance(),
+  spaceGroup: spaceGroup(),
+});
+
+const occupancy = () => amount("share of cells in which the atom is there");
+const element = () => orNull(text(), "null where neither type symbol nor label tells");
+
+export function sitesSchema(): Shape<CrystalDocument<SitesAnswer>> {
+  const site = object<SiteAnswer>({
+    label: text(),
+    element: element(),
+    occupancy: occupancy(),
+    multiplicity: count("images in the cell of the file", 1),
+    wyckoff: letter(),
+    referencePosition: textLike(/^\d+[a-zA]$/, "multiplicity and letter in the reference setting"),
+    siteSymmetry: text("oriented symbol"),
+    schoenflies: text(),
+    order: count("operations that leave the site where it is", 1),
+    position: vector("fractional, as the file gives it"),
+    snapped: vector("fractional, on the special position"),
+    shift: amount("distance between the two, angstrom"),
+    constraint: xyz("where the site may move, `x,1/4,z`"),
+    referenceConstraint: xyz("the same in the reference setting"),
+    adp: textLike(/^[^,]+(,[^,]+){5}$/, "u11,u22,u33,u12,u13,u23 as far as they are independent"),
+    adpHoldsFor: choice({ U: true, beta: true }, "form of the tensor in which this holds in any cell"),
+  });
+  return object<CrystalDocument<SitesAnswer>>({ ...crystalHeading("sites"), sites: list(site) });
+}
+
+export function positionsSchema(): Shape<CrystalDocument<PositionsAnswer>> {
+  const position = object<Position>({
+    label: text(),
+    element: element(),
+    occupancy: occupancy(),
+    x: number("fractional"),
+    y: number("fractional"),
+    z: number("fractional"),
+    operation: xyz("makes the atom from its site"),
+  });
+  return object<CrystalDocument<PositionsAnswer>>({
+    ...crystalHeading("positions"),
+    positions: list(position),
+    count: count(),
+  });
+}
+
+export function reduceSchema(): Shape<Heading & ReduceAnswer> {
+  const plain: Fields<ReduceAnswer["niggli"]> = {
+    cell: cellNumbers(),
+    P: xyz("(a',b',c') = (a,b,c) P"),
+    volume: amount("cubic angstrom"),
+  };
+  const symmetric = object<ReduceAnswer["conventional"]>({
+    ...plain,
+    lattice: bravaisType(),
+    deviation: amount("angle by which the lattice misses this symmetry, degrees"),
+  });
+  return object<Heading & ReduceAnswer>({
+    ...heading("reduce"),
+    tolerance: positionTolerance(),
+    cell: cellNumbers(),
+    volume: amount("cubic angstrom"),
+    centring: orNull(text(), "null where the translations have no letter"),
+    centrings: list(xyz()),
+    niggli: object<ReduceAnswer["niggli"]>(plain),
+    delaunay: object<ReduceAnswer["delaunay"]>(plain),
+    conventional: symmetric,
+    lattices: list(symmetric, "lattices of higher symmetry that this one comes near to, and its own"),
+    angleTolerance: amount("degrees"),
+  });
+}
+
+export function symmetriseSchema(): Shape<CrystalDocument<SymmetriseAnswer>> {
+  const displaced = { largest: amount("angstrom"), mean: amount("angstrom") };
+  const higher = object<HigherGroup>({
+    tolerance: amount("displacement by its worst operation, angstrom"),
+    strain: amount("of the cell under its worst rotation, dimensionless"),
+    number: count("", 1),
+    hermannMauguin: text(),
+    index: number("how many times as many operations it has"),
+  });
+  const site = object<SymmetriseAnswer["sites"][number]>({
+    label: text(),
+    element: element(),
+    occupancy: occupancy(),
+    multiplicity: count("", 1),
+    wyckoff: letter(),
+    siteSymmetry: text(),
+    position: vector("fractional"),
+    labels: list(text(), "sites of the file that became this one"),
+    moved: amount("angstrom"),
+  });
+  return object<CrystalDocument<SymmetriseAnswer>>({
+    ...crystalHeading("symmetrise"),
+    tolerance: object<SymmetriseAnswer["tolerance"]>({
+      position: amount("angstrom"),
+      displacement: amount("angstrom"),
+      strain: amount("dimensionless"),
+    }),
+    declared: spaceGroup(),
+    found: spaceGroup(),
+    index: number("how many times as many operations the group found has as the one declared, by volume"),
+    operations: list(
+      object<SymmetriseAnswer["operations"][number]>({
+        xyz: xyz(),
+        inGivenCell: text("the same in the cell of the file"),
+        declared: flag(),
+        ...displaced,
+      }),
+    ),
+    translations: list(object<SymmetriseAnswer["translations"][number]>({ vector: xyz(), ...displaced })),
+    notKept: list(xyz(), "declared operations that strain the cell"),
+    additional: list(
+      object<SymmetriseAnswer["additional"][number]>({ xyz: xyz(), ...displaced, strain: amount() }),
+      "operations that a larger tolerance lets pass",
+    ),
+    additionalComplete: flag(),
+    higher: list(higher),
+    cellChoice: choice({ given: true, conventional: true }),
+    cell: cellNumbers(),
+    transformation: object<SymmetriseAnswer["transformation"]>({ P: xyz(), p: xyz() }),
+    originShift: vector("fractional"),
+    moved: object<SymmetriseAnswer["moved"]>(displaced),
+    sites: list(site),
+  });
+}
