@@ -2,6 +2,7 @@
  * The public face: what most programs need, by name. Everything else is exported by its room: `sitefold/cif`,
  * `sitefold/symmetry`, `sitefold/structure`, `sitefold/representation`, `sitefold/vibrations`, `sitefold/report`.
  */
+export { type VetAnswer, vetAnswer } from "./audit/index.ts";
 export { type CifBlock, type CifDocument, decodeCif, readCif, writeCif } from "./cif/index.ts";
 export { InputProblem, locate, type ParseResult, type Place, requireClean, type Span } from "./problem.ts";
 export { problemText } from "./report/index.ts";
@@ -35,7 +36,11 @@ export {
   factorGroupModes,
   type ModesAnswer,
   modesAnswer,
+  type PatternsAnswer,
+  type PointAnswer,
   type PolariseAnswer,
+  patternsAnswer,
+  pointAnswer,
   polariseAnswer,
   type SplitAnswer,
   splitAnswer,
