@@ -154,6 +154,14 @@ export function rounding({ decimals }: Pick<Numb, "decimals">): number {
   return 0.5 * 10 ** -decimals;
 }
 
+/**
+ * The same for a parameter of an atom: 0 for what is written as an exact fraction, as symmetry fixes them (0, 0.5, 0.125),
+ * without an uncertainty.
+ */
+export function parameterRounding(n: Pick<Numb, "decimals" | "value" | "su">): number {
+  return n.su === null && Number.isInteger(24 * n.value) ? 0 : rounding(n);
+}
+
 /** A stated number as a side of a comparison. */
 export function statementOf({ name, text, su, decimals }: StatedNumber): { what: string; value: string } {
   return { what: name, value: su === null ? text : `${text}(${Math.round(su * 10 ** decimals)})` };

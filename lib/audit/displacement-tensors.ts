@@ -8,7 +8,7 @@ import {
   multiply3,
   symmetricEigen,
 } from "../structure/index.ts";
-import { type AuditInput, rounding, rowNumber, rowText, type StatedNumber } from "./audit-input.ts";
+import { type AuditInput, parameterRounding, rowNumber, rowText, type StatedNumber } from "./audit-input.ts";
 
 /** Components in the order used throughout. */
 export const COMPONENTS = ["11", "22", "33", "12", "13", "23"] as const;
@@ -64,7 +64,7 @@ function readTensor(loop: CifLoop, row: number, letter: string, divisor: number)
     stated: all,
     u: all.map((n) => n.value / divisor),
     su: all.map((n) => (n.su ?? 0) / divisor),
-    rounding: all.map((n) => rounding(n) / divisor),
+    rounding: all.map((n) => parameterRounding(n) / divisor),
   };
 }
 

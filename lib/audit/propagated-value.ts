@@ -9,8 +9,7 @@ import {
   minus3,
   type Vec3,
 } from "../structure/index.ts";
-import type { StatedNumber } from "./audit-input.ts";
-import { rounding } from "./audit-input.ts";
+import { parameterRounding, rounding, type StatedNumber } from "./audit-input.ts";
 import { cellOfStated, type StatedCell } from "./stated-cell.ts";
 import { type CodedImage, imageOf } from "./symmetry-codes.ts";
 
@@ -115,7 +114,7 @@ function coordinates(atoms: readonly PlacedAtom[]): Parameter[] {
         x[axis]! += by;
         return { ...from, positions: new Map(from.positions).set(label, x as unknown as Vec3) };
       };
-      return { set, rounding: rounding(n), su: n.su ?? 0 };
+      return { set, rounding: parameterRounding(n), su: n.su ?? 0 };
     }),
   );
 }

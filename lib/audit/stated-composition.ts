@@ -102,11 +102,15 @@ function wholeUnits(c: StatedComposition): number | null {
   return inCell !== null && Math.abs(inCell - Math.round(inCell)) < LEAST_ATOMS ? Math.round(inCell) : null;
 }
 
-/** Whether the formula is that of the whole cell although more than one formula unit is stated. */
+/**
+ * Whether the formula is that of the whole cell although more than one formula unit is stated: the sites say so, and its
+ * counts can be divided by Z.
+ */
 export function isFormulaOfCell(c: StatedComposition): boolean {
-  return (
-    c.z !== null && c.z.value > 1 && c.contents !== null && unlike(c, c.z.value).length > 0 && unlike(c, 1).length === 0
-  );
+  const z = c.z?.value ?? 1;
+  if (z <= 1 || !c.formula || !c.contents || unlike(c, z).length === 0) return false;
+  const divisible = [...c.formula.values()].every((n) => !Number.isInteger(n) || Number.isInteger(n / z));
+  return divisible && unlike(c, 1).length === 0;
 }
 
 /** Mass in dalton; null where an element has none tabulated. */
