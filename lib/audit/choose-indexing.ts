@@ -67,7 +67,7 @@ export function indexedBy(
   metric: Metric,
   declared: SpaceGroup | null,
 ): IndexedList {
-  const squares = asSquares(list);
+  const squares = asSquares(list).filter((r) => r.h.some((e) => e !== 0));
   const { reflections, fractional } = matrix
     ? changeIndices(squares, matrix.M)
     : { reflections: squares, fractional: 0 };

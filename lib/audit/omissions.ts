@@ -18,6 +18,9 @@ const SHARE = { least: 0.5, most: 0.9 } as const;
 /** However many are left out, what that says is bounded: odds of e^10. */
 const MOST_EVIDENCE = 10;
 
+/** A list with more indices within its resolution than this is no list of a crystal of this cell; its gaps say nothing. */
+const LARGEST_BOX = 1e7;
+
 /** Special reflections of the lattice up to the resolution of a list, by class. */
 export function specialClasses(
   list: readonly Observation[],
@@ -32,6 +35,7 @@ export function specialClasses(
   // |h| = |h . a| is at most a / d
   const { a, b, c } = metric.cell;
   const [H, K, L] = [a, b, c].map((e) => Math.floor(e * Math.sqrt(farthest))) as [number, number, number];
+  if (H * K * L > LARGEST_BOX) return [];
   const classes = new Map<string, SpecialClass>();
   for (let h = -H; h <= H; h++) {
     for (let k = -K; k <= K; k++) {

@@ -1,6 +1,6 @@
 import { readFileSync } from "node:fs";
 import { describe, expect, it } from "vitest";
-import { type AbsencesOptions, absencesAnswer, absencesQuestion } from "../../lib/audit/index.ts";
+import { type AbsencesOptions, absencesAnswer, absencesQuestion, type Reflection } from "../../lib/audit/index.ts";
 import { readCif } from "../../lib/cif/index.ts";
 import { problemOf } from "../support/problem-of.ts";
 
@@ -147,5 +147,31 @@ describe("absencesQuestion", () => {
     expect(found.reflections.uncertainties).toBe("assumed");
     expect(found.verdict).toBe("met");
     expect(found.extinctionSymbol).toBe("F d d d");
+  });
+});
+
+describe("lists that say next to nothing", () => {
+  const lists: Readonly<Record<string, readonly Reflection[]>> = {
+    "one reflection": [{ h: [1, 0, 0], value: 5, sigma: 1 }],
+    "zeros without uncertainty": grid(() => ({ value: 0, sigma: 0 })),
+    "negative values": grid(() => ({ value: -3, sigma: 1 })),
+    "one reflection many times": Array.from({ length: 40 }, () => ({ h: [1, 1, 1], value: 3, sigma: null })),
+    "indices beyond any crystal": [
+      { h: [300, 2, 1], value: 1e9, sigma: 1e-9 },
+      { h: [1, 2, 3], value: -1e9, sigma: 1e9 },
+    ],
+    "the direct beam": Array.from({ length: 30 }, () => ({ h: [0, 0, 0], value: 9, sigma: 1 })),
+  };
+
+  function grid(of: () => { value: number; sigma: number }): Reflection[] {
+    return Array.from({ length: 60 }, (_, i) => ({ h: [i % 4, i % 3, (i % 7) + 1], ...of() }));
+  }
+
+  it.each(Object.keys(lists))("%s: an answer of finite numbers, and no contradiction", (name) => {
+    const { blocks } = readCif(TEXT).value;
+    const { question } = absencesQuestion(blocks[0]!, blocks);
+    const found = absencesAnswer({ ...question, list: { ...question.list, reflections: lists[name]! } });
+    expect(found.verdict).not.toBe("violated");
+    expect(JSON.parse(JSON.stringify(found))).toEqual(found);
   });
 });
