@@ -18,8 +18,13 @@ export interface CommandSpec {
   readonly operands: string;
   readonly summary: string;
   readonly options: Readonly<Record<string, OptionSpec>>;
-  /** A command line and what it prints, from a real run. */
-  readonly example: { readonly line: string; readonly output: string };
+  readonly example: CommandExample;
+}
+
+/** A command line and what it prints, from a real run; whole lines left out are marked by a line `...`. */
+export interface CommandExample {
+  readonly line: string;
+  readonly output: string;
 }
 
 /** Options that every command takes. */

@@ -17,11 +17,22 @@ export async function commandHelp(spec: CommandSpec): Promise<string> {
     });
   }
   const indented = spec.example.output
-    .trimEnd()
+    .replace(/^\n|\s+$/g, "")
     .split("\n")
     .map((line) => `  ${line}`.trimEnd())
     .join("\n");
-  return `${await y.getHelp()}\n\nExample:\n  $ ${spec.example.line}\n${indented}`;
+  return `${nameValues(await y.getHelp(), spec)}\n\nExample:\n  $ ${spec.example.line}\n${indented}`;
+}
+
+/** Puts what an option takes, `[ANGSTROM]`, where yargs tells its type, which is no help. */
+function nameValues(help: string, spec: CommandSpec): string {
+  let value = "";
+  const lines = help.split("\n").map((line) => {
+    const name = /^ {2,}(?:-\w, )?--?([a-z-]+)/.exec(line)?.[1];
+    if (name !== undefined) value = spec.options[name]?.value ?? "";
+    return line.replace(/ *\[string\]$/, (type) => (value === "" ? type : ` [${value}]`.padStart(type.length)));
+  });
+  return lines.join("\n");
 }
 
 /** The list of commands. */

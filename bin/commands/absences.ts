@@ -3,6 +3,7 @@ import { decodeCif } from "../../lib/cif/index.ts";
 import { absencesText, groupName, wrapText } from "../../lib/report/index.ts";
 import { LATTICE_TOLERANCE } from "../../lib/structure/index.ts";
 import { type Arguments, COMMON_OPTIONS, type CommandSpec, onlyOperand, parseArguments } from "../arguments.ts";
+import { EXAMPLE } from "../examples/absences.ts";
 import { blaming, bytesOf, chooseBlock, readSource } from "../input.ts";
 import { deliver, jsonDocument } from "../output.ts";
 import { UsageProblem } from "../problems.ts";
@@ -36,7 +37,7 @@ export const spec: CommandSpec = {
     json,
     output,
   },
-  example: { line: "sitefold absences fixtures/reflections/thenardite.cif", output: "" },
+  example: EXAMPLE,
 };
 
 export async function run(words: readonly string[]): Promise<number> {

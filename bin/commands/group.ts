@@ -16,6 +16,7 @@ import {
 } from "../../lib/symmetry/index.ts";
 import { type Arguments, COMMON_OPTIONS, type CommandSpec, onlyOperand, parseArguments } from "../arguments.ts";
 import { answerQuestion, askCrystal } from "../ask.ts";
+import { EXAMPLE } from "../examples/group.ts";
 import { deliver, jsonDocument } from "../output.ts";
 import { UsageProblem } from "../problems.ts";
 
@@ -32,7 +33,7 @@ export const spec: CommandSpec = {
         'setting to print: "reference", a name such as cab, b2, :1, :R, or a change "b,c,a;0,0,0" of the one given',
     },
   },
-  example: { line: 'sitefold group "P 21/c"', output: "" },
+  example: EXAMPLE,
 };
 
 export async function run(words: readonly string[]): Promise<number> {

@@ -3,6 +3,7 @@ import { statedFormula } from "../../lib/structure/index.ts";
 import { modesAnswer, structureWarnings } from "../../lib/vibrations/index.ts";
 import { COMMON_OPTIONS, type CommandSpec, POLYHEDRON_OPTION, SPECIES_OPTIONS } from "../arguments.ts";
 import { answerQuestion, askCrystal, withNotes } from "../ask.ts";
+import { EXAMPLE } from "../examples/modes.ts";
 
 export const spec: CommandSpec = {
   name: "modes",
@@ -14,7 +15,7 @@ export const spec: CommandSpec = {
     units: { type: "boolean", describe: "add internal modes, librations and translations of each molecule or ion" },
     ...POLYHEDRON_OPTION,
   },
-  example: { line: "sitefold modes fixtures/calcite.cif", output: "" },
+  example: EXAMPLE,
 };
 
 export async function run(words: readonly string[]): Promise<number> {

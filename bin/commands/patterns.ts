@@ -2,6 +2,7 @@ import { patternsText, speciesWriter } from "../../lib/report/index.ts";
 import { patternsAnswer } from "../../lib/vibrations/index.ts";
 import { COMMON_OPTIONS, type CommandSpec, SPECIES_OPTIONS } from "../arguments.ts";
 import { answerQuestion, askCrystal } from "../ask.ts";
+import { EXAMPLE } from "../examples/patterns.ts";
 import { usage } from "../usage.ts";
 
 export const spec: CommandSpec = {
@@ -15,7 +16,7 @@ export const spec: CommandSpec = {
     species: { type: "string", value: "SPECIES", describe: "only patterns of this species, such as A1g" },
     optic: { type: "boolean", describe: "take the rigid translations (acoustic modes) out" },
   },
-  example: { line: "sitefold patterns fixtures/rutile.cif --species A1g", output: "" },
+  example: EXAMPLE,
 };
 
 export async function run(words: readonly string[]): Promise<number> {

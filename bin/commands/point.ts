@@ -1,6 +1,7 @@
 import { pointText, speciesWriter } from "../../lib/report/index.ts";
 import { pointAnswer } from "../../lib/vibrations/index.ts";
 import { COMMON_OPTIONS, type CommandSpec, onlyOperand, parseArguments, SPECIES_OPTIONS } from "../arguments.ts";
+import { EXAMPLE } from "../examples/point.ts";
 import { deliver, jsonDocument } from "../output.ts";
 import { usage } from "../usage.ts";
 
@@ -22,7 +23,7 @@ export const spec: CommandSpec = {
       describe: 'how species split in a subgroup, in every inequivalent way; "all" for all; may be repeated',
     },
   },
-  example: { line: "sitefold point D3d", output: "" },
+  example: EXAMPLE,
 };
 
 export async function run(words: readonly string[]): Promise<number> {

@@ -3,6 +3,7 @@ import { polariseText, speciesWriter } from "../../lib/report/index.ts";
 import { type PolariseOptions, polariseAnswer } from "../../lib/vibrations/index.ts";
 import { type Arguments, COMMON_OPTIONS, type CommandSpec, SPECIES_OPTIONS } from "../arguments.ts";
 import { answerQuestion, askCrystal } from "../ask.ts";
+import { EXAMPLE } from "../examples/polarise.ts";
 import { UsageProblem } from "../problems.ts";
 
 export const spec: CommandSpec = {
@@ -36,7 +37,7 @@ export const spec: CommandSpec = {
     },
     step: { type: "number", value: "DEGREES", describe: "step of --about (default 15)" },
   },
-  example: { line: 'sitefold polarise fixtures/calcite.cif --geometry "z(xy)-z"', output: "" },
+  example: EXAMPLE,
 };
 
 export async function run(words: readonly string[]): Promise<number> {

@@ -9,6 +9,7 @@ import {
   reduceAnswer,
 } from "../../lib/structure/index.ts";
 import { type Arguments, COMMON_OPTIONS, type CommandSpec, onlyOperand, parseArguments } from "../arguments.ts";
+import { EXAMPLE } from "../examples/reduce.ts";
 import { blaming, chooseBlock, readSource } from "../input.ts";
 import { deliver, jsonDocument } from "../output.ts";
 import { UsageProblem } from "../problems.ts";
@@ -32,7 +33,7 @@ export const spec: CommandSpec = {
     json,
     output,
   },
-  example: { line: 'sitefold reduce --cell "3 5.196 2 103.92 109.47 134.88"', output: "" },
+  example: EXAMPLE,
 };
 
 export async function run(words: readonly string[]): Promise<number> {

@@ -2,13 +2,14 @@ import { sitesText } from "../../lib/report/index.ts";
 import { sitesAnswer } from "../../lib/structure/index.ts";
 import { COMMON_OPTIONS, type CommandSpec } from "../arguments.ts";
 import { answerQuestion, askCrystal } from "../ask.ts";
+import { EXAMPLE } from "../examples/sites.ts";
 
 export const spec: CommandSpec = {
   name: "sites",
   operands: "FILE",
   summary: "Site symmetry, multiplicity and constraints of every atom site.",
   options: COMMON_OPTIONS,
-  example: { line: "sitefold sites fixtures/calcite.cif", output: "" },
+  example: EXAMPLE,
 };
 
 export async function run(words: readonly string[]): Promise<number> {

@@ -16,6 +16,7 @@ import {
 } from "../../lib/vibrations/index.ts";
 import { type Arguments, COMMON_OPTIONS, type CommandSpec, POLYHEDRON_OPTION, SPECIES_OPTIONS } from "../arguments.ts";
 import { answerQuestion, askCrystal, type Question, withNotes } from "../ask.ts";
+import { EXAMPLE } from "../examples/split.ts";
 import { deliver } from "../output.ts";
 import { askedPolyhedra } from "../polyhedra.ts";
 import { UsageProblem } from "../problems.ts";
@@ -60,7 +61,7 @@ export const spec: CommandSpec = {
     diagram: { type: "boolean", describe: "draw the correlation of each unit as text" },
     svg: { type: "boolean", describe: "print the correlation diagrams as SVG instead of the answer" },
   },
-  example: { line: "sitefold split fixtures/calcite.cif", output: "" },
+  example: EXAMPLE,
 };
 
 export async function run(words: readonly string[]): Promise<number> {

@@ -3,6 +3,7 @@ import { symmetrisedCif, symmetriseText } from "../../lib/report/index.ts";
 import { crystalFromBlock, POSITION_TOLERANCE, SEARCH_TOLERANCE, symmetriseAnswer } from "../../lib/structure/index.ts";
 import { type Arguments, COMMON_OPTIONS, type CommandSpec, onlyOperand, parseArguments } from "../arguments.ts";
 import { answerQuestion, type Question } from "../ask.ts";
+import { EXAMPLE } from "../examples/symmetrise.ts";
 import { blaming, chooseBlock, readSource } from "../input.ts";
 import { deliver } from "../output.ts";
 import { UsageProblem } from "../problems.ts";
@@ -22,7 +23,7 @@ export const spec: CommandSpec = {
     given: { type: "boolean", describe: "keep the cell of the file instead of the conventional one" },
     cif: { type: "boolean", describe: "print the symmetrised structure as a CIF" },
   },
-  example: { line: "sitefold symmetrise fixtures/barium-titanate.cif --tolerance 0.2 --strain 0.03", output: "" },
+  example: EXAMPLE,
 };
 
 export async function run(words: readonly string[]): Promise<number> {

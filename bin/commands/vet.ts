@@ -2,6 +2,7 @@ import { allCriteria, criterionOf, vetAnswer } from "../../lib/audit/index.ts";
 import { criteriaText, criterionText, type VettedBlock, vetTable, vetText } from "../../lib/report/index.ts";
 import { POSITION_TOLERANCE } from "../../lib/structure/index.ts";
 import { type Arguments, COMMON_OPTIONS, type CommandSpec, parseArguments } from "../arguments.ts";
+import { EXAMPLE } from "../examples/vet.ts";
 import { blaming, readSource, type Source } from "../input.ts";
 import { deliver, type Heading, jsonDocument } from "../output.ts";
 import { LocatedProblem, UsageProblem } from "../problems.ts";
@@ -19,7 +20,7 @@ export const spec: CommandSpec = {
       describe: 'criterion behind the id of a finding, and its source; "all" lists ids',
     },
   },
-  example: { line: "sitefold vet fixtures/calcite.cif", output: "" },
+  example: EXAMPLE,
 };
 
 export async function run(words: readonly string[]): Promise<number> {
