@@ -2,7 +2,7 @@ import type { PositionsAnswer } from "../structure/index.ts";
 import { formatNumber } from "./format-number.ts";
 import { textTable } from "./table.ts";
 
-/** All positions of the cell, a line each. */
+/** All positions, a line each, orbit by orbit, with what made them; the cell first where it is another one. */
 export function positionsText(answer: PositionsAnswer): string {
   const rows = answer.positions.map((p) => [
     p.label,
@@ -12,9 +12,11 @@ export function positionsText(answer: PositionsAnswer): string {
     formatNumber(p.z, 6),
     occupancyText(p.occupancy),
     p.operation,
+    p.code ?? "",
+    p.meaning,
   ]);
   const right = { align: "right" } as const;
-  return textTable(
+  const table = textTable(
     [
       { heading: "label" },
       { heading: "element" },
@@ -23,9 +25,25 @@ export function positionsText(answer: PositionsAnswer): string {
       { heading: "z", ...right },
       { heading: "occupancy", ...right },
       { heading: "made by" },
+      { heading: "code" },
+      { heading: "meaning" },
     ],
     rows,
   );
+  return `${cellLines(answer)}${table}`;
+}
+
+function cellLines({ cell: { cell, P, p, symmetry, volume }, count }: PositionsAnswer): string {
+  if (P === "a,b,c" && p === "0,0,0" && symmetry === "kept") return "";
+  const numbers = cell.map((e, i) => formatNumber(e, i < 3 ? 4 : 3)).join(" ");
+  const whose =
+    symmetry === "kept" ? "of this cell" : "of the cell of the file; the new cell is written without symmetry";
+  return [
+    `cell ${numbers}, volume ${formatNumber(volume, 2)} A^3: axes ${P}, origin ${p} in terms of the cell of the file`,
+    `${count} atoms; operations and codes are those ${whose}`,
+    "",
+    "",
+  ].join("\n");
 }
 
 /** `1`, `0.5`, `0.333`. */

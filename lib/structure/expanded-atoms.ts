@@ -118,6 +118,13 @@ function boxOf({ range, boundary = "in" }: ExpansionOptions, metric: Metric): Bo
   };
 }
 
+/** Whole cells between an atom of the cell and the image of the listed point by its operation as it stands. */
+export function wrapOf(crystal: Crystal, { site, image, position }: CellAtom): IntVec3 {
+  const { symmetry, images } = crystal.sites[site]!;
+  const at = transformPoint(crystal.group.operations[images[image]!.operation]!, symmetry.point);
+  return [Math.round(position[0] - at[0]), Math.round(position[1] - at[1]), Math.round(position[2] - at[2])];
+}
+
 class Expansion {
   private readonly crystal: Crystal;
   private readonly atoms: readonly CellAtom[];
@@ -140,11 +147,7 @@ class Expansion {
     const M = floatMatrix(inverseRatMat(P));
     this.toNew = (x) => apply3(M, [x[0] - p.n[0] / p.d, x[1] - p.n[1] / p.d, x[2] - p.n[2] / p.d]);
     this.translated = translatedOperations(crystal.group, this.d);
-    this.wraps = atoms.map(({ site, image, position }): IntVec3 => {
-      const { symmetry, images } = crystal.sites[site]!;
-      const at = transformPoint(crystal.group.operations[images[image]!.operation]!, symmetry.point);
-      return [Math.round(position[0] - at[0]), Math.round(position[1] - at[1]), Math.round(position[2] - at[2])];
-    });
+    this.wraps = atoms.map((atom) => wrapOf(crystal, atom));
   }
 
   fill(pieces: readonly (readonly LatticeAtom[])[], box: Box): ExpandedAtom[] {

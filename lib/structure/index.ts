@@ -1,4 +1,5 @@
 /** Atoms at rest: cell and metric, the crystal built from a CIF block, site symmetry and orbits. */
+export { type AtomModel, atomModel, type ModelContent, type ModelOptions } from "./atom-model.ts";
 export { type AtomSite, readAtomSites, readNumber } from "./atom-site.ts";
 export { type BlockLattice, centringsByLetter, latticeFromBlock } from "./block-lattice.ts";
 export type {
@@ -43,6 +44,7 @@ export type { SymmetryDisagreement } from "./compare-statements.ts";
 export { cellContents, contentsMisfit } from "./composition.ts";
 export { BOND_TOLERANCE, type BondRule, NEAR_LIMIT, radiusSum } from "./contact-table.ts";
 export { type ConventionalCell, conventionalCell } from "./conventional-cell.ts";
+export { type CoordinateAtom, type CoordinateList, coordinateList, equivalentDisplacement } from "./coordinate-list.ts";
 export {
   type CoordinationPolyhedron,
   coordinationPolyhedra,
@@ -88,6 +90,7 @@ export { CENTRED_HYDROGEN } from "./hydrogen-rule.ts";
 export { invariantMetric } from "./invariant-metric.ts";
 export { axesOf, changeAxes, type LatticeAxes } from "./lattice-axes.ts";
 export { type LatticeSymmetry, latticeSymmetries } from "./lattice-symmetry.ts";
+export { type ListedSite, type ListedStructure, listedStructure } from "./listed-sites.ts";
 export {
   type FiniteSymmetry,
   type LinearSymmetry,
@@ -106,7 +109,15 @@ export { niggliReduction } from "./niggli-reduction.ts";
 export { type Image, multiplicityOf, orbitOf, wrap } from "./orbit.ts";
 export { type OrderedModel, orderedModel } from "./ordered-model.ts";
 export { nearestDistance, PeriodicPoints } from "./periodic-points.ts";
-export { type Position, type PositionsAnswer, positionsAnswer } from "./positions-answer.ts";
+export {
+  modelPositions,
+  type Position,
+  type PositionOrbit,
+  type PositionsAnswer,
+  type PositionsCell,
+  positionsAnswer,
+} from "./positions-answer.ts";
+export { type CoordinateRange, formatRange, parseRange } from "./range-text.ts";
 export {
   type CellNumbers,
   LATTICE_TOLERANCE,
@@ -129,6 +140,7 @@ export {
   symmetriseAnswer,
 } from "./symmetrise-answer.ts";
 export { type CellChoice, type SymmetrisedCrystal, symmetrisedCrystal } from "./symmetrised-crystal.ts";
+export { symmetryCode } from "./symmetry-code.ts";
 export {
   FARTHEST_DISPLACEMENT,
   type HigherGroup,

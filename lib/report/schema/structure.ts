@@ -1,7 +1,9 @@
 import type {
   HigherGroup,
   Position,
+  PositionOrbit,
   PositionsAnswer,
+  PositionsCell,
   ReduceAnswer,
   SiteAnswer,
   SitesAnswer,
@@ -68,12 +70,34 @@ export function positionsSchema(): Shape<CrystalDocument<PositionsAnswer>> {
     x: number("fractional"),
     y: number("fractional"),
     z: number("fractional"),
-    operation: xyz("makes the atom from its site"),
+    operation: xyz("makes the atom from its site, up to whole cells"),
+    code: orNull(
+      textLike(/^\d+_\d{3}$/, "number of the operation and whole cells, 3_655"),
+      "null where no digit holds the cells",
+    ),
+    meaning: text("of the operation with its whole cells"),
+  });
+  const orbit = object<PositionOrbit>({
+    label: text(),
+    element: element(),
+    occupancy: occupancy(),
+    multiplicity: count("images in the cell of the operations", 1),
+    order: count("operations that leave the site where it is", 1),
+    members: list(count(), "indices into the positions"),
+  });
+  const cell = object<PositionsCell>({
+    cell: cellNumbers(),
+    P: xyz("(a',b',c') = (a,b,c) P in terms of the cell of the file"),
+    p: text("origin, x = P x' + p"),
+    volume: amount("cubic angstrom"),
+    symmetry: choice({ kept: true, none: true }, "whether the operations are those of this cell or of the file"),
   });
   return object<CrystalDocument<PositionsAnswer>>({
     ...crystalHeading("positions"),
     positions: list(position),
     count: count(),
+    cell,
+    orbits: list(orbit),
   });
 }
 

@@ -1,0 +1,63 @@
+import { inverseRatMat } from "../algebra/index.ts";
+import { assignWyckoff, type SpaceGroupSummary } from "../symmetry/index.ts";
+import type { AtomModel } from "./atom-model.ts";
+import { listedAtoms } from "./atom-model.ts";
+import { floatMatrix } from "./atom-set.ts";
+import type { AtomSite } from "./atom-site.ts";
+import { carriedAtom } from "./carried-atom.ts";
+import type { Crystal } from "./crystal.ts";
+import { FreeLabels } from "./free-labels.ts";
+import { type CellNumbers, cellNumbers } from "./reduce-answer.ts";
+
+/** A row of an atom list. */
+export interface ListedSite extends Omit<AtomSite, "span"> {
+  /** Images in the cell. */
+  readonly multiplicity: number;
+  /** Letter of the Wyckoff position, null where the list has no symmetry. */
+  readonly wyckoff: string | null;
+}
+
+/** A structure as an atom list with its symmetry: what a CIF holds. Plain data. */
+export interface ListedStructure {
+  readonly name: string;
+  readonly cell: CellNumbers;
+  /** Cubic angstrom. */
+  readonly volume: number;
+  /** Null for P 1. */
+  readonly spaceGroup: SpaceGroupSummary | null;
+  readonly sites: readonly ListedSite[];
+}
+
+/**
+ * The atom list of a model: one row for each site and the operations if the symmetry is kept and the atoms were not
+ * gathered otherwise, else every atom of the cell. S.u. and displacement parameters go with the atoms.
+ */
+export function listedStructure(model: AtomModel): ListedStructure {
+  const { crystal, symmetry, metric, content, fromCrystal } = model;
+  const isKept = symmetry === "kept";
+  const atoms = isKept && content === "cell" ? listedAtoms(crystal) : model.atoms;
+  const M = floatMatrix(inverseRatMat(fromCrystal.P));
+  const labels = new FreeLabels([]);
+  const letters = isKept ? wyckoffLetters(crystal) : [];
+  const sites = atoms.map(({ site, operation, position }): ListedSite => {
+    const { W } = crystal.group.operations[operation]!;
+    const { span: _, ...row } = carriedAtom(crystal.sites[site]!, position, { W, M, from: crystal.metric, to: metric });
+    return {
+      ...row,
+      label: labels.claim(row.label),
+      multiplicity: isKept ? crystal.sites[site]!.images.length : 1,
+      wyckoff: letters[site] ?? null,
+    };
+  });
+  return {
+    name: model.name,
+    cell: cellNumbers(metric.cell),
+    volume: metric.volume,
+    spaceGroup: isKept ? crystal.identified.summary : null,
+    sites,
+  };
+}
+
+function wyckoffLetters({ sites, identified }: Crystal): string[] {
+  return sites.map((site) => assignWyckoff(identified, site.symmetry.operations).letter);
+}
