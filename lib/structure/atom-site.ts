@@ -64,6 +64,7 @@ export function readAtomSites(block: CifBlock, metric: Metric): AtomList {
 const COORDINATES = ["x", "y", "z"] as const;
 
 class SiteReader {
+  private readonly block: string;
   private readonly loop: CifLoop;
   private readonly metric: Metric;
   private readonly sites: AtomSite[] = [];
@@ -76,6 +77,7 @@ class SiteReader {
   private readonly cartesian: boolean;
 
   constructor(block: CifBlock, loop: CifLoop, metric: Metric) {
+    this.block = block.name;
     this.loop = loop;
     this.metric = metric;
     this.expected = elementsNamed(block);
@@ -115,6 +117,7 @@ class SiteReader {
 
   finish(): AtomList {
     const { unknown, dummy } = this.left;
+    if (this.sites.length === 0) throw this.nothing();
     if (unknown.length > 0) this.notes.push(`left out for want of coordinates: ${unknown.join(", ")}`);
     if (dummy.length > 0) this.notes.push(`left out as dummy atoms: ${dummy.join(", ")}`);
     if (this.repeated.length > 0)
@@ -122,6 +125,21 @@ class SiteReader {
     const nameless = this.sites.filter((s) => s.element === null).map((s) => s.label);
     if (nameless.length > 0) this.notes.push(`no element could be read for ${nameless.join(", ")}`);
     return { sites: this.sites, notes: this.notes };
+  }
+
+  /** An empty list, or one of unknown places: counts of modes and sites would be nonsense. */
+  private nothing(): InputProblem {
+    const { unknown, dummy } = this.left;
+    const why =
+      unknown.length + dummy.length === 0
+        ? "the list is empty"
+        : `of ${unknown.length + dummy.length} rows, ${unknown.length} lack coordinates and ${dummy.length} are dummies`;
+    return new InputProblem(
+      "atoms-missing",
+      `block "${this.block}" places no atom: ${why}`,
+      this.loop.span,
+      "give _atom_site_fract_x, _y and _z of each atom; choose another block with --block",
+    );
   }
 
   private text(row: number, name: string): string | null {

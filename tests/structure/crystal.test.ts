@@ -29,6 +29,16 @@ describe("crystalFromBlock", () => {
     }
   });
 
+  test.each([
+    ["an empty list", "", "the list is empty"],
+    ["a list without coordinates", "Na 0.1 ? 0.3\nCl . . .", "of 2 rows, 2 lack coordinates and 0 are dummies"],
+  ])("refuses %s, of which nothing can be counted", (_, atoms, why) => {
+    const { value } = readCif(cubic(P_MINUS_1, atoms)); // which complains of an empty loop and goes on
+    const problem = problemOf(() => crystalFromBlock(value.blocks[0]!));
+    expect(problem).toMatchObject({ code: "atoms-missing", message: `block "x" places no atom: ${why}` });
+    expect(problem.span).not.toBeNull();
+  });
+
   test("folds the rows of a whole cell that operations make anyway", () => {
     const crystal = crystalOfText(cubic(P_MINUS_1, "Na1 0.1 0.2 0.3\nNa2 0.9 0.8 0.7\nCl 0.5 0.5 0.5"));
     expect(crystal.sites.map((s) => [s.label, s.images.length, s.alsoListedAs])).toEqual([
