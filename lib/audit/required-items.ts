@@ -86,6 +86,7 @@ export function check(input: AuditInput): Finding[] {
   return [
     ...input.obstacles.flatMap((problem) => obstacle(input, problem)),
     ...unreadableNumbers(input),
+    ...withoutAtoms(input),
     ...withoutOperations(input),
     ...withoutFormula(input),
   ];
@@ -127,6 +128,18 @@ function unreadableNumbers(input: AuditInput): Finding[] {
       }),
     ];
   });
+}
+
+/** A list of which no row has coordinates. */
+function withoutAtoms(input: AuditInput): Finding[] {
+  const loop = findLoop(input.block, "_atom_site.label");
+  if (!input.metric || !loop || input.atoms.length > 0 || input.obstacles.some((o) => BY_CODE[o.code])) return [];
+  return [
+    finding(ATOMS, input.place("_atom_site_label", loop.span), "no atom of the list has coordinates", {
+      stated: { what: "rows of the atom list", value: loop.rowCount },
+      against: { what: "rows with coordinates", value: 0 },
+    }),
+  ];
 }
 
 function withoutOperations(input: AuditInput): Finding[] {
