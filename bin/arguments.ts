@@ -118,7 +118,6 @@ function unknownOption(key: string, names: readonly string[], spec: CommandSpec)
 export function onlyOperand(args: Arguments, what: string): string {
   const [first, ...others] = args.operands;
   if (first === undefined) throw new UsageProblem(`${what} is missing`);
-  if (others.length > 0)
-    throw new UsageProblem(`one ${what} at a time, not ${args.operands.length}: ${args.operands.join(" ")}`);
+  if (others.length > 0) throw new UsageProblem(`${what} is wanted, and only one: ${args.operands.join(" ")}`);
   return first;
 }

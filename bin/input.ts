@@ -4,6 +4,7 @@ import { InputProblem } from "../lib/problem.ts";
 import { problemText } from "../lib/report/index.ts";
 import type { Arguments } from "./arguments.ts";
 import { LocatedProblem } from "./problems.ts";
+import { usageProblem } from "./usage.ts";
 
 /** A file that was read, with its text for the printer of problems. */
 export interface Source {
@@ -15,12 +16,14 @@ export interface Source {
 /** Most syntax errors of one file that are shown; the rest is counted. */
 const SHOWN_PROBLEMS = 3;
 
-/** Runs `work`, so that an input fault in it is printed with the place in this source. */
+/** Runs `work`, so that an input fault in it is printed with the place in this source, or as one of usage. */
 export function blaming<T>(source: Source, work: () => T): T {
   try {
     return work();
   } catch (e) {
-    throw e instanceof InputProblem ? new LocatedProblem(problemText(e, source.file, source.text)) : e;
+    if (!(e instanceof InputProblem)) throw e;
+    if (e.code === "tolerance-impossible") throw usageProblem(e); // it stands in no file
+    throw new LocatedProblem(problemText(e, source.file, source.text));
   }
 }
 

@@ -1,5 +1,4 @@
-import { renameSync, rmSync, writeFileSync } from "node:fs";
-import { resolve } from "node:path";
+import { renameSync, rmSync, statSync, writeFileSync } from "node:fs";
 import type { Arguments } from "./arguments.ts";
 import { LocatedProblem, UsageProblem } from "./problems.ts";
 import { printOut } from "./standard-output.ts";
@@ -26,7 +25,9 @@ function refuseNonFinite(key: string, value: unknown): unknown {
 
 /**
  * Writes an answer to the terminal, or to --output: first beside it, then moved into place, so that a failure leaves
- * an older file as it was. @throws UsageProblem if that would overwrite the input
+ * an older file as it was.
+ * @param input a file that was read and is no operand, if any
+ * @throws UsageProblem if that would overwrite what was read
  */
 export async function deliver(text: string, args: Arguments, input: string | null): Promise<void> {
   const target = args.text("output");
@@ -35,8 +36,8 @@ export async function deliver(text: string, args: Arguments, input: string | nul
     printOut(whole);
     return;
   }
-  if (input !== null && resolve(target) === resolve(input)) {
-    throw new UsageProblem(`--output ${target} is the input itself; choose another name`);
+  for (const read of [...args.operands, ...(input === null ? [] : [input])]) {
+    if (sameFile(target, read)) throw new UsageProblem(`--output ${target} is the input itself; choose another name`);
   }
   const beside = `${target}.${process.pid}.part`;
   try {
@@ -48,4 +49,10 @@ export async function deliver(text: string, args: Arguments, input: string | nul
       `${target}: could not be written (${(e as NodeJS.ErrnoException).code}); nothing was changed`,
     );
   }
+}
+
+/** Two names of one file, by path or by links. */
+function sameFile(a: string, b: string): boolean {
+  const [one, other] = [a, b].map((path) => statSync(path, { throwIfNoEntry: false, bigint: true }));
+  return one !== undefined && other !== undefined && one.ino === other.ino && one.dev === other.dev;
 }

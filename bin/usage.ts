@@ -6,6 +6,11 @@ export function usage<T>(work: () => T): T {
   try {
     return work();
   } catch (e) {
-    throw e instanceof InputProblem ? new UsageProblem(`${e.message}${e.hint ? `\n  ${e.hint}` : ""}`) : e;
+    throw e instanceof InputProblem ? usageProblem(e) : e;
   }
+}
+
+/** The fault of an input as one of the command line, where that is what it came from. */
+export function usageProblem({ message, hint }: InputProblem): UsageProblem {
+  return new UsageProblem(`${message}${hint ? `\n  ${hint}` : ""}`);
 }

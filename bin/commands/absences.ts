@@ -61,7 +61,11 @@ export async function run(words: readonly string[]): Promise<number> {
     ...heading.notes.map((note) => wrapText(`- ${note}`, 110, "  ")),
   ];
   const text = () => `${head.join("\n")}\n\n${absencesText(answer)}`;
-  await deliver(args.flag("json") ? jsonDocument(heading, { spaceGroup, ...answer }) : text(), args, file);
+  await deliver(
+    args.flag("json") ? jsonDocument(heading, { spaceGroup, ...answer }) : text(),
+    args,
+    options.reflections?.name ?? null,
+  );
   return 0;
 }
 

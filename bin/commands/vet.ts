@@ -31,7 +31,7 @@ export async function run(words: readonly string[]): Promise<number> {
   const tolerance = args.number("tolerance") ?? POSITION_TOLERANCE;
   const vetted: VettedBlock[] = [];
   for (const file of args.operands) vetted.push(...(await vetFile(file, args, tolerance)));
-  await deliver(args.flag("json") ? json(vetted, tolerance) : text(vetted), args, inputOf(args));
+  await deliver(args.flag("json") ? json(vetted, tolerance) : text(vetted), args, null);
   if (vetted.some((v) => v.answer && v.answer.counts.contradiction > 0)) return 1;
   return vetted.some((v) => v.answer === null) ? 3 : 0;
 }
@@ -69,10 +69,6 @@ function json(vetted: readonly VettedBlock[], tolerance: number): string {
 
 function heading({ file, block }: Heading["source"], tolerance: number): Heading {
   return { command: spec.name, source: { file, block }, notes: [], tolerance: { position: tolerance } };
-}
-
-function inputOf(args: Arguments): string | null {
-  return args.operands.length === 1 && args.operands[0] !== "-" ? args.operands[0]! : null;
 }
 
 /** @throws UsageProblem for an id that no finding has */

@@ -3,6 +3,7 @@ import { InputProblem, type Span } from "../problem.ts";
 import {
   type AtomSite,
   type Crystal,
+  checkedTolerance,
   crystalFromBlock,
   crystalOf,
   type DeclaredSymmetry,
@@ -41,8 +42,9 @@ export interface AuditInput {
   readonly place: (dataName: string, span: Span | null) => Place;
 }
 
-/** Reads a block as far as it goes. Never throws for faults of the file. */
+/** Reads a block as far as it goes; never throws for faults of the file. @throws InputProblem `tolerance-impossible` */
 export function auditInput(block: CifBlock, tolerance: number = POSITION_TOLERANCE): AuditInput {
+  checkedTolerance(tolerance);
   const obstacles: InputProblem[] = [];
   const attempt = <T>(work: () => T): T | null => {
     try {

@@ -17,6 +17,7 @@ const ORDER: readonly Severity[] = ["contradiction", "doubt", "remark"];
  * Compares the statements of a block with each other and with what is physically likely. Faults of the file never
  * throw: they are findings, or leave a question unasked.
  * @param tolerance positions closer than this are one position; angstrom
+ * @throws InputProblem `tolerance-impossible`
  */
 export function vetAnswer(block: CifBlock, tolerance: number = POSITION_TOLERANCE): VetAnswer {
   const input = auditInput(block, tolerance);

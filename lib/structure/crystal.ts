@@ -133,7 +133,8 @@ function contentsArbiter(block: CifBlock, metric: Metric, sites: readonly AtomSi
   };
 }
 
-function checkedTolerance(tolerance: number): number {
+/** The tolerance itself, angstrom. @throws InputProblem `tolerance-impossible` */
+export function checkedTolerance(tolerance: number): number {
   if (Number.isFinite(tolerance) && tolerance >= 0 && tolerance <= 1) return tolerance;
   throw new InputProblem(
     "tolerance-impossible",

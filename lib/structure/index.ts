@@ -40,6 +40,7 @@ export { AtomAction, type CellAtom, cellAtoms, type LatticeAtom } from "./cell-a
 export { type CellTranslations, translationsIn } from "./cell-lattice.ts";
 export { type CellRequest, formatCellRequest, parseCellRequest, requestedCell } from "./cell-request-text.ts";
 export { type ChangedCell, changeOfCell, metricIn, multiplesOf } from "./change-of-cell.ts";
+export { chosenComponent, type DecidedCrystal, orderedCrystal } from "./chosen-component.ts";
 export type { SymmetryDisagreement } from "./compare-statements.ts";
 export { cellContents, contentsMisfit } from "./composition.ts";
 export { BOND_TOLERANCE, type BondRule, NEAR_LIMIT, radiusSum } from "./contact-table.ts";
@@ -57,6 +58,7 @@ export {
   type CrystalOptions,
   type CrystalParts,
   type CrystalSite,
+  checkedTolerance,
   crystalFromBlock,
   crystalOf,
   POSITION_TOLERANCE,
@@ -107,6 +109,13 @@ export { type ExtendedUnit, type LoneAtom, molecularUnits, type UnitAnalysis } f
 export { type Contact, contactsWithin, type SearchResult } from "./neighbour-search.ts";
 export { niggliReduction } from "./niggli-reduction.ts";
 export { type Image, multiplicityOf, orbitOf, wrap } from "./orbit.ts";
+export {
+  type Configuration,
+  type ConfigurationCount,
+  type ConfigurationList,
+  countConfigurations,
+  orderedConfigurations,
+} from "./ordered-configurations.ts";
 export { type OrderedModel, orderedModel } from "./ordered-model.ts";
 export { nearestDistance, PeriodicPoints } from "./periodic-points.ts";
 export {
