@@ -33,6 +33,12 @@ function subject({ factorGroup, labelAxes, bonds, unitNotes }: SplitAnswer): str
   return lines.map((line) => wrapText(line, WIDTH, "    ")).join("\n");
 }
 
+/** Without the axes, B1 of the free unit and B1 of the site could be anything. */
+function axesText({ freeAxes, siteAxes }: UnitAnswer): string[] {
+  const parts = [...(freeAxes ? [`free unit: ${freeAxes}`] : []), ...(siteAxes ? [`site: ${siteAxes}`] : [])];
+  return parts.length > 0 ? [`axes of the labels: ${parts.join("; ")}`] : [];
+}
+
 function range(shortest: number, longest: number): string {
   const [a, b] = [formatNumber(shortest, 3), formatNumber(longest, 3)];
   return a === b ? `${a} Å` : `${a} to ${b} Å`;
@@ -44,6 +50,7 @@ function unitText(unit: UnitAnswer, answer: SplitAnswer, write: ActiveWriter): s
   const fit = `atoms at most ${formatNumber(unit.deviation.largest, 3)} Å from it, ${formatNumber(unit.shapeTolerance, 2)} Å allowed`;
   const lines = [
     `free unit ${unit.pointGroup} (${fit}); site ${unit.siteSymmetry} (${unit.schoenflies}); factor group ${answer.factorGroup.schoenflies}`,
+    ...axesText(unit),
     ...(unit.kinds.length > 0 ? [unitContentText(unit, write)] : []),
     ...(unit.freeSource ? [`wavenumbers of the free unit: ${unit.freeSource}`] : []),
   ];

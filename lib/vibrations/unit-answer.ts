@@ -62,8 +62,12 @@ export interface UnitAnswer {
   /** Distance of the atoms from the idealised unit, angstrom. */
   readonly deviation: { readonly largest: number; readonly mean: number };
   readonly shapeTolerance: number;
+  /** Axes that the species of the free unit refer to; empty where no label depends on them. */
+  readonly freeAxes: string;
   readonly siteSymmetry: string;
   readonly schoenflies: string;
+  /** Axes that the species of the site refer to; empty where no label depends on them. */
+  readonly siteAxes: string;
   readonly internal: readonly InternalMode[];
   readonly translations: UnitMotions;
   readonly librations: UnitMotions;
@@ -108,8 +112,10 @@ export function unitAnswer(
     pointGroup: symmetry.schoenflies,
     deviation: { largest: symmetry.deviation.largest, mean: symmetry.deviation.mean },
     shapeTolerance: symmetry.tolerance,
+    freeAxes: (fits && free.axes) || freeAxes(symmetry.schoenflies),
     siteSymmetry: assignWyckoff(crystal.identified, unit.site.operations).siteSymmetry,
     schoenflies: correlation.siteGroup.schoenflies,
+    siteAxes: hasNumberedB(correlation.siteGroup.irreps) ? correlation.siteGroup.axes.text : "",
     internal: correlation.species.flatMap((s) => internalModes(s, fits ? free : null, correlation, modes)),
     translations: { free: rigid.translations, ...counts(correlation.translations) },
     librations: { free: rigid.rotations, ...counts(correlation.librations) },
@@ -120,6 +126,21 @@ export function unitAnswer(
       factorGroup: countsOf(modes.group.irreps, correlation.siteToFactorGroup[i]!),
     })),
   };
+}
+
+/** True of groups whose labels B1, B2 (B3) change places with the axes. */
+function hasNumberedB(irreps: readonly { readonly label: string }[]): boolean {
+  return irreps.some(({ label }) => label.startsWith("B1"));
+}
+
+/** The rule by which units without handbook axes are set up, see fitToStandard; empty where no label depends on it. */
+function freeAxes(schoenflies: string): string {
+  if (schoenflies === "C2v") return "z along C2, x normal to the plane of most atoms";
+  if (schoenflies === "D2" || schoenflies === "D2h") return "x normal to the plane of most atoms, z through most atoms";
+  const isEven = /^[CD](\d+)[vh]?$/.exec(schoenflies);
+  const hasTwoKinds = isEven !== null && Number(isEven[1]) > 2 && Number(isEven[1]) % 2 === 0;
+  if (!hasTwoKinds || /^C\d+h?$/.test(schoenflies)) return "";
+  return schoenflies.startsWith("D") ? "C2' through most atoms" : "sigma_v through most atoms";
 }
 
 /** The table names every internal mode of the unit and no other. */
