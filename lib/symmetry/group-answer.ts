@@ -1,17 +1,34 @@
-import { addVectors, IDENTITY, ratMat3, subtractVectors, transformVector } from "../algebra/index.ts";
+import {
+  addVectors,
+  IDENTITY,
+  RAT_IDENTITY,
+  type RatVec3,
+  ratMat3,
+  subtractVectors,
+  transformVector,
+} from "../algebra/index.ts";
 import { pointGroup } from "../representation/index.ts";
-import { type AffineForm, formatForm, formFromSetting, imageOfForm, isFixedBy } from "./affine-form.ts";
+import {
+  type AffineForm,
+  directionsOfForm,
+  formatForm,
+  formFromSetting,
+  formThrough,
+  imageOfForm,
+  isFixedBy,
+} from "./affine-form.ts";
 import { letterExchanges } from "./euclidean-normaliser.ts";
 import { extendedSymbol } from "./extended-symbol.ts";
 import { geometricMeaning } from "./geometric-meaning.ts";
 import { type GroupProperties, groupProperties } from "./group-properties.ts";
-import type { Operation } from "./operation.ts";
+import { type Operation, reduce } from "./operation.ts";
 import { formatOperation } from "./operation-text.ts";
 import { reflectionConditions } from "./reflection-conditions.ts";
 import { assignWyckoff } from "./site-assignment.ts";
-import type { SpaceGroup } from "./space-group.ts";
+import { type SpaceGroup, spaceGroup } from "./space-group.ts";
 import { specialConditions } from "./special-reflection-conditions.ts";
 import { conventionalSetting, type IdentifiedGroup, type SpaceGroupSummary } from "./summary.ts";
+import { transformOperation } from "./transformation.ts";
 import { formatTransformation } from "./transformation-text.ts";
 import { wyckoffPositions } from "./wyckoff-positions.ts";
 
@@ -95,6 +112,7 @@ export function groupAnswer(identified: IdentifiedGroup): GroupAnswer {
 
 function wyckoffAnswers(identified: IdentifiedGroup): WyckoffAnswer[] {
   const { group, number, toReference, isReference: reference } = identified;
+  const centred = atReferenceOrigin(identified);
   return wyckoffPositions(number).map((position) => {
     const form = reference ? position.form : formFromSetting(position.form, toReference);
     const site = fixingOperations(group, form);
@@ -104,9 +122,26 @@ function wyckoffAnswers(identified: IdentifiedGroup): WyckoffAnswer[] {
       siteSymmetry: assignWyckoff(identified, site).siteSymmetry,
       schoenflies: pointGroup(site.map((a) => a.W)).schoenflies,
       coordinates: reference ? position.coordinates : coordinatesIn(group, form),
-      conditions: specialConditions(group, form).map((c) => `${c.reflections}: ${c.condition}`),
+      conditions: specialConditions(centred.group, shifted(form, centred.origin)).map(
+        (c) => `${c.reflections}: ${c.condition}`,
+      ),
     };
   });
+}
+
+/**
+ * The group in the same axes with the origin of its reference setting. Conditions do not depend on the origin, but an odd
+ * one (333/2000) makes them costly, since they are worked out modulo all denominators.
+ */
+function atReferenceOrigin({ group, toReference }: IdentifiedGroup): { group: SpaceGroup; origin: RatVec3 } {
+  const change = { P: RAT_IDENTITY, p: toReference.p };
+  const operations = group.operations.map((a) => reduce(transformOperation(a, change)!));
+  return { group: spaceGroup(operations), origin: toReference.p };
+}
+
+/** Seen from another origin, constants along free coordinates taken out. */
+function shifted(form: AffineForm, origin: RatVec3): AffineForm {
+  return formThrough(subtractVectors(form.t, origin), directionsOfForm(form));
 }
 
 /** The operations that fix every point of a form, their translations such that they do so as they stand. */

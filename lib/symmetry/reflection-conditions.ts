@@ -1,4 +1,4 @@
-import { equal, IDENTITY, type IntVec3, lcm, mod } from "../algebra/index.ts";
+import { equal, gcd, IDENTITY, type IntVec3, lcm, mod, type RatVec3 } from "../algebra/index.ts";
 import {
   type Congruence,
   congruencesOf,
@@ -36,10 +36,10 @@ export interface ReflectionCondition {
  * where h . w is no integer.
  */
 export function reflectionConditions(group: SpaceGroup): ReflectionCondition[] {
-  const N = group.operations.reduce((m, a) => lcm(m, a.w.d), 1);
   const conditions: ReflectionCondition[] = [];
   for (const stratum of strataOf(group)) {
     const fixing = group.operations.filter((a) => stratum.basis.every((h) => fixes(a, h)));
+    const N = commonDenominator(stratum, fixing);
     const size = stratum.basis.length;
     const wider = fixing.filter((a) => fixedDimension(a) > size);
     const known = generated(
@@ -86,8 +86,8 @@ export function generalCharacters(group: SpaceGroup, stratum: Stratum): Characte
   cache.set(group, byClass);
   const known = byClass.get(stratum.key);
   if (known) return known;
-  const N = group.operations.reduce((m, a) => lcm(m, a.w.d), 1);
   const fixing = group.operations.filter((a) => stratum.basis.every((h) => fixes(a, h)));
+  const N = commonDenominator(stratum, fixing);
   const own = fixing.map((a) => characterOn(stratum, a, N));
   const fresh = { characters: generated(own, N, stratum.basis.length), N };
   byClass.set(stratum.key, fresh);
@@ -133,8 +133,16 @@ function fixedDimension({ W }: Operation): number {
 
 /** h . w on the basis of the class, over N. */
 function characterOn({ basis }: Stratum, { w }: Operation, N: number): Residues {
-  const k = N / w.d;
-  return basis.map((h) => mod((h[0] * w.n[0] + h[1] * w.n[1] + h[2] * w.n[2]) * k, N));
+  return basis.map((h) => mod((along(h, w) * N) / w.d, N));
+}
+
+function along(h: IntVec3, w: RatVec3): number {
+  return h[0] * w.n[0] + h[1] * w.n[1] + h[2] * w.n[2];
+}
+
+/** Of all h . w: they do not depend on the origin, so that an odd one (333/1000) does not count here. */
+function commonDenominator({ basis }: Stratum, fixing: readonly Operation[]): number {
+  return fixing.reduce((m, { w }) => basis.reduce((n, h) => lcm(n, w.d / gcd(w.d, along(h, w))), m), 1);
 }
 
 /** The operation that says most beyond what is known, of the class itself before those of wider ones. */

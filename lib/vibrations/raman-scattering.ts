@@ -73,11 +73,11 @@ function polarPart(dipole: TensorForm, q: Vec3, amplitudes: readonly LetterSum[]
   const longitudinal = Array.from({ length: letters }, (_, l) =>
     tidy(along.reduce((s, a, p) => s + a * amplitudes[p]![l]!, 0)),
   );
-  const share = along.reduce((s, a) => s + a * a, 0);
-  if (share < 1 - 1e-6) return { part: "oblique", longitudinal };
   const total = strength(amplitudes);
   const lo = strength([longitudinal]);
-  if (lo < NOTHING * total) return { part: "TO", longitudinal };
+  if (lo < NOTHING * total) return { part: "TO", longitudinal }; // what scatters moves across q, whatever its direction
+  const share = along.reduce((s, a) => s + a * a, 0);
+  if (share < 1 - 1e-6) return { part: "oblique", longitudinal };
   return { part: lo > (1 - 1e-6) * total ? "LO" : "oblique", longitudinal };
 }
 

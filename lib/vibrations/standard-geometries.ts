@@ -1,3 +1,4 @@
+import { directionVector, type Vec3 } from "../structure/index.ts";
 import type { CrystalTensors } from "./crystal-tensors.ts";
 import { parseGeometry } from "./geometry-text.ts";
 import { type SpeciesScattering, scatteringOf } from "./raman-scattering.ts";
@@ -25,6 +26,16 @@ function rightAngle(): string[] {
   );
 }
 
+/**
+ * Crossed polarisers along the diagonals of the face normal to z, where a and b are equal and at right angles: shows
+ * xx - yy alone, and so tells E from A1 in cubic crystals, which no geometry along the axes does.
+ */
+function diagonal({ frame }: CrystalTensors): string[] {
+  const [u, v] = [directionVector(frame, [1, 1, 0]), directionVector(frame, [1, -1, 0])];
+  const along = (d: Vec3, sign: number) => Math.hypot(d[0] - Math.SQRT1_2, d[1] - sign * Math.SQRT1_2) < 1e-6;
+  return along(u, 1) && along(v, -1) ? ["z([110][1-10])-z"] : [];
+}
+
 /** A geometry with the species that show in it. */
 export interface GeometryResult {
   readonly geometry: ScatteringGeometry;
@@ -38,7 +49,7 @@ export function geometryResult(tensors: CrystalTensors, text: string): GeometryR
 
 /**
  * A smallest set of geometries in which no two of the given species show and hide alike, and each shows at least once:
- * backscattering where it suffices, else with right-angle scattering. Of sets of one size, the one whose geometries
+ * backscattering along the axes where it suffices, else with diagonal polarisations and right-angle scattering. Of sets of one size, the one whose geometries
  * show the fewest species is taken.
  * @param species indices of the Raman species that the crystal has modes of
  * @returns null where no set of up to five tells all of them apart; an empty list where there is no species
@@ -54,7 +65,8 @@ export function separatingGeometries(
 }
 
 function smallestSet(tensors: CrystalTensors): GeometryResult[] | null {
-  for (const texts of [BACKSCATTERING, [...BACKSCATTERING, ...rightAngle()]]) {
+  const more = diagonal(tensors);
+  for (const texts of [BACKSCATTERING, [...BACKSCATTERING, ...more], [...BACKSCATTERING, ...more, ...rightAngle()]]) {
     const candidates = distinctPatterns(
       tensors,
       texts.map((t) => geometryResult(tensors, t)),

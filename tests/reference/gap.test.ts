@@ -1,5 +1,4 @@
-import { execFileSync } from "node:child_process";
-import { existsSync, readFileSync } from "node:fs";
+import { readFileSync } from "node:fs";
 import { describe, expect, it } from "vitest";
 import { type IntMat3, ratVec3 } from "../../lib/algebra/index.ts";
 import { dimension } from "../../lib/symmetry/affine-subspace.ts";
@@ -8,13 +7,13 @@ import { identify } from "../../lib/symmetry/identification.ts";
 import type { Operation } from "../../lib/symmetry/operation.ts";
 import { referenceGroup } from "../../lib/symmetry/reference-group.ts";
 import { enumerateWyckoff } from "../../lib/symmetry/wyckoff-enumeration.ts";
+import { runGap } from "./gap/run-gap.ts";
 
 /*
  * What the crystallographic groups of GAP say of the 230 types: GAP 4 with the package cryst (B. Eick, F. Gaehler,
  * W. Nickel, "Cryst - Computing with crystallographic groups"), an independent computation and independent tables.
  * space-groups.txt is the output of space-groups.g, which says what a line holds.
  */
-const SCRIPT = new URL("./gap/space-groups.g", import.meta.url).pathname;
 const LINES = readFileSync(new URL("./gap/space-groups.txt", import.meta.url), "utf8")
   .trim()
   .split("\n");
@@ -80,22 +79,9 @@ describe("GAP and this library agree", () => {
 /** A few types that GAP needs little time for, among them origin choices and hexagonal axes. */
 const QUICK = [1, 4, 9, 14, 19, 33, 43, 62, 76];
 
-/** Output of the script for those types, or the reason why there is none. */
-function runGap(): { readonly lines: string[] } | { readonly reason: string } {
-  const gap = ["/usr/bin/gap", "/usr/local/bin/gap"].find((path) => existsSync(path));
-  if (!gap) return { reason: "GAP is not installed" };
-  try {
-    const args = ["-q", "--nointeract", "-c", `NUMBERS := [ ${QUICK.join(", ")} ];;`, SCRIPT];
-    const output = execFileSync(gap, args, { encoding: "utf8", stdio: ["ignore", "pipe", "ignore"] });
-    return { lines: output.trim().split("\n") };
-  } catch (e) {
-    return { reason: `GAP could not run the script, its package cryst may be missing: ${String(e)}` };
-  }
-}
-
 describe("the stored output of the GAP script", () => {
   it("is what GAP prints today, where it is installed", () => {
-    const run = runGap();
+    const run = runGap("./space-groups.g", `NUMBERS := [ ${QUICK.join(", ")} ];;`);
     if ("reason" in run) {
       console.info(`stored output not renewed: ${run.reason}`);
       expect(run.reason).toMatch(/GAP/);

@@ -181,6 +181,7 @@ describe("polar species", () => {
         const tilted = aboutZ([Math.sin(theta), 0, Math.cos(theta)], phi);
         const upwards = aboutZ([-Math.cos(theta), 0, Math.sin(theta)], phi);
         expect(parts(upwards, upwards, tilted)).toEqual(["A1 oblique", "E1 oblique"]);
+        expect(parts(across, upwards, tilted)).toEqual(["E1 TO"]); // the ordinary mode
       }),
     );
   });
