@@ -3,7 +3,6 @@ import { type AbsencesAnswer, absencesAnswer } from "./absences-answer.ts";
 import { absencesQuestion } from "./absences-question.ts";
 import type { AuditInput } from "./audit-input.ts";
 import { VIOLATION_SIGMA } from "./condition-test.ts";
-import { findReflections } from "./find-reflections.ts";
 import { type Criterion, type Finding, finding, some } from "./finding.ts";
 
 const VIOLATED: Criterion = {
@@ -75,8 +74,9 @@ function laue(input: AuditInput, answer: AbsencesAnswer, group: string): Finding
   ];
 }
 
+/** Null where the block has no reflections, or they cannot be judged. */
 function answered(input: AuditInput): AbsencesAnswer | null {
-  if (!input.metric || !input.symmetry || findReflections(input.block).lists.length === 0) return null;
+  if (!input.metric || !input.symmetry) return null;
   try {
     return absencesAnswer(absencesQuestion(input.block, [input.block]).question);
   } catch (e) {

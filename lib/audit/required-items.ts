@@ -95,7 +95,7 @@ export function check(input: AuditInput): Finding[] {
 function obstacle(input: AuditInput, problem: InputProblem): Finding[] {
   const criterion = BY_CODE[problem.code];
   if (!criterion) return [];
-  const name = /_[A-Za-z][\w.-]*/.exec(problem.message)?.[0] ?? NAMES[criterion.id] ?? "data_";
+  const name = /(?<!\S)_[A-Za-z][\w.-]*/.exec(problem.message)?.[0] ?? NAMES[criterion.id] ?? "data_";
   const text = problem.span
     ? input.block.source.slice(problem.span.start, Math.min(problem.span.end, problem.span.start + 40))
     : "";
