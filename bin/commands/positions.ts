@@ -1,16 +1,19 @@
-import { positionsText } from "../../lib/report/index.ts";
+import { configurationsText, positionsText } from "../../lib/report/index.ts";
 import {
   type AtomModel,
   atomModel,
+  changeOfCell,
+  configurationsAnswer,
   type ModelOptions,
   modelPositions,
-  parseCellRequest,
-  parseRange,
+  requestedCell,
 } from "../../lib/structure/index.ts";
-import { type Arguments, COMMON_OPTIONS, type CommandSpec } from "../arguments.ts";
+import { COMMON_OPTIONS, type CommandSpec } from "../arguments.ts";
 import { answerQuestion, askCrystal, type Question, withNotes } from "../ask.ts";
+import { DISORDER_OPTIONS, decided, enumerated } from "../disorder.ts";
 import { EXAMPLE } from "../examples/positions.ts";
-import { FORMATS, modelText, PLAIN_FORMATS } from "../model-formats.ts";
+import { modelText } from "../model-formats.ts";
+import { asJson, formatOf, MODEL_OPTIONS, modelOptions } from "../model-options.ts";
 import { deliver } from "../output.ts";
 import { UsageProblem } from "../problems.ts";
 import { usage } from "../usage.ts";
@@ -19,29 +22,45 @@ export const spec: CommandSpec = {
   name: "positions",
   operands: "FILE",
   summary: "List every atom of a cell, and the operation that makes it; write structures for other programs.",
-  options: {
-    ...COMMON_OPTIONS,
-    cell: {
-      type: "string",
-      value: "CELL",
-      describe: 'another cell: primitive, reference, multiples "2,2,1", nine integers, or axes "a-b,a+b,c;0,0,1/4"',
-    },
-    p1: { type: "boolean", describe: "claim no symmetry for the cell written: list all atoms in P 1" },
-    asymmetric: { type: "boolean", describe: "one atom of each site, as listed" },
-    connected: { type: "boolean", describe: "one atom of each site, chosen so that they hang together by bonds" },
-    "whole-units": { type: "boolean", describe: "keep molecules whole, each with its centroid in the cell" },
-    range: { type: "string", value: "RANGE", describe: 'fractional coordinates wanted, "0:1,0:1,-0.5:0.5"' },
-    boundary: { type: "string", value: "WHICH", describe: "in (default) or out: atoms on the ends of a range" },
-    format: { type: "string", value: "FORMAT", describe: `one of ${FORMATS.join(", ")} (default text)` },
-  },
+  options: { ...COMMON_OPTIONS, ...MODEL_OPTIONS, ...DISORDER_OPTIONS },
   example: EXAMPLE,
 };
 
 export async function run(words: readonly string[]): Promise<number> {
-  const question = await askCrystal(words, spec);
-  const format = formatOf(question.args);
-  const options = modelOptions(question.args, format);
-  const model = usage(() => atomModel(question.crystal, options));
+  const asked = await askCrystal(words, spec);
+  const { args } = asked;
+  const format = formatOf(args);
+  const start = decided(asked.crystal, args);
+  const question = withNotes({ ...asked, crystal: start.crystal }, start.notes);
+  const options = modelOptions(args, format);
+  if (args.number("configuration") !== null || args.flag("enumerate")) return configurations(question, options, format);
+  return deliverModel(
+    question,
+    usage(() => atomModel(question.crystal, options)),
+    format,
+  );
+}
+
+/** Ordered structures of the cell asked for: the list of them, or the one named. */
+async function configurations(question: Question, { cell, ...options }: ModelOptions, format: string): Promise<number> {
+  const { args, crystal } = question;
+  const changed = cell ? usage(() => changeOfCell(crystal, requestedCell(crystal, cell)).crystal) : crystal;
+  const { list, chosen } = enumerated(changed, args)!;
+  if (chosen)
+    return deliverModel(
+      question,
+      usage(() => atomModel(chosen, options)),
+      format,
+    );
+  if (format !== "text" && format !== "json")
+    throw new UsageProblem("--enumerate lists; write one with --configuration N");
+  const answer = configurationsAnswer(list);
+  const average = modelPositions(atomModel(changed));
+  const asked = { ...question, crystal: changed, args: format === "json" ? asJson(args) : args };
+  return answerQuestion(asked, { ...average, configurations: answer }, () => configurationsText(answer));
+}
+
+function deliverModel(question: Question, model: AtomModel, format: string): Promise<number> {
   return format === "text" || format === "json" ? answer(question, model, format) : write(question, model, format);
 }
 
@@ -55,41 +74,4 @@ async function answer(question: Question, model: AtomModel, format: string): Pro
 async function write({ args, file }: Question, model: AtomModel, format: string): Promise<number> {
   await deliver(modelText(model, format), args, file === "-" ? null : file);
   return 0;
-}
-
-function formatOf(args: Arguments): string {
-  const format = args.text("format") ?? (args.flag("json") ? "json" : "text");
-  if (!FORMATS.includes(format))
-    throw new UsageProblem(`there is no format "${format}"; there are ${FORMATS.join(", ")}`);
-  if (args.flag("json") && format !== "json")
-    throw new UsageProblem(`--json and --format ${format} ask for two formats`);
-  return format;
-}
-
-function asJson(args: Arguments): Arguments {
-  return { ...args, flag: (name) => name === "json" || args.flag(name) };
-}
-
-function modelOptions(args: Arguments, format: string): ModelOptions {
-  const [cell, range, boundary] = [args.text("cell"), args.text("range"), args.text("boundary")];
-  const one = args.flag("asymmetric") || args.flag("connected");
-  const whole = args.flag("whole-units");
-  if (one && (range !== null || whole || args.flag("p1"))) {
-    throw new UsageProblem(
-      "one atom of each site (--asymmetric, --connected) goes with no --p1, --range or --whole-units",
-    );
-  }
-  if (boundary !== null && boundary !== "in" && boundary !== "out") {
-    throw new UsageProblem(`--boundary takes in or out, not "${boundary}"`);
-  }
-  // files that hold no symmetry need none worked out
-  const plain = !one && (args.flag("p1") || PLAIN_FORMATS.includes(format) || (whole && format.startsWith("cif")));
-  return {
-    symmetry: plain ? "none" : "kept",
-    content: args.flag("connected") ? "connected" : one ? "asymmetric" : "cell",
-    wholeUnits: whole,
-    ...(cell === null ? {} : { cell: usage(() => parseCellRequest(cell)) }),
-    ...(range === null ? {} : { range: usage(() => parseRange(range)) }),
-    ...(boundary === null ? {} : { boundary }),
-  };
 }

@@ -1,5 +1,6 @@
 /** Results as text. Takes finished result objects; computes nothing. */
 export { absencesText } from "./absences-text.ts";
+export { configurationsText } from "./configurations-text.ts";
 export { type CorrelationLevels, correlationDiagram, correlationLevels } from "./correlation-diagram.ts";
 export { correlationSvg } from "./correlation-svg.ts";
 export { formatNumber } from "./format-number.ts";

@@ -43,6 +43,11 @@ export { type ChangedCell, changeOfCell, metricIn, multiplesOf } from "./change-
 export { chosenComponent, type DecidedCrystal, orderedCrystal } from "./chosen-component.ts";
 export type { SymmetryDisagreement } from "./compare-statements.ts";
 export { cellContents, contentsMisfit } from "./composition.ts";
+export {
+  type ConfigurationRow,
+  type ConfigurationsAnswer,
+  configurationsAnswer,
+} from "./configurations-answer.ts";
 export { BOND_TOLERANCE, type BondRule, NEAR_LIMIT, radiusSum } from "./contact-table.ts";
 export { type ConventionalCell, conventionalCell } from "./conventional-cell.ts";
 export { type CoordinateAtom, type CoordinateList, coordinateList, equivalentDisplacement } from "./coordinate-list.ts";

@@ -1,5 +1,6 @@
 import { formatBasis, formatOperation, formatVector, geometricMeaning } from "../symmetry/index.ts";
 import { type AtomModel, atomModel } from "./atom-model.ts";
+import type { ConfigurationsAnswer } from "./configurations-answer.ts";
 import type { Crystal } from "./crystal.ts";
 import type { ExpandedAtom } from "./expanded-atoms.ts";
 import { type CellNumbers, cellNumbers } from "./reduce-answer.ts";
@@ -50,6 +51,8 @@ export interface PositionsAnswer {
   readonly count: number;
   readonly cell: PositionsCell;
   readonly orbits: readonly PositionOrbit[];
+  /** Where ordered structures of a disordered cell were asked for; the positions are then those of the average. */
+  readonly configurations?: ConfigurationsAnswer;
 }
 
 /** Every atom of the cell, site by site in the order of the file, image by image in the order of the operations. */

@@ -1,4 +1,6 @@
 import type {
+  ConfigurationRow,
+  ConfigurationsAnswer,
   HigherGroup,
   Position,
   PositionOrbit,
@@ -21,6 +23,7 @@ import {
   list,
   number,
   object,
+  optional,
   orNull,
   type Shape,
   text,
@@ -92,12 +95,26 @@ export function positionsSchema(): Shape<CrystalDocument<PositionsAnswer>> {
     volume: amount("cubic angstrom"),
     symmetry: choice({ kept: true, none: true }, "whether the operations are those of this cell or of the file"),
   });
+  const row = object<ConfigurationRow>({
+    number: count("place in the list", 1),
+    degeneracy: count("equivalent arrangements", 1),
+    spaceGroup: object<ConfigurationRow["spaceGroup"]>({ number: count("", 1), hermannMauguin: text() }),
+    sites: list(object<ConfigurationRow["sites"][number]>({ label: text(), multiplicity: count("", 1) })),
+  });
+  const configurations = object<ConfigurationsAnswer>({
+    arrangements: textLike(/^\d+$/, "a whole number, which may be very large"),
+    inequivalent: textLike(/^\d+$/, "up to symmetry, by Burnside's lemma"),
+    excluded: count("left out since atoms in them are too near each other"),
+    places: list(object<ConfigurationsAnswer["places"][number]>({ names: list(text()), counts: list(count()) })),
+    list: list(row),
+  });
   return object<CrystalDocument<PositionsAnswer>>({
     ...crystalHeading("positions"),
     positions: list(position),
     count: count(),
     cell,
     orbits: list(orbit),
+    configurations: optional(configurations),
   });
 }
 
