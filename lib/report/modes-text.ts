@@ -17,13 +17,27 @@ function subject(answer: ModesAnswer, write: SpeciesWriter): string {
     answer.labelAxes === "file" ? "axes of the file" : "axes of the reference setting (the file's cell is skew)";
   const formula = units ? `: ${units.inPrimitiveCell} ${units.formula}` : "";
   const lines = [
-    `${atoms} vibrating atoms in the primitive cell${formula}`,
+    `${atoms} vibrating ${atoms === 1 ? "atom" : "atoms"} in the primitive cell${formula}`,
     reduction(answer),
     `factor group ${factorGroup.hermannMauguin} (${factorGroup.schoenflies}); labels in the ${axes}${factorGroup.axes ? `: ${factorGroup.axes}` : ""}`,
   ];
   const swaps = Object.entries(labelsInReference).map(([a, b]) => `${write.label(a)} is ${write.label(b)}`);
   if (swaps.length > 0) lines.push(`in the axes of the reference setting ${swaps.join(", ")}`);
+  lines.push(...exchangeable(answer, write));
   return lines.map((line) => wrapText(line, WIDTH, "    ")).join("\n");
+}
+
+/** Groups with two kinds of lateral axes or planes, alike but for their names. */
+const TWO_KINDS = /^(?:D[46]h?|C[46]v)$/;
+
+/** Handbooks differ in which kind is the first: without a word, B2g of graphite elsewhere and B1g here look like a fault. */
+function exchangeable({ factorGroup, irreps }: ModesAnswer, write: SpeciesWriter): string[] {
+  const present = irreps.filter((s) => s.label.startsWith("B") && s.total > 0);
+  if (present.length === 0 || !TWO_KINDS.test(factorGroup.schoenflies)) return [];
+  const kinds = factorGroup.schoenflies.startsWith("C") ? "sigma_v and sigma_d" : "C2' and C2''";
+  const other = (label: string) => label.replace(/^B[12]/, (b) => (b === "B1" ? "B2" : "B1"));
+  const list = present.map(({ label }) => `${write.label(label)} is ${write.label(other(label))}`);
+  return [`with ${kinds} exchanged, as some authors have them, ${list.join(", ")}`];
 }
 
 /** Translations shown of a cell much larger than the primitive one. */

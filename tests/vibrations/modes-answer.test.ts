@@ -77,6 +77,14 @@ describe("the text of modes", () => {
     expect(sphalerite).toContain("Raman shows LO or TO of F₂ as the geometry has it");
   });
 
+  it("says what B1 and B2 are called where the two kinds of lateral axes are taken the other way round", () => {
+    // graphite is 2 B2g with R. J. Nemanich, G. Lucovsky, S. A. Solin, Solid State Commun. 23 (1977) 117 (from memory)
+    expect(modesText(modesAnswer(fixture("graphite-2h")))).toMatch(/C2' and C2'' exchanged.* B₁g is B₂g\n/);
+    expect(modesText(modesAnswer(fixture("wurtzite")))).toMatch(/sigma_v and sigma_d exchanged.* B₁ is B₂\n/);
+    expect(modesText(modesAnswer(fixture("urea")))).not.toContain("exchanged");
+    expect(text).not.toContain("exchanged");
+  });
+
   it("keeps within the width of a terminal, tables apart", () => {
     const prose = text.split("\n").filter((l) => !/^(site|species|\S+ {2,})/.test(l));
     expect(Math.max(...prose.map((l) => l.length))).toBeLessThanOrEqual(110);
