@@ -16,7 +16,7 @@ const ITEMS: Readonly<Record<keyof Cell, string>> = {
   gamma: "_cell.angle_gamma",
 };
 
-const PARAMETERS = Object.keys(ITEMS) as (keyof Cell)[];
+const PARAMETERS = ["a", "b", "c", "alpha", "beta", "gamma"] as const;
 
 /** The cell with places and uncertainties; null where a parameter is missing. */
 export function statedCell(input: AuditInput): StatedCell | null {
