@@ -28,7 +28,7 @@ export const spec: CommandSpec = {
     zero: {
       type: "string",
       value: "DIRECTION",
-      describe: "polarisation at angle 0 of --about (default x, or y about x)",
+      describe: "polarisation at angle 0 of --about (default the first of x, y, z across the light, else z projected)",
     },
     letters: {
       type: "string",
@@ -53,7 +53,7 @@ function readOptions(args: Arguments): PolariseOptions {
   const geometries = args.texts("geometry");
   const about = args.text("about");
   if (about === null) return { geometries };
-  const zero = args.text("zero") ?? (about.includes("x") ? "y" : "x");
+  const zero = args.text("zero");
   const step = args.number("step") ?? 15;
   if (!(step > 0 && 180 % step === 0)) throw new UsageProblem(`--step ${step} does not divide 180`);
   return { geometries, rotation: { about, zero, letters: readLetters(args.text("letters")), step } };

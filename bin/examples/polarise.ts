@@ -17,7 +17,7 @@ A₁g (1 optic)   [ .  a  . ]
 Eg (4 optic)    [  .  -c   d ]   [ -c   .   . ]
                 [  .   d   . ]   [ -d   .   . ]
 
-Infrared dipoles:
+Infrared dipoles (letters anew):
   A₂u (3 optic): (0, 0, a)
   Eu (5 optic): (b, 0, 0) and (0, b, 0)
 

@@ -11,10 +11,10 @@ export function polariseText(answer: PolariseAnswer, write: SpeciesWriter = spec
   const parts = [
     subject(answer),
     `Raman tensors (a dot is 0; letters are measured numbers):\n\n${answer.tensors.map((t) => tensorText(t, write)).join("\n\n")}`,
-    `Infrared dipoles:\n${answer.dipoles.map((d) => dipoleText(d, write)).join("\n") || "  none"}`,
+    `Infrared dipoles (letters anew):\n${answer.dipoles.map((d) => dipoleText(d, write)).join("\n") || "  none"}`,
   ];
   if (answer.geometries.length > 0) parts.push(`Geometries asked for:\n${geometryTable(answer.geometries, write)}`);
-  parts.push(`Backscattering from the faces normal to z, x and y:\n${geometryTable(answer.faces, write)}`);
+  parts.push(`Backscattering, light along z, x and y:\n${geometryTable(answer.faces, write)}`);
   parts.push(separatingText(answer, write));
   if (answer.rotation) parts.push(rotationText(answer.rotation, write));
   parts.push(wrapText(CAUTION, WIDTH));
@@ -27,10 +27,16 @@ const CAUTION =
 function subject({ frame, labelAxes, factorGroup, piezoelectric }: PolariseAnswer): string {
   const lines = [
     `frame: ${frame}`,
-    `factor group ${factorGroup.hermannMauguin} (${factorGroup.schoenflies})${labelAxes ? `; labels: ${labelAxes}` : ""}`,
+    `factor group ${factorGroup.hermannMauguin} (${factorGroup.schoenflies})${labelAxes ? `; ${labelIntroduction(labelAxes)}: ${labelAxes}` : ""}`,
   ];
   if (piezoelectric) lines.push("piezoelectric class: polar species that are Raman active split into LO and TO");
   return lines.map((line) => wrapText(line, WIDTH, "    ")).join("\n");
+}
+
+/** Two sets of x, y, z in one answer must not be taken for one. */
+function labelIntroduction(labelAxes: string): string {
+  const isFrame = !/x along (?!\[100\])|z along (?!\[001\])/.test(labelAxes);
+  return isFrame ? "labels" : "labels refer to axes of their own, tensors to the frame";
 }
 
 function tensorText({ irrep, modes, tensor }: RamanTensorAnswer, write: SpeciesWriter): string {

@@ -69,10 +69,10 @@ export interface PolariseAnswer {
 
 export interface PolariseOptions {
   readonly geometries?: readonly string[];
-  /** Turn the crystal about this direction of the light, polarisation at angle 0 along `zero`. */
+  /** Turn the crystal about this direction of the light, polarisation at angle 0 along `zero` (null: see rotationAbout). */
   readonly rotation?: {
     readonly about: string;
-    readonly zero: string;
+    readonly zero: string | null;
     readonly letters: ReadonlyMap<string, number>;
     readonly step: number;
   };
@@ -145,8 +145,8 @@ function rotationAnswer(
   tensors: CrystalTensors,
   { about, zero, letters, step }: NonNullable<PolariseOptions["rotation"]>,
 ): PolariseAnswer["rotation"] {
-  const { k, e } = rotationAbout(parseDirection(about), parseDirection(zero), tensors.frame);
-  const table = rotationTable(tensors, k, e, letters, step);
+  const rotation = rotationAbout(parseDirection(about), zero === null ? null : parseDirection(zero), tensors.frame);
+  const table = rotationTable(tensors, rotation.k, rotation.e, letters, step);
   const all = tensors.raman.flatMap((form) => form.letters);
-  return { about, zero, letters: all.map((l) => `${l}=${letters.get(l) ?? 1}`).join(", "), ...table };
+  return { about, zero: rotation.zero, letters: all.map((l) => `${l}=${letters.get(l) ?? 1}`).join(", "), ...table };
 }

@@ -48,16 +48,34 @@ export function placeGeometry(written: WrittenGeometry, frame: CrystalFrame): Sc
   return { text, ki, ei, es, ks, q };
 }
 
-/** Light along `about` with polarisation `zero`, as unit vectors. @throws InputProblem as scatteringGeometry */
-export function rotationAbout(
-  about: WrittenDirection,
-  zero: WrittenDirection,
-  frame: CrystalFrame,
-): { readonly k: Vec3; readonly e: Vec3 } {
+/** Light along a direction, its polarisation at angle 0, and the name of that polarisation. */
+export interface Rotation {
+  readonly k: Vec3;
+  readonly e: Vec3;
+  readonly zero: string;
+}
+
+/**
+ * Light along `about` with polarisation `zero`, as unit vectors. Without `zero`, the first axis of the frame that is
+ * perpendicular to the light, else the projection of z on the face: on the cleavage of calcite, the short diagonal.
+ * @throws InputProblem as scatteringGeometry
+ */
+export function rotationAbout(about: WrittenDirection, zero: WrittenDirection | null, frame: CrystalFrame): Rotation {
   const k = vectorOf(about, frame);
+  if (zero === null) return { k, ...usualZero(k) };
   const e = vectorOf(zero, frame);
   requireTransverse(`rotation about ${formatDirection(about)}`, "incident", about, k, zero, e);
-  return { k, e };
+  return { k, e, zero: formatDirection(zero) };
+}
+
+function usualZero(k: Vec3): Omit<Rotation, "k"> {
+  const i = k.findIndex((cosine) => Math.abs(cosine) <= TRANSVERSE_TOLERANCE);
+  if (i >= 0) return { e: [Number(i === 0), Number(i === 1), Number(i === 2)], zero: "xyz"[i]! };
+  const length = Math.hypot(k[0], k[1]); // not 0, or x would be perpendicular
+  return {
+    e: [(-k[2] * k[0]) / length, (-k[2] * k[1]) / length, length],
+    zero: "the projection of z",
+  };
 }
 
 function vectorOf(d: WrittenDirection, frame: CrystalFrame): Vec3 {

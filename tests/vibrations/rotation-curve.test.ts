@@ -159,3 +159,22 @@ describe("intensity against the angle of rotation", () => {
     ]);
   });
 });
+
+describe("the polarisation at angle 0 where none is given", () => {
+  const zeroAbout = (about: string, crystal = "calcite") =>
+    polariseAnswer(fixture(crystal), { rotation: { about, zero: null, letters: new Map([["b", 0.2]]), step: 45 } })
+      .rotation!;
+
+  it("is the first axis across the light", () => {
+    expect(["z", "x", "[110]"].map((about) => zeroAbout(about).zero)).toEqual(["x", "y", "z"]);
+  });
+
+  it("is z projected on a face that no axis lies in, and then stands across the light", () => {
+    const cleavage = zeroAbout("(104)");
+    expect(cleavage.zero).toBe("the projection of z");
+    // calcite: c' is the short diagonal of the cleavage rhomb, and a mirror plane's trace; A1g cannot cross over there, but at 45 degrees
+    const a1g = cleavage.curves.find((c) => c.label === "A1g")!;
+    expect(a1g.crossed[0]).toBeCloseTo(0, 12);
+    expect(a1g.crossed[1]).toBeGreaterThan(0.01);
+  });
+});
