@@ -100,7 +100,7 @@ function nearestImage(crystal: Crystal, atoms: readonly CellAtom[], site: number
   atoms.forEach((atom, index) => {
     if (atom.site !== site) return;
     const whole = atom.position.map((e, i) => Math.round(centre[i]! - e));
-    for (const [a, b, c] of NEIGHBOURS) {
+    for (const [a, b, c] of cellsAround()) {
       const shift: IntVec3 = [whole[0]! + a, whole[1]! + b, whole[2]! + c];
       const [x, y, z] = [0, 1, 2].map((i) => atom.position[i]! + shift[i]! - centre[i]!) as [number, number, number];
       const square = g[0] * x * x + g[4] * y * y + g[8] * z * z + 2 * (g[1] * x * y + g[2] * x * z + g[5] * y * z);
@@ -110,6 +110,8 @@ function nearestImage(crystal: Crystal, atoms: readonly CellAtom[], site: number
   return best!.atom;
 }
 
-const NEIGHBOURS: readonly IntVec3[] = [-1, 0, 1].flatMap((a) =>
-  [-1, 0, 1].flatMap((b) => [-1, 0, 1].map((c): IntVec3 => [a, b, c])),
-);
+/** The cell itself and the 26 around it. */
+function cellsAround(): IntVec3[] {
+  const steps = [-1, 0, 1];
+  return steps.flatMap((a) => steps.flatMap((b) => steps.map((c): IntVec3 => [a, b, c])));
+}
