@@ -96,11 +96,12 @@ function alongEdge(here: LatticeAtom, edge: BondGraph["edges"][number]): Lattice
 /** The listed atom for the first site, else the image of a site nearest to a point. */
 function nearestImage(crystal: Crystal, atoms: readonly CellAtom[], site: number, centre: Vec3): LatticeAtom {
   const { g } = crystal.metric;
+  const around = cellsAround();
   let best: { atom: LatticeAtom; square: number } | null = null;
   atoms.forEach((atom, index) => {
     if (atom.site !== site) return;
     const whole = atom.position.map((e, i) => Math.round(centre[i]! - e));
-    for (const [a, b, c] of cellsAround()) {
+    for (const [a, b, c] of around) {
       const shift: IntVec3 = [whole[0]! + a, whole[1]! + b, whole[2]! + c];
       const [x, y, z] = [0, 1, 2].map((i) => atom.position[i]! + shift[i]! - centre[i]!) as [number, number, number];
       const square = g[0] * x * x + g[4] * y * y + g[8] * z * z + 2 * (g[1] * x * y + g[2] * x * z + g[5] * y * z);
