@@ -5,21 +5,9 @@ import {
   orderedConfigurations,
   orderedCrystal,
 } from "../lib/structure/index.ts";
-import type { Arguments, OptionSpec } from "./arguments.ts";
+import type { Arguments } from "./arguments.ts";
 import { UsageProblem } from "./problems.ts";
 import { usage } from "./usage.ts";
-
-/** What to do about disorder; without any of these, atoms keep their occupancies. */
-export const DISORDER_OPTIONS = {
-  component: {
-    type: "string",
-    value: "GROUP",
-    describe: 'take one disorder group and leave the others of its assembly out: "2", or "A:1,B:2"',
-  },
-  ordered: { type: "boolean", describe: "one ordered structure: of alternatives the one of largest occupancy" },
-  enumerate: { type: "boolean", describe: "all ordered structures of the cell up to symmetry, counted first" },
-  configuration: { type: "number", value: "N", describe: "take ordered structure N of that list" },
-} as const satisfies Record<string, OptionSpec>;
 
 /** A crystal with the disorder decided that --component and --ordered decide. */
 export function decided(

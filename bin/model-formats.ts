@@ -1,10 +1,11 @@
 import { extendedXyz, mmcifText, pdbText, positionsCsv, structureCif, xyzText } from "../lib/report/index.ts";
 import { type AtomModel, coordinateList, listedStructure, modelPositions } from "../lib/structure/index.ts";
+import type { FileFormat, Format } from "./positions-options.ts";
 import { UsageProblem } from "./problems.ts";
 import { VERSION } from "./version.ts";
 
-/** Formats besides text and JSON; those of coordinates hold no symmetry. */
-const WRITERS: Readonly<Record<string, (model: AtomModel) => string>> = {
+/** Those of coordinates hold no symmetry. */
+const WRITERS: Readonly<Record<FileFormat, (model: AtomModel) => string>> = {
   cif: (model) => cif(model, "1.1"),
   cif2: (model) => cif(model, "2.0"),
   xyz: (model) => xyzText(coordinateList(model)),
@@ -14,14 +15,12 @@ const WRITERS: Readonly<Record<string, (model: AtomModel) => string>> = {
   mmcif: (model) => mmcifText(coordinateList(model)),
 };
 
-export const FORMATS: readonly string[] = ["text", "json", ...Object.keys(WRITERS)];
-
 /** Formats that list every atom without operations. */
-export const PLAIN_FORMATS: readonly string[] = ["xyz", "extxyz", "pdb", "mmcif"];
+export const PLAIN_FORMATS: readonly Format[] = ["xyz", "extxyz", "pdb", "mmcif"];
 
-/** The text of a model in a format of FORMATS other than text and json. */
-export function modelText(model: AtomModel, format: string): string {
-  return WRITERS[format]!(model);
+/** The text of a model in a format. */
+export function modelText(model: AtomModel, format: FileFormat): string {
+  return WRITERS[format](model);
 }
 
 function cif(model: AtomModel, version: "1.1" | "2.0"): string {

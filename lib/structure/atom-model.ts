@@ -4,8 +4,9 @@ import { cellAtoms, type LatticeAtom } from "./cell-atoms.ts";
 import { type CellRequest, requestedCell } from "./cell-request-text.ts";
 import { changeOfCell, metricIn } from "./change-of-cell.ts";
 import type { Crystal } from "./crystal.ts";
-import { type ExpandedAtom, type ExpansionOptions, expandedAtoms, type Interval, wrapOf } from "./expanded-atoms.ts";
+import { type ExpandedAtom, type ExpansionOptions, expandedAtoms, type Interval } from "./expanded-atoms.ts";
 import { connectedUnit, gatheredPieces } from "./gathered-pieces.ts";
+import { wrapOf } from "./image-wrap.ts";
 
 /** Which atoms are listed: those of a cell, one of each site, the same chosen to hang together. */
 export type ModelContent = "cell" | "asymmetric" | "connected";

@@ -1,12 +1,13 @@
 import { type IntVec3, inverseRatMat, lcm, RAT_IDENTITY, type RatMat3 } from "../algebra/index.ts";
 import { InputProblem } from "../problem.ts";
-import { IDENTITY_TRANSFORMATION, type Transformation, transformPoint } from "../symmetry/index.ts";
+import { IDENTITY_TRANSFORMATION, type Transformation } from "../symmetry/index.ts";
 import { floatMatrix } from "./atom-set.ts";
 import { apply3, type Metric, type Vec3 } from "./cell.ts";
 import { AtomAction, type CellAtom, cellAtoms, type LatticeAtom } from "./cell-atoms.ts";
 import { axesInPrimitive, type CellTranslations, translationsBetween } from "./cell-lattice.ts";
 import { metricIn } from "./change-of-cell.ts";
 import type { Crystal } from "./crystal.ts";
+import { wrapOf } from "./image-wrap.ts";
 import { translatedOperations } from "./translated-operations.ts";
 
 /** An atom of the crystal, and how it comes from the list: by an operation of the group, then whole cells. */
@@ -116,13 +117,6 @@ function boxOf({ range, boundary = "in" }: ExpansionOptions, metric: Metric): Bo
     high: range.map(([, hi], i) => hi + margin[i]!) as unknown as Vec3,
     isCell: false,
   };
-}
-
-/** Whole cells between an atom of the cell and the image of the listed point by its operation as it stands. */
-export function wrapOf(crystal: Crystal, { site, image, position }: CellAtom): IntVec3 {
-  const { symmetry, images } = crystal.sites[site]!;
-  const at = transformPoint(crystal.group.operations[images[image]!.operation]!, symmetry.point);
-  return [Math.round(position[0] - at[0]), Math.round(position[1] - at[1]), Math.round(position[2] - at[2])];
 }
 
 class Expansion {

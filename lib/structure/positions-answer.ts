@@ -1,5 +1,6 @@
 import { formatBasis, formatOperation, formatVector, geometricMeaning } from "../symmetry/index.ts";
-import { type AtomModel, atomModel } from "./atom-model.ts";
+import type { AtomModel } from "./atom-model.ts";
+import { cellModel } from "./cell-model.ts";
 import type { ConfigurationsAnswer } from "./configurations-answer.ts";
 import type { Crystal } from "./crystal.ts";
 import type { ExpandedAtom } from "./expanded-atoms.ts";
@@ -57,7 +58,7 @@ export interface PositionsAnswer {
 
 /** Every atom of the cell, site by site in the order of the file, image by image in the order of the operations. */
 export function positionsAnswer(crystal: Crystal): PositionsAnswer {
-  return modelPositions(atomModel(crystal));
+  return modelPositions(cellModel(crystal));
 }
 
 /** The atoms of a model, each with the operation that made it. */
