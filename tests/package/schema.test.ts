@@ -19,6 +19,8 @@ const LINES = [
   "sites fixtures/damaged/several-elements-on-one-site.cif",
   "positions fixtures/halite.cif",
   "positions fixtures/ammonium-chloride.cif",
+  "positions fixtures/ammonium-chloride.cif --enumerate",
+  "positions fixtures/calcite.cif --cell primitive --p1 --range 0:7,0:1,0:1",
   "modes fixtures/calcite.cif",
   "modes fixtures/gypsum.cif --units --polyhedron Ca",
   "modes fixtures/forsterite-pbnm.cif",
@@ -191,7 +193,7 @@ describe("the schema of the answers", () => {
     "has no place for null, nor for text in place of numbers, in %s",
     async (line) => {
       const document = await documentOf(line);
-      const nullable = /\/(?:element|centring)$/;
+      const nullable = /\/(?:element|centring|code)$/;
       for (const path of leaves(document)) {
         const place = `/${path.join("/")}`;
         if (!nullable.test(place)) expect([place, closed(replaced(document, path, null))]).toEqual([place, false]);
