@@ -23,6 +23,7 @@ import { geometricMeaning } from "./geometric-meaning.ts";
 import { type GroupProperties, groupProperties } from "./group-properties.ts";
 import { type Operation, reduce } from "./operation.ts";
 import { formatOperation } from "./operation-text.ts";
+import { plainestForm } from "./plainest-form.ts";
 import { reflectionConditions } from "./reflection-conditions.ts";
 import { assignWyckoff } from "./site-assignment.ts";
 import { type SpaceGroup, spaceGroup } from "./space-group.ts";
@@ -114,7 +115,7 @@ function wyckoffAnswers(identified: IdentifiedGroup): WyckoffAnswer[] {
   const { group, number, toReference, isReference: reference } = identified;
   const centred = atReferenceOrigin(identified);
   return wyckoffPositions(number).map((position) => {
-    const form = reference ? position.form : formFromSetting(position.form, toReference);
+    const form = reference ? position.form : plainestForm(group, formFromSetting(position.form, toReference));
     const site = fixingOperations(group, form);
     return {
       letter: position.letter,
