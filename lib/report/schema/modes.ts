@@ -106,8 +106,7 @@ export function modesSchema(): Shape<CrystalDocument<ModesAnswer & WithUnits & W
   });
 }
 
-/** Entries of a tensor: sums of letters, `.` for 0. */
-const entries = () => list(textLike(/^(\.|[-+a-z0-9√/().]+)$/));
+const entries = () => list(text("a sum of letters, `b+sqrt3 c`; `.` for 0"));
 
 export const hyperRaman = () =>
   object<HyperRamanAnswer>({
@@ -150,7 +149,7 @@ export function polariseSchema(): Shape<CrystalDocument<PolariseAnswer>> {
     tensors: list(
       object<PolariseAnswer["tensors"][number]>({
         irrep: text(),
-        modes: count("", 1),
+        modes: count("optic; 0 where no mode shows it"),
         letters: list(text()),
         tensor: list(list(entries()), "partner, row, column"),
       }),
@@ -158,7 +157,7 @@ export function polariseSchema(): Shape<CrystalDocument<PolariseAnswer>> {
     dipoles: list(
       object<PolariseAnswer["dipoles"][number]>({
         irrep: text(),
-        modes: count("", 1),
+        modes: count("optic; 0 where no mode shows it"),
         directions: list(entries(), "of each partner along x, y, z"),
         raman: flag(),
       }),
