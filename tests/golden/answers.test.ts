@@ -127,11 +127,11 @@ describe("damaged files", () => {
   });
 });
 
-/** The command line, the first message, the space group found and the notes, and the status. */
+/** The command line, the first line of every message, the space group found and the notes, and the status. */
 function firstWords(text: string): string {
   const [line, ...rest] = text.split("\n");
-  const message = rest.find((l) => l.startsWith("! ")) ?? "no message";
+  const messages = rest.filter((l) => /^! \S/.test(l));
   const status = rest.findLast((l) => l.startsWith("[status")) ?? "[status 0]";
   const group = rest.filter((l) => /^space group|^- /.test(l));
-  return `${[line, message, ...group, status].join("\n")}\n`;
+  return `${[line, ...messages, ...group, status].join("\n")}\n`;
 }
