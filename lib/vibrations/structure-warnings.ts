@@ -1,4 +1,12 @@
-import { type Crystal, cellContents, chooseComponents, type Formula, siteSymmetry } from "../structure/index.ts";
+import {
+  type Crystal,
+  cellContents,
+  chooseComponents,
+  type Formula,
+  POSITION_TOLERANCE,
+  searchSymmetry,
+  siteSymmetry,
+} from "../structure/index.ts";
 import { assignWyckoff } from "../symmetry/index.ts";
 import { vibratingSites } from "./vibrating-sites.ts";
 
@@ -16,9 +24,12 @@ const FARTHEST = 0.5;
 
 const SHOWN = 6;
 
+/** Larger lists without symmetry are not searched for any unasked: a search of this size takes as long as a start. */
+const MOST_SEARCHED = 500;
+
 /**
  * Where the average structure lies to a spectroscopist, as plain sentences: partial and mixed occupancy, alternatives that
- * are all counted, missing hydrogen, atoms just off a special position.
+ * are all counted, missing hydrogen, atoms just off a special position, symmetry that a list in P 1 leaves out.
  * @param formula the formula that the file states, if it does
  */
 export function structureWarnings(crystal: Crystal, formula: Formula | null): string[] {
@@ -27,6 +38,7 @@ export function structureWarnings(crystal: Crystal, formula: Formula | null): st
     ...alternativeWarnings(crystal),
     ...hydrogenWarnings(crystal, formula),
     ...positionWarnings(crystal),
+    ...missedSymmetryWarnings(crystal),
   ];
 }
 
@@ -88,7 +100,7 @@ function hydrogenWarnings({ sites }: Crystal, formula: Formula | null): string[]
 /** A site that would be on a special position if the tolerance were a little wider. */
 function positionWarnings(crystal: Crystal): string[] {
   const { group, metric, tolerance, identified } = crystal;
-  const wide = Math.min(NEAR_TOLERANCES * tolerance, FARTHEST);
+  const wide = Math.min(Math.max(NEAR_TOLERANCES * tolerance, POSITION_TOLERANCE), FARTHEST);
   if (wide <= tolerance) return [];
   const near = crystal.sites.flatMap((s) => {
     if (s.occupancy < FULL || s.sharesPositionOf !== null) return [];
@@ -100,6 +112,19 @@ function positionWarnings(crystal: Crystal): string[] {
   if (near.length === 0) return [];
   return [
     `just off a special position: ${some(near)}; on it there would be fewer modes and stricter rules; --tolerance ${Number(wide.toFixed(3))} puts it there`,
+  ];
+}
+
+/** Computed structures are often listed atom by atom: in P 1 every mode is active everywhere, which is no prediction. */
+function missedSymmetryWarnings(crystal: Crystal): string[] {
+  const { group, sites } = crystal;
+  if (group.representatives.length > 1 || sites.length < 2 || sites.length > MOST_SEARCHED) return [];
+  const tolerance = crystal.tolerance || POSITION_TOLERANCE;
+  const { given, folded, group: found } = searchSymmetry(crystal, { tolerance });
+  const perCell = (found.members.length * given.length) / folded.atoms.species.length / group.operations.length;
+  if (perCell === 1) return [];
+  return [
+    `missed symmetry: no operation but x,y,z is listed, yet the atoms keep ${perCell} times as many within ${tolerance} A; species and rules below are those of P 1 and far too lax (sitefold symmetrise)`,
   ];
 }
 

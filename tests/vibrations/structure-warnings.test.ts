@@ -1,3 +1,4 @@
+import { readFileSync } from "node:fs";
 import { describe, expect, it } from "vitest";
 import { parseFormula } from "../../lib/structure/index.ts";
 import { structureWarnings } from "../../lib/vibrations/index.ts";
@@ -58,6 +59,27 @@ describe("warnings where the average structure lies", () => {
   it("count deuterium as hydrogen, and need a formula to miss any", () => {
     expect(warningsOf(["Na Na 0 0 0 1", "O O 0.5 0.5 0.5 1", "D D 0.5 0.5 0.36 1"], "Na O D2")).toEqual([]);
     expect(warningsOf(["Na Na 0 0 0 1", "O O 0.5 0.5 0.5 1"])).toEqual([]);
+  });
+
+  it("tell symmetry that a list of the whole cell in P 1 leaves out, and only there", () => {
+    const listed = (atoms: string) =>
+      crystalOfText(`data_x
+_cell_length_a 4\n_cell_length_b 4\n_cell_length_c 4
+_cell_angle_alpha 90\n_cell_angle_beta 90\n_cell_angle_gamma 90
+_space_group_name_H-M_alt 'P 1'
+loop_\n_atom_site_label\n_atom_site_fract_x\n_atom_site_fract_y\n_atom_site_fract_z\n${atoms}\n`);
+    expect(structureWarnings(listed("Cs 0 0 0\nCl 0.5 0.5 0.5"), null)).toEqual([
+      expect.stringMatching(/^missed symmetry: .* keep 48 times as many within 0\.05 A/),
+    ]);
+    expect(structureWarnings(listed("Cs 0 0 0\nCl 0.4 0.3 0.2\nNa 0.7 0.1 0.3"), null)).toEqual([]);
+  });
+
+  it("tell of special positions missed by rounding where nothing is moved onto them", () => {
+    // 0.66667 for 2/3 would put the silicon into general positions, twice as many of them
+    const quartz = readFileSync(new URL("../../fixtures/alpha-quartz.cif", import.meta.url), "utf8");
+    expect(structureWarnings(crystalOfText(quartz, 0), null)).toEqual([
+      expect.stringMatching(/^just off a special position: Si 0\.000 A/),
+    ]);
   });
 
   it("tell atoms just off a special position, within three tolerances", () => {
