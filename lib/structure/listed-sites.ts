@@ -39,15 +39,23 @@ export function listedStructure(model: AtomModel): ListedStructure {
   const M = floatMatrix(inverseRatMat(fromCrystal.P));
   const labels = new FreeLabels([]);
   const letters = isKept ? wyckoffLetters(crystal) : [];
+  const carried = new Map<number, Omit<ListedSite, "label">>(); // by site and operation: all but the place is the same
   const sites = atoms.map(({ site, operation, position }): ListedSite => {
-    const { W } = crystal.group.operations[operation]!;
-    const { span: _, ...row } = carriedAtom(crystal.sites[site]!, position, { W, M, from: crystal.metric, to: metric });
-    return {
-      ...row,
-      label: labels.claim(row.label),
-      multiplicity: isKept ? crystal.sites[site]!.images.length : 1,
-      wyckoff: letters[site] ?? null,
-    };
+    const key = site * crystal.group.operations.length + operation;
+    let row = carried.get(key);
+    if (!row) {
+      const { W } = crystal.group.operations[operation]!;
+      const { span: _, ...atom } = carriedAtom(crystal.sites[site]!, position, {
+        W,
+        M,
+        from: crystal.metric,
+        to: metric,
+      });
+      const multiplicity = isKept ? crystal.sites[site]!.images.length : 1;
+      row = { ...atom, multiplicity, wyckoff: letters[site] ?? null };
+      carried.set(key, row);
+    }
+    return { ...row, position, label: labels.claim(crystal.sites[site]!.label) };
   });
   return {
     name: model.name,
