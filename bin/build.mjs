@@ -25,6 +25,7 @@ const root = dirname(dirname(fileURLToPath(import.meta.url)));
 const started = new Date();
 const target = join(root, "dist");
 const fresh = `${target}-${process.pid}`;
+const old = `${fresh}-old`;
 
 /** What is imported only when it is needed stays in a bundle of its own: the help, and what one command takes of another. */
 const loadedApart = {
@@ -41,13 +42,13 @@ try {
   await writeSchema();
   await bundleCommandLine();
   for (const name of readdirSync(join(fresh, "bin", "commands"))) await keepCompiledCode(name);
-  rmSync(target, { recursive: true, force: true });
+  if (existsSync(target)) renameSync(target, old); // so that dist/ is missing for a moment only
   renameSync(fresh, target);
 } catch (error) {
   process.stderr.write(`build failed: ${error instanceof Error ? error.message : String(error)}\n`);
   process.exitCode = 1;
 } finally {
-  rmSync(fresh, { recursive: true, force: true });
+  for (const folder of [fresh, old]) rmSync(folder, { recursive: true, force: true });
 }
 
 function compileLibrary() {
