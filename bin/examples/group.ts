@@ -12,20 +12,20 @@ monoclinic, crystal class 2/m (C2h), Laue class 2/m, Bravais type mP, arithmetic
 centrosymmetric, not symmorphic, not a Sohncke type, not polar
 
 Operations
-     coordinates      geometric meaning
-(1)  x,y,z            1
-(2)  -x,y+1/2,-z+1/2  2(0,1/2,0) 0,y,1/4
-(3)  -x,-y,-z         -1 0,0,0
-(4)  x,-y+1/2,z+1/2   c x,1/4,z
+what it is          image of x,y,z
+1                   x,y,z
+2(0,1/2,0) 0,y,1/4  -x,y+1/2,-z+1/2
+-1 0,0,0            -x,-y,-z
+c x,1/4,z           x,-y+1/2,z+1/2
 ...
 
 Wyckoff positions
     site symmetry  coordinates                                       extra conditions
-4e  1 (C1)         x,y,z  -x,y+1/2,-z+1/2  -x,-y,-z  x,-y+1/2,z+1/2
-2d  -1 (Ci)        1/2,0,1/2  1/2,1/2,0                              hkl: k+l=2n
-2c  -1 (Ci)        0,0,1/2  0,1/2,0                                  hkl: k+l=2n
-2b  -1 (Ci)        1/2,0,0  1/2,1/2,1/2                              hkl: k+l=2n
 2a  -1 (Ci)        0,0,0  0,1/2,1/2                                  hkl: k+l=2n
+2b  -1 (Ci)        1/2,0,0  1/2,1/2,1/2                              hkl: k+l=2n
+2c  -1 (Ci)        0,0,1/2  0,1/2,0                                  hkl: k+l=2n
+2d  -1 (Ci)        1/2,0,1/2  1/2,1/2,0                              hkl: k+l=2n
+4e  1 (C1)         x,y,z  -x,y+1/2,-z+1/2  -x,-y,-z  x,-y+1/2,z+1/2
 ...
 `,
 };

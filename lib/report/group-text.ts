@@ -37,10 +37,10 @@ function traits(g: Described): string[] {
 }
 
 function operationTable({ meanings, spaceGroup }: GroupAnswer): string {
-  const rows = meanings.map((m, i) => [`(${i + 1})`, m.xyz, m.meaning]);
+  const rows = meanings.map((m) => [m.meaning, m.xyz]);
   const centrings = spaceGroup.centrings.map((t) => `(${t})+`).join("  ");
   const head = spaceGroup.centrings.length > 1 ? `Operations, each with ${centrings}` : "Operations";
-  return `${head}\n${textTable([{ heading: "" }, { heading: "coordinates" }, { heading: "geometric meaning" }], rows)}`;
+  return `${head}\n${textTable([{ heading: "what it is" }, { heading: "image of x,y,z" }], rows)}`;
 }
 
 function conditionTable({ spaceGroup: { conditions } }: GroupAnswer): string {
@@ -50,7 +50,7 @@ function conditionTable({ spaceGroup: { conditions } }: GroupAnswer): string {
 }
 
 function wyckoffTable({ spaceGroup: { wyckoff } }: GroupAnswer): string {
-  const rows = [...wyckoff].reverse().flatMap(wyckoffRows);
+  const rows = wyckoff.flatMap(wyckoffRows);
   const columns = [
     { heading: "" },
     { heading: "site symmetry" },
