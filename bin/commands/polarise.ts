@@ -1,10 +1,10 @@
-import { InputProblem } from "../../lib/problem.ts";
 import { polariseText, speciesWriter } from "../../lib/report/index.ts";
 import { type PolariseOptions, polariseAnswer } from "../../lib/vibrations/index.ts";
 import { type Arguments, COMMON_OPTIONS, type CommandSpec, SPECIES_OPTIONS } from "../arguments.ts";
 import { answerQuestion, askCrystal } from "../ask.ts";
 import { EXAMPLE } from "../examples/polarise.ts";
 import { UsageProblem } from "../problems.ts";
+import { usage } from "../usage.ts";
 
 export const spec: CommandSpec = {
   name: "polarise",
@@ -72,13 +72,4 @@ function readLetters(text: string | null): Map<string, number> {
       return [letter, number];
     });
   return new Map(entries);
-}
-
-/** A geometry comes from the command line, so its faults are faults of usage. */
-function usage<T>(work: () => T): T {
-  try {
-    return work();
-  } catch (e) {
-    throw e instanceof InputProblem ? new UsageProblem(`${e.message}${e.hint ? `\n  ${e.hint}` : ""}`) : e;
-  }
 }

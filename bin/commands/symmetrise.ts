@@ -1,4 +1,3 @@
-import { InputProblem } from "../../lib/problem.ts";
 import { symmetrisedCif, symmetriseText } from "../../lib/report/index.ts";
 import { crystalFromBlock, POSITION_TOLERANCE, SEARCH_TOLERANCE, symmetriseAnswer } from "../../lib/structure/index.ts";
 import { type Arguments, COMMON_OPTIONS, type CommandSpec, onlyOperand, parseArguments } from "../arguments.ts";
@@ -6,7 +5,7 @@ import { answerQuestion, type Question } from "../ask.ts";
 import { EXAMPLE } from "../examples/symmetrise.ts";
 import { blaming, chooseBlock, readSource } from "../input.ts";
 import { deliver } from "../output.ts";
-import { UsageProblem } from "../problems.ts";
+import { usage } from "../usage.ts";
 
 export const spec: CommandSpec = {
   name: "symmetrise",
@@ -58,13 +57,4 @@ async function ask(words: readonly string[]): Promise<Question> {
     tolerance: { position: POSITION_TOLERANCE },
   };
   return { args, crystal, block, file, heading };
-}
-
-/** Tolerances and the choice of cell come from the command line, so their faults are faults of usage. */
-function usage<T>(work: () => T): T {
-  try {
-    return work();
-  } catch (e) {
-    throw e instanceof InputProblem ? new UsageProblem(`${e.message}${e.hint ? `\n  ${e.hint}` : ""}`) : e;
-  }
 }
