@@ -1,6 +1,12 @@
-import { type Crystal, type CrystalSite, isHydrogen } from "../structure/index.ts";
+import {
+  bondValence,
+  type CationState,
+  type Crystal,
+  type CrystalSite,
+  cationStates,
+  isHydrogen,
+} from "../structure/index.ts";
 import type { AuditInput } from "./audit-input.ts";
-import { bondValence, type CationState, cationStates } from "./bond-valence-parameters.ts";
 import { type Criterion, type Finding, finding, some } from "./finding.ts";
 import { type NearAtom, nearAtoms } from "./near-atoms.ts";
 import { oxidationNumbers } from "./oxidation-numbers.ts";

@@ -1,3 +1,4 @@
+import { angle, distance, torsion } from "../structure/index.ts";
 import type { AuditInput } from "./audit-input.ts";
 import { type Criterion, count, type Finding, finding } from "./finding.ts";
 import {
@@ -7,7 +8,6 @@ import {
   SU_FACTOR,
   type UnplacedRow,
 } from "./listed-geometry.ts";
-import { angle, distance, torsion } from "./propagated-value.ts";
 
 /** Differences below these are rounding inside programs. */
 const LEAST_DISTANCE = 2e-3;

@@ -1,8 +1,9 @@
 import { type CifLoop, columnName, findLoop } from "../cif/index.ts";
+import { type Measure, torsion } from "../structure/index.ts";
 import { atomRows } from "./atom-rows.ts";
 import { type AuditInput, rounding, rowNumber, rowText, type StatedNumber } from "./audit-input.ts";
 import type { Criterion } from "./finding.ts";
-import { type Measure, type PlacedAtom, type PropagatedValue, propagate, torsion } from "./propagated-value.ts";
+import { type PlacedAtom, type PropagatedValue, propagate } from "./propagated-value.ts";
 import { type StatedCell, statedCell } from "./stated-cell.ts";
 import { codeReader } from "./symmetry-codes.ts";
 

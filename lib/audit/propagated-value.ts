@@ -1,14 +1,4 @@
-import {
-  apply3,
-  type Cell,
-  cross3,
-  dot3,
-  length3,
-  type Metric,
-  metricOf,
-  minus3,
-  type Vec3,
-} from "../structure/index.ts";
+import { apply3, type Cell, type Measure, type Metric, metricOf, type Vec3 } from "../structure/index.ts";
 import { parameterRounding, rounding, type StatedNumber } from "./audit-input.ts";
 import { cellOfStated, type StatedCell } from "./stated-cell.ts";
 import { type CodedImage, imageOf } from "./symmetry-codes.ts";
@@ -20,26 +10,6 @@ export interface PlacedAtom {
   readonly stated: readonly StatedNumber[] | null;
   readonly position: Vec3;
   readonly image: CodedImage;
-}
-
-/** A quantity of some points in Cartesian coordinates, angstrom. */
-export type Measure = (points: readonly Vec3[]) => number;
-
-/** Distance of two points, angstrom. */
-export const distance: Measure = ([a, b]) => length3(minus3(b!, a!));
-
-/** Angle at the second of three points, degrees. */
-export const angle: Measure = ([a, b, c]) => angleBetween(minus3(a!, b!), minus3(c!, b!));
-
-/** Torsion angle of four points in (-180, 180], degrees; positive if the far bond is turned clockwise. */
-export const torsion: Measure = ([a, b, c, d]) => {
-  const [u, v, w] = [minus3(b!, a!), minus3(c!, b!), minus3(d!, c!)];
-  const [p, q] = [cross3(u, v), cross3(v, w)];
-  return (Math.atan2(length3(v) * dot3(u, q), dot3(p, q)) * 180) / Math.PI;
-};
-
-function angleBetween(u: Vec3, v: Vec3): number {
-  return (Math.atan2(length3(cross3(u, v)), dot3(u, v)) * 180) / Math.PI;
 }
 
 /** A value with what rounding and uncertainties of coordinates and cell make of it. */

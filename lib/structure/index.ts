@@ -20,6 +20,7 @@ export { bondClasses, isHydrogen } from "./bond-class.ts";
 export { type Component, componentsOf, type PeriodicEdge } from "./bond-graph.ts";
 export type { BondOptions } from "./bond-overrides.ts";
 export { HALIDE_TOLERANCE, SHELL_GAP } from "./bond-rules.ts";
+export { bondValence, type CationState, cationStates } from "./bond-valence-parameters.ts";
 export { type Bond, type BondList, bondsOf } from "./bonds.ts";
 export { type BrokenOperation, brokenOperations, type ListedCell } from "./broken-operations.ts";
 export {
@@ -98,6 +99,7 @@ export { invariantMetric } from "./invariant-metric.ts";
 export { axesOf, changeAxes, type LatticeAxes } from "./lattice-axes.ts";
 export { type LatticeSymmetry, latticeSymmetries } from "./lattice-symmetry.ts";
 export { type ListedSite, type ListedStructure, listedStructure } from "./listed-sites.ts";
+export { angle, distance, type Measure, torsion } from "./measure.ts";
 export {
   type FiniteSymmetry,
   type LinearSymmetry,
