@@ -16,17 +16,16 @@ export interface RatMat3 {
 export const ZERO_VECTOR: RatVec3 = { n: [0, 0, 0], d: 1 };
 export const RAT_IDENTITY: RatMat3 = { n: [1, 0, 0, 0, 1, 0, 0, 0, 1], d: 1 };
 
-function lowestTerms(n: readonly number[], d: number): { readonly n: number[]; readonly d: number } {
+/** The greatest number that divides all of n and d, with the sign of d. */
+function commonFactor(n: readonly number[], d: number): number {
   let g = Math.abs(d);
   for (let i = 0; i < n.length; i++) {
     const e = n[i]!;
     if (!Number.isSafeInteger(e)) throw new RangeError(`not an exact integer: ${e}`);
-    if (g !== 1) g = gcd(g, e);
+    if (g !== 1 && e !== 0) g = gcd(g, e);
   }
   if (!Number.isSafeInteger(d) || d === 0) throw new RangeError(`not a denominator: ${d}`);
-  const s = d < 0 ? -g : g;
-  if (s === 1) return { n: n.map((e) => e + 0), d };
-  return { n: n.map((e) => e / s + 0), d: d / s };
+  return d < 0 ? -g : g;
 }
 
 /** Sum of the squares of the entries. */
@@ -48,12 +47,14 @@ function requireExact(boundSquared: number): void {
 
 /** The vector n/d in lowest terms. @throws RangeError if d is 0 or exactness is lost */
 export function ratVec3(n: readonly [number, number, number], d = 1): RatVec3 {
-  return lowestTerms(n, d) as unknown as RatVec3;
+  const s = commonFactor(n, d);
+  return { n: [n[0] / s + 0, n[1] / s + 0, n[2] / s + 0], d: d / s };
 }
 
 /** The matrix n/d in lowest terms. @throws RangeError if d is 0 or exactness is lost */
 export function ratMat3(n: IntMat3, d = 1): RatMat3 {
-  return lowestTerms(n, d) as unknown as RatMat3;
+  const s = commonFactor(n, d);
+  return { n: n.map((e) => e / s + 0) as unknown as IntMat3, d: d / s };
 }
 
 /** Vector of three rationals. */

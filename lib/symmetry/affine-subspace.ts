@@ -1,4 +1,5 @@
 import {
+  apply,
   applyRow,
   gcd,
   hermiteRows,
@@ -35,6 +36,10 @@ export function subspace(rows: readonly (readonly number[])[], d: number): Affin
   const reduced = rows.length === 0 ? [] : hermiteRows(rows);
   const F = reduced.map((r) => [r[0]!, r[1]!, r[2]!] as const);
   const c = reduced.map((r) => mod(r[3]!, d));
+  return normalised(F, c, d);
+}
+
+function normalised(F: readonly IntVec3[], c: readonly number[], d: number): AffineSubspace {
   const g = c.reduce((a, b) => gcd(a, b), d);
   const lowest = c.map((e) => e / g);
   return { F, c: lowest, d: d / g, key: `${F.join(";")}|${lowest.join()}/${d / g}` };
@@ -59,12 +64,22 @@ const UNIT_ROWS: readonly IntVec3[] = [
 /** Image under an operation whose translation is over dw: F W^-1 y = c + F W^-1 w. */
 export function imageOf(s: AffineSubspace, a: PrimitiveOperation, dw: number): AffineSubspace {
   const d = lcm(s.d, dw);
+  if (s.F.length === 3) return point(apply(a.W, s.c as IntVec3), a.w, d / s.d, d / dw, d);
   const rows = s.F.map((f, i) => {
     const row = applyRow(f, a.inverse);
     const shift = row[0] * a.w[0] + row[1] * a.w[1] + row[2] * a.w[2];
     return [...row, s.c[i]! * (d / s.d) + shift * (d / dw)];
   });
   return subspace(rows, d);
+}
+
+/** The point x kx + w kw, numerators over d: its F is the unit matrix, so nothing has to be reduced. */
+function point(x: IntVec3, w: IntVec3, kx: number, kw: number, d: number): AffineSubspace {
+  return normalised(
+    UNIT_ROWS,
+    x.map((e, i) => mod(e * kx + w[i]! * kw, d)),
+    d,
+  );
 }
 
 /** Basis of the lattice vectors along the subspace. */

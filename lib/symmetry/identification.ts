@@ -19,7 +19,7 @@ import { centringsOf, primitiveBasis } from "./centring.ts";
 import { type ClassLattice, classLattice, matrixCode, typeOfTranslations } from "./class-lattice.ts";
 import { conventionalAxes } from "./conventional-axes.ts";
 import { crystalFamily, type GeometricClass, geometricClass, signedOrder } from "./geometric-class.ts";
-import { type Operation, operationKey } from "./operation.ts";
+import { type Operation, sameOperation } from "./operation.ts";
 import { originShift } from "./origin-shift.ts";
 import { referenceGroup } from "./reference-group.ts";
 import { IDENTITY_TRANSFORMATION, type Transformation } from "./transformation.ts";
@@ -67,8 +67,12 @@ function isReferenceOf(number: number, operations: readonly Operation[]): boolea
   if (!Number.isInteger(number) || number < 1 || number > 230) return false;
   const reference = referenceGroup(number);
   if (reference.operations.length !== operations.length) return false;
-  const keys = new Set(operations.map(operationKey));
-  return reference.operations.every((a) => keys.has(operationKey(a)));
+  // Most files list them in the printed order, so the next one is looked at first.
+  const count = operations.length;
+  return reference.operations.every((a, at) => {
+    for (let i = 0; i < count; i++) if (sameOperation(a, operations[(at + i) % count]!)) return true;
+    return false;
+  });
 }
 
 /** The group carried to conventional axes of its family. */

@@ -27,7 +27,7 @@ export const IDENTITY_OPERATION: Operation = { W: IDENTITY, w: ZERO_VECTOR };
 
 /** a after b: x' = a(b(x)). The translation is not reduced. */
 export function compose(a: Operation, b: Operation): Operation {
-  return { W: multiply(a.W, b.W), w: addVectors(ratVec3(apply(a.W, b.w.n), b.w.d), a.w) };
+  return { W: multiply(a.W, b.W), w: addVectors({ n: apply(a.W, b.w.n), d: b.w.d }, a.w) };
 }
 
 /** The inverse operation; its translation is not reduced. */

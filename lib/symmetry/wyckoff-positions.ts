@@ -83,27 +83,40 @@ function readTable(number: number): TabulatedPosition[] {
 }
 
 function position(number: number, entry: TabulatedPosition, sets: DirectionSets): WyckoffPosition {
-  const group = referenceGroup(number);
+  const { operations, representatives } = referenceGroup(number);
   const form = parseForm(entry.representative);
-  const stabiliser: number[] = [];
-  const count = group.representatives.length;
-  group.operations.forEach((a, i) => {
-    if (isFixedBy(a, form)) stabiliser.push(i % count);
-  });
-  const rotations = stabiliser.map((i) => group.representatives[i]!.W);
+  // A search for one position asks the others for nothing but their form.
+  let fixing: readonly number[] | null = null;
+  let symbol: string | null = null;
   let listed: readonly string[] | null = null;
+  const stabiliser = () => {
+    fixing ??= operations
+      .flatMap((a, i) => (isFixedBy(a, form) ? [i % representatives.length] : []))
+      .sort((a, b) => a - b);
+    return fixing;
+  };
   return {
     letter: entry.letter,
-    multiplicity: group.operations.length / stabiliser.length,
-    siteSymmetry: orientedSymbol(rotations, sets)!,
-    order: stabiliser.length,
     representative: entry.representative,
+    form,
+    get stabiliser() {
+      return stabiliser();
+    },
+    get order() {
+      return stabiliser().length;
+    },
+    get multiplicity() {
+      return operations.length / stabiliser().length;
+    },
+    get siteSymmetry() {
+      const rotations = () => stabiliser().map((i) => representatives[i]!.W);
+      symbol ??= orientedSymbol(rotations(), sets)!;
+      return symbol;
+    },
     get coordinates() {
-      listed ??= coordinates(number, form); // long lists, which few ask for
+      listed ??= coordinates(number, form);
       return listed;
     },
-    form,
-    stabiliser: stabiliser.sort((a, b) => a - b),
   };
 }
 
