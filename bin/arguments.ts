@@ -73,7 +73,7 @@ export function parseArguments(words: readonly string[], spec: CommandSpec): Arg
   const alias = Object.fromEntries(
     names.flatMap((n) => (spec.options[n]!.alias ? [[n, spec.options[n]!.alias!]] : [])),
   );
-  const parsed = parser([...words], {
+  const parsed = parser(withValues(words, spec), {
     boolean: ofType(["boolean"]),
     string: [...ofType(["string", "number"]), "_"],
     alias,
@@ -106,6 +106,25 @@ export function parseArguments(words: readonly string[], spec: CommandSpec): Arg
     return value;
   };
   return { operands: parsed._.map(String), text, texts, flag: (name) => parsed[name] === true, number };
+}
+
+/** Values may begin with a minus, `--at -0.1,0,0`, which the parser would take for options. */
+function withValues(words: readonly string[], spec: CommandSpec): string[] {
+  const joined: string[] = [];
+  for (let i = 0; i < words.length; i++) {
+    const [word, next] = [words[i]!, words[i + 1]];
+    const takesValue = word.startsWith("--") && (spec.options[word.slice(2)]?.type ?? "boolean") !== "boolean";
+    if (takesValue && next !== undefined && /^-[^-]/.test(next) && !isOption(next, spec)) {
+      joined.push(`${word}=${next}`);
+      i++;
+    } else joined.push(word);
+  }
+  return joined;
+}
+
+function isOption(word: string, { options }: CommandSpec): boolean {
+  const name = word.slice(1);
+  return name in options || Object.values(options).some((o) => o.alias === name);
 }
 
 function unknownOption(key: string, names: readonly string[], spec: CommandSpec): UsageProblem {

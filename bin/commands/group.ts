@@ -6,8 +6,8 @@ import {
   groupAnswer,
   type IdentifiedGroup,
   identifyGroup,
+  namedGroup,
   parseTransformation,
-  readGroupName,
   reverse,
   settingOperations,
   settingsOf,
@@ -44,7 +44,7 @@ export async function run(words: readonly string[]): Promise<number> {
     const identified = inSetting(question.crystal.identified, args);
     return answerQuestion(question, groupAnswer(identified), () => groupText(groupAnswer(identified)));
   }
-  const { identified, notes } = namedGroup(operand);
+  const { identified, notes } = groupCalled(operand);
   const answer = groupAnswer(inSetting(identified, args));
   const heading = { command: spec.name, source: { file: operand, block: "" }, notes, tolerance: { position: 0 } };
   const text = () => [...notes.map((n) => `- ${n}`), groupText(answer)].join("\n");
@@ -52,16 +52,12 @@ export async function run(words: readonly string[]): Promise<number> {
   return 0;
 }
 
-function namedGroup(name: string): { identified: IdentifiedGroup; notes: string[] } {
+function groupCalled(name: string): { identified: IdentifiedGroup; notes: string[] } {
   try {
-    const reading = readGroupName(name);
-    const first = reading.candidates[0]!;
-    const operations = settingOperations({ number: first.number, toReference: first.transformation });
-    const open = reading.ambiguity.join(", ");
-    const notes = [
-      `"${name}" read as ${reading.understoodAs}${open ? `; left open: ${open}, the most usual is taken` : ""}`,
-    ];
-    return { identified: identifyGroup(spaceGroup(operations)), notes };
+    const { understoodAs, settings, ambiguity } = namedGroup(name);
+    const open = ambiguity.join(", ");
+    const notes = [`"${name}" read as ${understoodAs}${open ? `; left open: ${open}, the most usual is taken` : ""}`];
+    return { identified: identifyGroup(settings[0].group), notes };
   } catch (e) {
     if (!(e instanceof InputProblem)) throw e;
     throw new UsageProblem(`${e.message}, and there is no such file\n  ${e.hint}`);

@@ -11,6 +11,7 @@ export { modesText } from "./modes-text.ts";
 export { patternsText } from "./patterns-text.ts";
 export { pdbText } from "./pdb.ts";
 export { pointText } from "./point-text.ts";
+export { pointsText } from "./points-text.ts";
 export { polariseText } from "./polarise-text.ts";
 export { polyhedraText } from "./polyhedra-text.ts";
 export { positionsCsv } from "./positions-csv.ts";

@@ -3,13 +3,12 @@ import { formatNumber } from "./format-number.ts";
 import { occupancyText } from "./positions-text.ts";
 import { type Column, textTable } from "./table.ts";
 
-/** One line for each site of the file. */
-export function sitesText(answer: SitesAnswer): string {
+/** One line for each site. @param of points are no atoms: they have no element and no occupancy */
+export function sitesText(answer: SitesAnswer, of: "atoms" | "points" = "atoms"): string {
   const right = { align: "right" } as const;
+  const atoms = of === "atoms";
   const columns: Column[] = [
-    { heading: "label" },
-    { heading: "element" },
-    { heading: "occ.", ...right },
+    ...(atoms ? [{ heading: "label" }, { heading: "element" }, { heading: "occ.", ...right }] : [{ heading: "point" }]),
     { heading: "in cell", ...right },
     { heading: "position" },
     { heading: "site symmetry" },
@@ -20,7 +19,10 @@ export function sitesText(answer: SitesAnswer): string {
     { heading: "may move in" },
     { heading: tensorHeading(answer) },
   ];
-  return textTable(columns, answer.sites.map(row));
+  return textTable(
+    columns,
+    answer.sites.map((site) => [site.label, ...(atoms ? atomCells(site) : []), ...siteCells(site)]),
+  );
 }
 
 function tensorHeading({ sites }: SitesAnswer): string {
@@ -28,11 +30,12 @@ function tensorHeading({ sites }: SitesAnswer): string {
   return `${beta ? "beta" : "U"} 11,22,33,12,13,23`;
 }
 
-function row(site: SiteAnswer): string[] {
+function atomCells({ element, occupancy }: SiteAnswer): string[] {
+  return [element ?? "?", occupancyText(occupancy)];
+}
+
+function siteCells(site: SiteAnswer): string[] {
   return [
-    site.label,
-    site.element ?? "?",
-    occupancyText(site.occupancy),
     String(site.multiplicity),
     site.referencePosition,
     `${site.siteSymmetry} (${site.schoenflies})`,

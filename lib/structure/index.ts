@@ -39,10 +39,18 @@ export {
 } from "./cell.ts";
 export { AtomAction, type CellAtom, cellAtoms, type LatticeAtom } from "./cell-atoms.ts";
 export { type CellTranslations, translationsIn } from "./cell-lattice.ts";
+export {
+  type CellParameter,
+  type CellParameters,
+  formatCellParameters,
+  parseCellParameters,
+  type WrittenCell,
+} from "./cell-parameters-text.ts";
 export { type CellRequest, formatCellRequest, parseCellRequest, requestedCell } from "./cell-request-text.ts";
 export { type ChangedCell, changeOfCell, metricIn, multiplesOf } from "./change-of-cell.ts";
 export { chosenComponent, type DecidedCrystal, orderedCrystal } from "./chosen-component.ts";
 export type { SymmetryDisagreement } from "./compare-statements.ts";
+export { type CellOrigin, completedCell } from "./completed-cell.ts";
 export { cellContents, contentsMisfit } from "./composition.ts";
 export {
   type ConfigurationRow,
@@ -125,6 +133,7 @@ export {
 } from "./ordered-configurations.ts";
 export { type OrderedModel, orderedModel } from "./ordered-model.ts";
 export { nearestDistance, PeriodicPoints } from "./periodic-points.ts";
+export { type PointsAnswer, type PointsQuestion, pointsAnswer } from "./points-answer.ts";
 export {
   modelPositions,
   type Position,
@@ -145,7 +154,7 @@ export {
 export { cross3, dot3, length3, minus3, unit3 } from "./rotation-fit.ts";
 export { formatShellPattern, parseShellPattern, type ShellPattern } from "./shell-text.ts";
 export { type SiteSymmetry, siteSymmetry } from "./site-symmetry.ts";
-export { type SiteAnswer, type SitesAnswer, sitesAnswer } from "./sites-answer.ts";
+export { type SiteAnswer, type SiteImage, type SitesAnswer, sitesAnswer } from "./sites-answer.ts";
 export { type EigenSystem, symmetricEigen } from "./symmetric-eigen.ts";
 export {
   type DisplacingOperation,

@@ -1,5 +1,22 @@
-import { add, type IntMat3, lcm, type RatMat3, type RatVec3, ratMat3, ratVec3 } from "../algebra/index.ts";
-import { compose, type Operation, operationKey, transformPoint } from "../symmetry/index.ts";
+import {
+  add,
+  equal,
+  equalVectors,
+  type IntMat3,
+  lcm,
+  type RatMat3,
+  type RatVec3,
+  ratMat3,
+  ratVec3,
+} from "../algebra/index.ts";
+import {
+  compose,
+  IDENTITY_OPERATION,
+  type Operation,
+  type SpaceGroup,
+  siteOperations,
+  transformPoint,
+} from "../symmetry/index.ts";
 import { lengthOf, type Metric, type Vec3 } from "./cell.ts";
 
 /** Largest order of a point group of a lattice in three dimensions. */
@@ -57,6 +74,13 @@ function longestWithoutTranslation(near: readonly NearOperation[]): number {
   return near.length;
 }
 
+/** Site-symmetry group of a point given exactly: nothing is near but what coincides, and no length is needed. */
+export function exactSiteSymmetry(group: SpaceGroup, point: RatVec3): SiteSymmetry {
+  const operations = siteOperations(group, point);
+  const { n, d } = point;
+  return { operations, ...meanOperation(operations), point: [n[0] / d, n[1] / d, n[2] / d], shift: 0 };
+}
+
 interface NearOperation {
   readonly operation: Operation;
   readonly distance: number; // angstrom
@@ -66,38 +90,47 @@ function nearOperations(operations: readonly Operation[], metric: Metric, x: Vec
   const near: NearOperation[] = [];
   for (const a of operations) {
     const image = transformPoint(a, x);
-    const t = image.map((e, i) => Math.round(x[i]! - e) + 0) as unknown as [number, number, number];
-    const d: Vec3 = [image[0] + t[0] - x[0], image[1] + t[1] - x[1], image[2] + t[2] - x[2]];
     // Rounding finds the nearest lattice point only for short vectors; tolerances are short against a cell.
-    const distance = lengthOf(metric, d);
-    if (distance <= tolerance) {
-      const n = a.w.n.map((e, i) => e + t[i]! * a.w.d) as unknown as [number, number, number];
-      near.push({ operation: { W: a.W, w: { n, d: a.w.d } }, distance });
-    }
+    const t0 = Math.round(x[0] - image[0]) + 0;
+    const t1 = Math.round(x[1] - image[1]) + 0;
+    const t2 = Math.round(x[2] - image[2]) + 0;
+    const distance = lengthOf(metric, [image[0] + t0 - x[0], image[1] + t1 - x[1], image[2] + t2 - x[2]]);
+    if (distance > tolerance) continue;
+    const { n, d } = a.w;
+    near.push({ operation: { W: a.W, w: { n: [n[0] + t0 * d, n[1] + t1 * d, n[2] + t2 * d], d } }, distance });
   }
   return near.sort((p, q) => p.distance - q.distance);
 }
 
-/** The finite group of affine operations (not reduced modulo the lattice) that the given ones generate, or null. */
-function closeAround(generators: readonly Operation[]): Operation[] | null {
-  const found = new Map<string, Operation>();
-  const rotations = new Set<string>();
-  const queue: Operation[] = [];
-  const insert = (a: Operation): boolean => {
-    const k = operationKey(a);
-    if (found.has(k)) return true;
-    const r = a.W.join();
-    if (rotations.has(r) || found.size >= LARGEST_SITE_GROUP) return false; // a translation would lie in the group
-    rotations.add(r);
-    found.set(k, a);
-    queue.push(a);
-    return true;
+/**
+ * The finite group of affine operations (not reduced modulo the lattice) that the given ones generate, the given ones
+ * first, or null if there is none: if a translation or too many operations appear.
+ */
+function closeAround(given: readonly Operation[]): Operation[] | null {
+  const members: Operation[] = [];
+  const insert = (a: Operation): "known" | "new" | "impossible" => {
+    for (const b of members) if (equal(a.W, b.W)) return equalVectors(a.w, b.w) ? "known" : "impossible";
+    if (members.length >= LARGEST_SITE_GROUP) return "impossible";
+    members.push(a);
+    return "new";
   };
-  for (const g of generators) if (!insert(g)) return null;
-  for (let i = 0; i < queue.length; i++) {
-    for (const g of generators) if (!insert(compose(queue[i]!, g))) return null;
+  for (const a of given) if (insert(a) === "impossible") return null;
+  // A member that the earlier generators reach needs no products of its own.
+  const generators: Operation[] = [];
+  let reached: Operation[] = [IDENTITY_OPERATION];
+  for (const a of given) {
+    if (reached.some((b) => equal(a.W, b.W))) continue;
+    generators.push(a);
+    reached = [IDENTITY_OPERATION];
+    for (let i = 0; i < reached.length; i++) {
+      for (const g of generators) {
+        const product = compose(reached[i]!, g);
+        if (insert(product) === "impossible") return null;
+        if (!reached.some((b) => equal(product.W, b.W))) reached.push(product);
+      }
+    }
   }
-  return queue;
+  return members;
 }
 
 function snap(group: readonly Operation[], metric: Metric, x: Vec3): SiteSymmetry {

@@ -32,6 +32,17 @@ export interface SiteAnswer {
   readonly adp: string;
   /** Whether `adp` holds for U_ij as it stands, or only for beta_ij (axes of unequal length that symmetry mixes). */
   readonly adpHoldsFor: "U" | "beta";
+  /** All images in the cell, where they were asked for. */
+  readonly images?: readonly SiteImage[];
+}
+
+/** One of the equivalent positions of a site. */
+export interface SiteImage {
+  /** Exact where the point was given without a cell, else rounded: `3/5,3/4,4/5`. */
+  readonly coordinates: string;
+  readonly position: Vec3;
+  /** The operation of the group that makes it, up to whole cells. */
+  readonly operation: string;
 }
 
 export interface SitesAnswer {
@@ -43,14 +54,18 @@ export function sitesAnswer(crystal: Crystal): SitesAnswer {
   return { sites: crystal.sites.map((site) => siteAnswer(site, crystal.identified)) };
 }
 
-function siteAnswer(site: CrystalSite, identified: IdentifiedGroup): SiteAnswer {
+/** What is told of a site. */
+type PlacedSite = Pick<CrystalSite, "label" | "element" | "occupancy" | "position" | "symmetry">;
+
+/** A site in its place in a group. */
+export function siteAnswer(site: PlacedSite, identified: IdentifiedGroup): SiteAnswer {
   const { operations, point, shift } = site.symmetry;
   const assigned = assignWyckoff(identified, operations);
   return {
     label: site.label,
     element: site.element,
     occupancy: site.occupancy,
-    multiplicity: site.images.length,
+    multiplicity: assigned.multiplicity,
     wyckoff: assigned.letter,
     referencePosition: `${assigned.referenceMultiplicity}${assigned.letter}`,
     siteSymmetry: assigned.siteSymmetry,

@@ -5,6 +5,7 @@ export {
   parseTriplet,
 } from "./affine-text.ts";
 export { centringLetter, centringsOf, primitiveBasis } from "./centring.ts";
+export { type ExactImage, exactOrbit, siteOperations } from "./exact-site.ts";
 export { extendedSymbol } from "./extended-symbol.ts";
 export { extinctionSymbol } from "./extinction-symbol.ts";
 export { DECIMAL_TOLERANCE, fractionFromDecimal } from "./fraction-text.ts";
@@ -27,6 +28,7 @@ export { type GroupNameCandidate, type GroupNameReading, readGroupName } from ".
 export { type Identification, identify } from "./identification.ts";
 export { type LabelFrames, ownFrame, referenceFrame } from "./label-frame.ts";
 export { matchingSetting } from "./matching-setting.ts";
+export { type NamedGroup, type NamedSetting, namedGroup } from "./named-group.ts";
 export {
   compose,
   IDENTITY_OPERATION,
@@ -38,6 +40,23 @@ export {
   transformPoint,
 } from "./operation.ts";
 export { formatOperation, parseOperation } from "./operation-text.ts";
+export {
+  formatPoint,
+  parsePoint,
+  pointVector,
+  unroundedPoint,
+  type WrittenCoordinate,
+  type WrittenPoint,
+} from "./point-text.ts";
+export {
+  freeLetters,
+  type PositionGroup,
+  type PositionInCell,
+  type PositionPoints,
+  pointOfForm,
+  pointsOfPosition,
+  positionsInCell,
+} from "./position-points.ts";
 export { coordinatesIn } from "./reciprocal-strata.ts";
 export {
   independentConditions,
@@ -65,6 +84,7 @@ export { rotationIndex, rotationParts, type SpaceGroup, spaceGroup } from "./spa
 export { type SpaceGroupType, spaceGroupType, spaceGroupTypes } from "./space-group-type.ts";
 export { type SpecialCondition, specialConditions } from "./special-reflection-conditions.ts";
 export { conventionalSetting, type IdentifiedGroup, identifyGroup, type SpaceGroupSummary } from "./summary.ts";
+export { type TensorConstraint, tensorConstraint } from "./tensor-constraint.ts";
 export {
   chain,
   IDENTITY_TRANSFORMATION,

@@ -8,6 +8,7 @@ import type {
   PositionsCell,
   ReduceAnswer,
   SiteAnswer,
+  SiteImage,
   SitesAnswer,
   SymmetriseAnswer,
 } from "../../structure/index.ts";
@@ -43,8 +44,14 @@ export const crystalHeading = (command: string): Fields<Heading & { readonly spa
 const occupancy = () => amount("share of cells in which the atom is there");
 const element = () => orNull(text(), "null where neither type symbol nor label tells");
 
-export function sitesSchema(): Shape<CrystalDocument<SitesAnswer>> {
-  const site = object<SiteAnswer>({
+/** Of `sites`, and of the sites that `compose` places. */
+function siteShape(): Shape<SiteAnswer> {
+  const image = object<SiteImage>({
+    coordinates: xyz("exact where no cell was given, else rounded"),
+    position: vector("fractional"),
+    operation: xyz("makes it from the point given, up to whole cells"),
+  });
+  return object<SiteAnswer>({
     label: text(),
     element: element(),
     occupancy: occupancy(),
@@ -61,8 +68,12 @@ export function sitesSchema(): Shape<CrystalDocument<SitesAnswer>> {
     referenceConstraint: xyz("the same in the reference setting"),
     adp: textLike(/^[^,]+(,[^,]+){5}$/, "u11,u22,u33,u12,u13,u23 as far as they are independent"),
     adpHoldsFor: choice({ U: true, beta: true }, "form of the tensor in which this holds in any cell"),
+    images: optional(list(image, "all equivalent positions in the cell, where they were asked for")),
   });
-  return object<CrystalDocument<SitesAnswer>>({ ...crystalHeading("sites"), sites: list(site) });
+}
+
+export function sitesSchema(): Shape<CrystalDocument<SitesAnswer>> {
+  return object<CrystalDocument<SitesAnswer>>({ ...crystalHeading("sites"), sites: list(siteShape()) });
 }
 
 export function positionsSchema(): Shape<CrystalDocument<PositionsAnswer>> {
