@@ -8,6 +8,7 @@ export { centringLetter, centringsOf, primitiveBasis } from "./centring.ts";
 export { type ExactImage, exactOrbit, siteOperations } from "./exact-site.ts";
 export { extendedSymbol } from "./extended-symbol.ts";
 export { extinctionSymbol } from "./extinction-symbol.ts";
+export { type PlacedPoints, placedPoints } from "./first-triplet.ts";
 export { DECIMAL_TOLERANCE, fractionFromDecimal } from "./fraction-text.ts";
 export type { CrystalFamily, GeometricClass } from "./geometric-class.ts";
 export { type GeometricMeaning, geometricMeaning } from "./geometric-meaning.ts";
@@ -29,6 +30,7 @@ export { type Identification, identify } from "./identification.ts";
 export { type LabelFrames, ownFrame, referenceFrame } from "./label-frame.ts";
 export { matchingSetting } from "./matching-setting.ts";
 export { type NamedGroup, type NamedSetting, namedGroup } from "./named-group.ts";
+export { normaliserShifts, normalisingShift } from "./normaliser.ts";
 export {
   compose,
   IDENTITY_OPERATION,
