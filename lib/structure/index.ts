@@ -151,10 +151,20 @@ export {
   reduceAnswer,
   type SymmetricCell,
 } from "./reduce-answer.ts";
+export {
+  type ResiteAnswer,
+  type Resited,
+  type ResitedSite,
+  type ResiteRequest,
+  resited,
+  type StandardisationAnswer,
+} from "./resite-answer.ts";
 export { cross3, dot3, length3, minus3, unit3 } from "./rotation-fit.ts";
 export { formatShellPattern, parseShellPattern, type ShellPattern } from "./shell-text.ts";
 export { type SiteSymmetry, siteSymmetry } from "./site-symmetry.ts";
 export { type SiteAnswer, type SiteImage, type SitesAnswer, sitesAnswer } from "./sites-answer.ts";
+export { type DescribedSite, type StandardDescription, standardDescription } from "./standard-description.ts";
+export { type StandardisedCrystal, standardisedCrystal } from "./standardised-crystal.ts";
 export { type EigenSystem, symmetricEigen } from "./symmetric-eigen.ts";
 export {
   type DisplacingOperation,

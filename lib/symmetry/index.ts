@@ -67,6 +67,7 @@ export {
   type ReflectionCondition,
   reflectionConditions,
 } from "./reflection-conditions.ts";
+export { type RequestedSetting, requestedHall, requestedSetting } from "./requested-setting.ts";
 export { settingHall, settingOperations } from "./setting-group.ts";
 export { type Setting, settingsOf } from "./settings.ts";
 export {

@@ -1,0 +1,198 @@
+import { multiplyRatMat, ratMat3 } from "../algebra/index.ts";
+import {
+  chain,
+  formatBasis,
+  formatVector,
+  type RequestedSetting,
+  requestedHall,
+  requestedSetting,
+  type SpaceGroupSummary,
+  type Transformation,
+} from "../symmetry/index.ts";
+import type { Vec3 } from "./cell.ts";
+import { changeOfCell } from "./change-of-cell.ts";
+import type { Crystal } from "./crystal.ts";
+import type { DisplacementTensor } from "./displacement.ts";
+import { axesOf } from "./lattice-axes.ts";
+import { niggliReduction } from "./niggli-reduction.ts";
+import { inCell, preferredReference } from "./preferred-reference.ts";
+import { type CellNumbers, cellNumbers } from "./reduce-answer.ts";
+import { type SiteAnswer, sitesAnswer } from "./sites-answer.ts";
+import { type StandardisedCrystal, standardisedCrystal } from "./standardised-crystal.ts";
+
+/** The setting wanted: that of International Tables, one by name or change of axes, by Hall symbol, the standard one. */
+export type ResiteRequest =
+  | { readonly kind: "reference" }
+  | { readonly kind: "setting" | "hall"; readonly text: string }
+  | { readonly kind: "standardised"; readonly eitherHand?: boolean };
+
+/** A site in the new setting. */
+export interface ResitedSite
+  extends Pick<
+    SiteAnswer,
+    "label" | "element" | "occupancy" | "multiplicity" | "wyckoff" | "siteSymmetry" | "constraint"
+  > {
+  /** Its label in the file. */
+  readonly from: string;
+  /** On the special position; fractional. */
+  readonly position: Vec3;
+  /** Standard uncertainties, null where the file gives none; those of sums as of independent terms. */
+  readonly su: readonly (number | null)[];
+  /** Square angstrom; on the new axes. */
+  readonly displacement: DisplacementTensor | null;
+}
+
+/** How a standard description was found. */
+export interface StandardisationAnswer {
+  /** The standardisation parameter, dimensionless. */
+  readonly gamma: number;
+  /** Distance of the mean position from the origin, in fractions of the axes. */
+  readonly centre: number;
+  /** Choices of axes with the standard cell, origins for each that the group fixes, and origins along free directions. */
+  readonly axes: number;
+  readonly shifts: number;
+  readonly origins: number;
+  /** Axes of the new cell along which the group leaves the origin free. */
+  readonly free: readonly string[];
+  /** Descriptions compared, and how many of them have the smallest gamma. */
+  readonly compared: number;
+  readonly tied: number;
+  /** `kept`: axes stay right-handed; `either`: the mirror image was compared too. */
+  readonly hand: "kept" | "either";
+  /** Whether the mirror image is what is described. */
+  readonly mirrored: boolean;
+}
+
+export interface ResiteAnswer {
+  /** In the cell of the file. */
+  readonly given: SpaceGroupSummary;
+  readonly spaceGroup: SpaceGroupSummary;
+  /** (a', b', c') = (a, b, c) P, from the cell of the file. */
+  readonly P: string;
+  /** x = P x' + p; components along which the origin is free as decimals. */
+  readonly p: string;
+  /** The same as numbers. */
+  readonly origin: Vec3;
+  readonly cell: CellNumbers;
+  /** Cubic angstrom. */
+  readonly volume: number;
+  readonly sites: readonly ResitedSite[];
+  readonly standardisation?: StandardisationAnswer;
+}
+
+/** An answer with the crystal it tells of. */
+export interface Resited {
+  readonly crystal: Crystal;
+  readonly answer: ResiteAnswer;
+  readonly notes: readonly string[];
+}
+
+/**
+ * A crystal in another setting. S.u. and displacement parameters go with the atoms; those of the cell are not known here.
+ * @throws InputProblem `setting-unknown`, `hall-unreadable`, and as `changeOfCell`
+ */
+export function resited(crystal: Crystal, request: ResiteRequest): Resited {
+  if (request.kind === "standardised") return standardised(crystal, request.eitherHand === true);
+  const { transformation, note } = wanted(crystal, request);
+  const { crystal: changed, rotations } = changeOfCell(crystal, transformation);
+  const notes = note === null ? [] : [note];
+  if (rotations.after < rotations.before) {
+    notes.push(
+      `the new cell holds ${rotations.after} of the ${rotations.before} rotation parts of the space group; the others do not keep its shape`,
+    );
+  }
+  const labels = changed.sites.map((s) => s.label);
+  return { crystal: changed, answer: answerOf(crystal, changed, transformation, [0, 0, 0], labels), notes };
+}
+
+function wanted(crystal: Crystal, request: Exclude<ResiteRequest, { kind: "standardised" }>): RequestedSetting {
+  const given = { number: crystal.identified.number, toReference: toReference(crystal) };
+  switch (request.kind) {
+    case "reference":
+      return { transformation: given.toReference, note: null };
+    case "setting":
+      return requestedSetting(given, request.text);
+    default:
+      return requestedHall(given, request.text);
+  }
+}
+
+/** From a conventional setting as that is defined; from any other cell to the shortest axes. */
+function toReference({ identified, group, metric }: Crystal): Transformation {
+  if (identified.summary.settingName !== "unconventional") return identified.toReference;
+  const P = multiplyRatMat(group.primitive, ratMat3(niggliReduction(axesOf(metric, group.primitive))));
+  const primitive: Transformation = { P, p: { n: [0, 0, 0], d: 1 } };
+  return chain(primitive, preferredReference(axesOf(metric, P), inCell(group.operations, primitive)).transformation);
+}
+
+function standardised(crystal: Crystal, eitherHand: boolean): Resited {
+  const result = standardisedCrystal(crystal, { eitherHand });
+  const answer = answerOf(crystal, result.crystal, result.transformation, result.shift, result.origins);
+  const standardisation = standardisationOf(result, eitherHand);
+  return { crystal: result.crystal, answer: { ...answer, standardisation }, notes: [] };
+}
+
+function standardisationOf({ description, mirrored }: StandardisedCrystal, eitherHand: boolean): StandardisationAnswer {
+  const { gamma, centre, tied, candidates } = description;
+  const { axes, shifts, origins, free, list } = candidates;
+  return {
+    gamma,
+    centre,
+    axes: axes.length,
+    shifts: shifts.length,
+    origins: origins.length,
+    free: free.map((i) => "abc"[i]!),
+    compared: list.length * origins.length,
+    tied,
+    hand: eitherHand ? "either" : "kept",
+    mirrored,
+  };
+}
+
+function answerOf(
+  given: Crystal,
+  crystal: Crystal,
+  { P, p }: Transformation,
+  shift: Vec3,
+  labels: readonly string[],
+): ResiteAnswer {
+  const exact = formatVector(p).split(",");
+  const origin = p.n.map((e, i) => e / p.d + shift[i]!) as unknown as Vec3;
+  return {
+    given: given.identified.summary,
+    spaceGroup: crystal.identified.summary,
+    P: formatBasis(P),
+    p: exact.map((text, i) => (shift[i] === 0 ? text : decimal(origin[i]!))).join(","),
+    origin,
+    cell: cellNumbers(crystal.metric.cell),
+    volume: crystal.metric.volume,
+    sites: sitesOf(crystal, labels),
+  };
+}
+
+/** Digits of an origin that no symmetry fixes: 1e-10 of an axis. */
+const DIGITS = 10;
+
+function decimal(x: number): string {
+  return String(Number(x.toFixed(DIGITS)) + 0);
+}
+
+function sitesOf(crystal: Crystal, labels: readonly string[]): ResitedSite[] {
+  return sitesAnswer(crystal).sites.map((site, i) => {
+    const { su, displacement } = crystal.sites[i]!;
+    const { label, element, occupancy, multiplicity, wyckoff, siteSymmetry, constraint, snapped } = site;
+    return {
+      label,
+      from: labels[i]!,
+      element,
+      occupancy,
+      multiplicity,
+      wyckoff,
+      siteSymmetry,
+      constraint,
+      position: snapped,
+      su,
+      displacement,
+    };
+  });
+}
