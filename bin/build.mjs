@@ -93,6 +93,7 @@ async function bundleCommandLine() {
     platform: "node",
     target: "node20",
     minify: true,
+    charset: "ascii", // bin/load-command.ts reads it so
     supported: { "dynamic-import": false }, // becomes require: import() would scan the whole command for its exports
     banner: { js: 'const importMetaUrl=require("node:url").pathToFileURL(__filename).href;' },
     keepNames: false,

@@ -18,7 +18,8 @@ export interface Command {
 export function loadCommand(name: string): Command {
   const file = join(dirname(fileURLToPath(import.meta.url)), "commands", `${name}.js`);
   const cachedData = compiledCode(file);
-  const script = new Script(Module.wrap(readFileSync(file, "utf8")), {
+  // A bundle is ASCII, which is read as Latin-1 without being decoded.
+  const script = new Script(Module.wrap(readFileSync(file, "latin1")), {
     filename: file,
     ...(cachedData ? { cachedData } : {}),
   });

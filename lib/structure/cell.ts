@@ -111,6 +111,18 @@ export function lengthOf(metric: Metric, v: Vec3): number {
   return Math.sqrt(Math.max(0, square));
 }
 
+/**
+ * How far two points within a distance (angstrom) of each other may differ in each coordinate: the distance over the
+ * spacings of the lattice planes x, y, z = 1. A last bit is added, so that rounding excludes no point.
+ */
+export function planeReach({ toFractional: m }: Metric, distance: number): Vec3 {
+  const along = (i: number) => Math.hypot(m[3 * i]!, m[3 * i + 1]!, m[3 * i + 2]!) * distance + ROUNDING;
+  return [along(0), along(1), along(2)];
+}
+
+/** Larger than what sums of a few products of coordinates lose in the last bit. */
+const ROUNDING = 1e-12;
+
 /** Cell of the axes with metric tensor g. */
 export function cellOfMetric(g: Mat3): Cell {
   const [a, b, c] = [Math.sqrt(g[0]), Math.sqrt(g[4]), Math.sqrt(g[8])] as const;

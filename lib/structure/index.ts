@@ -35,6 +35,7 @@ export {
   metricMisfit,
   metricOf,
   multiply3,
+  planeReach,
   type Vec3,
 } from "./cell.ts";
 export { AtomAction, type CellAtom, cellAtoms, type LatticeAtom } from "./cell-atoms.ts";
@@ -161,7 +162,7 @@ export {
 } from "./resite-answer.ts";
 export { cross3, dot3, length3, minus3, unit3 } from "./rotation-fit.ts";
 export { formatShellPattern, parseShellPattern, type ShellPattern } from "./shell-text.ts";
-export { type SiteSymmetry, siteSymmetry } from "./site-symmetry.ts";
+export { countNear, type SiteSymmetry, siteSymmetry } from "./site-symmetry.ts";
 export { type SiteAnswer, type SiteImage, type SitesAnswer, sitesAnswer } from "./sites-answer.ts";
 export { type DescribedSite, type StandardDescription, standardDescription } from "./standard-description.ts";
 export { type StandardisedCrystal, standardisedCrystal } from "./standardised-crystal.ts";

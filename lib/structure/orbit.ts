@@ -1,4 +1,4 @@
-import { compose, operationKey, reduce, type SpaceGroup, transformPoint } from "../symmetry/index.ts";
+import { productFinder, type SpaceGroup, transformPoint } from "../symmetry/index.ts";
 import type { Vec3 } from "./cell.ts";
 import type { SiteSymmetry } from "./site-symmetry.ts";
 
@@ -31,11 +31,12 @@ export function orbitOf(group: SpaceGroup, site: SiteSymmetry): Image[] {
     });
     return images;
   }
-  const done = new Set<string>();
+  const product = productFinder(group.operations);
+  const done = new Uint8Array(group.operations.length);
   group.operations.forEach((a, i) => {
-    if (done.has(operationKey(a))) return;
+    if (done[i]) return;
     images.push({ position: wrapPoint(transformPoint(a, site.point)), operation: i });
-    for (const s of site.operations) done.add(operationKey(reduce(compose(a, s))));
+    for (let k = 0; k < site.operations.length; k++) done[product(a, site.operations[k]!)] = 1;
   });
   return images;
 }

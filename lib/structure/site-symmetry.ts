@@ -9,15 +9,8 @@ import {
   ratMat3,
   ratVec3,
 } from "../algebra/index.ts";
-import {
-  compose,
-  IDENTITY_OPERATION,
-  type Operation,
-  type SpaceGroup,
-  siteOperations,
-  transformPoint,
-} from "../symmetry/index.ts";
-import { lengthOf, type Metric, type Vec3 } from "./cell.ts";
+import { compose, IDENTITY_OPERATION, type Operation, type SpaceGroup, siteOperations } from "../symmetry/index.ts";
+import { lengthOf, type Metric, planeReach, type Vec3 } from "./cell.ts";
 
 /** Largest order of a point group of a lattice in three dimensions. */
 const LARGEST_SITE_GROUP = 48;
@@ -65,11 +58,8 @@ export function siteSymmetry(
 
 /** Length of the longest beginning in which no rotation part comes twice: twice would mean a translation. */
 function longestWithoutTranslation(near: readonly NearOperation[]): number {
-  const seen = new Set<string>();
-  for (let i = 0; i < near.length; i++) {
-    const key = near[i]!.operation.W.join();
-    if (seen.has(key)) return i;
-    seen.add(key);
+  for (let i = 1; i < near.length; i++) {
+    for (let j = 0; j < i; j++) if (equal(near[i]!.operation.W, near[j]!.operation.W)) return i;
   }
   return near.length;
 }
@@ -88,18 +78,31 @@ interface NearOperation {
 
 function nearOperations(operations: readonly Operation[], metric: Metric, x: Vec3, tolerance: number): NearOperation[] {
   const near: NearOperation[] = [];
-  for (const a of operations) {
-    const image = transformPoint(a, x);
-    // Rounding finds the nearest lattice point only for short vectors; tolerances are short against a cell.
-    const t0 = Math.round(x[0] - image[0]) + 0;
-    const t1 = Math.round(x[1] - image[1]) + 0;
-    const t2 = Math.round(x[2] - image[2]) + 0;
-    const distance = lengthOf(metric, [image[0] + t0 - x[0], image[1] + t1 - x[1], image[2] + t2 - x[2]]);
+  const farthest = planeReach(metric, tolerance);
+  const t: [number, number, number] = [0, 0, 0];
+  const apart: [number, number, number] = [0, 0, 0];
+  for (let k = 0; k < operations.length; k++) {
+    const { W, w } = operations[k]!;
+    let i = 0;
+    for (; i < 3; i++) {
+      const image = W[3 * i]! * x[0] + W[3 * i + 1]! * x[1] + W[3 * i + 2]! * x[2] + w.n[i]! / w.d;
+      // Rounding finds the nearest lattice point only for short vectors; tolerances are short against a cell.
+      t[i] = Math.round(x[i]! - image) + 0;
+      apart[i] = image + t[i]! - x[i]!;
+      if (Math.abs(apart[i]!) > farthest[i]!) break; // most are told off by their first coordinate
+    }
+    if (i < 3) continue;
+    const distance = lengthOf(metric, apart);
     if (distance > tolerance) continue;
-    const { n, d } = a.w;
-    near.push({ operation: { W: a.W, w: { n: [n[0] + t0 * d, n[1] + t1 * d, n[2] + t2 * d], d } }, distance });
+    const n = [w.n[0] + t[0] * w.d, w.n[1] + t[1] * w.d, w.n[2] + t[2] * w.d] as const;
+    near.push({ operation: { W, w: { n, d: w.d } }, distance });
   }
   return near.sort((p, q) => p.distance - q.distance);
+}
+
+/** The number of operations whose image of a point lies within a distance of it, angstrom; the identity is one. */
+export function countNear(operations: readonly Operation[], metric: Metric, x: Vec3, distance: number): number {
+  return nearOperations(operations, metric, x, distance).length;
 }
 
 /**
@@ -109,7 +112,9 @@ function nearOperations(operations: readonly Operation[], metric: Metric, x: Vec
 function closeAround(given: readonly Operation[]): Operation[] | null {
   const members: Operation[] = [];
   const insert = (a: Operation): "known" | "new" | "impossible" => {
-    for (const b of members) if (equal(a.W, b.W)) return equalVectors(a.w, b.w) ? "known" : "impossible";
+    for (let i = 0; i < members.length; i++) {
+      if (equal(a.W, members[i]!.W)) return equalVectors(a.w, members[i]!.w) ? "known" : "impossible";
+    }
     if (members.length >= LARGEST_SITE_GROUP) return "impossible";
     members.push(a);
     return "new";

@@ -20,6 +20,7 @@ import {
 } from "../algebra/index.ts";
 import { type AffineExpression, formatExpression, parseTriplet } from "./affine-text.ts";
 import type { Operation } from "./operation.ts";
+import { plainTriplet } from "./plain-operation.ts";
 import type { Transformation } from "./transformation.ts";
 
 /**
@@ -33,6 +34,8 @@ export interface AffineForm {
 
 /** Reads `x,2x,z`, `1/8,y,-y+1/4`. @throws InputProblem `triplet-unreadable` */
 export function parseForm(text: string): AffineForm {
+  const plain = plainTriplet(text);
+  if (plain) return { M: { n: plain.W, d: 1 }, t: plain.w };
   const rows = parseTriplet(text, "xyz");
   const entries = rows.flatMap((r) => r.coefficients);
   const d = entries.reduce((m, e) => lcm(m, e.d), 1);
@@ -72,12 +75,15 @@ export function formFromSetting(form: AffineForm, { P, p }: Transformation): Aff
 /** Whether an operation, after some lattice translation of the cell, fixes every point. */
 export function isFixedBy(a: Operation, form: AffineForm): boolean {
   const { M, t } = form;
-  const linear = multiply(a.W, M.n);
-  for (let i = 0; i < 9; i++) if (linear[i] !== M.n[i]) return false;
-  const moved = apply(a.W, t.n);
-  const d = lcm(t.d, a.w.d);
+  const { W, w } = a;
+  const d = lcm(t.d, w.d);
   for (let i = 0; i < 3; i++) {
-    if (((moved[i]! - t.n[i]!) * (d / t.d) + a.w.n[i]! * (d / a.w.d)) % d !== 0) return false;
+    const [p, q, r] = [W[3 * i]!, W[3 * i + 1]!, W[3 * i + 2]!];
+    for (let j = 0; j < 3; j++) {
+      if (p * M.n[j]! + q * M.n[j + 3]! + r * M.n[j + 6]! !== M.n[3 * i + j]) return false;
+    }
+    const moved = p * t.n[0] + q * t.n[1] + r * t.n[2] - t.n[i]!;
+    if ((moved * (d / t.d) + w.n[i]! * (d / w.d)) % d !== 0) return false;
   }
   return true;
 }

@@ -59,6 +59,7 @@ export {
   pointsOfPosition,
   positionsInCell,
 } from "./position-points.ts";
+export { type ProductFinder, productFinder } from "./product-finder.ts";
 export { coordinatesIn } from "./reciprocal-strata.ts";
 export {
   independentConditions,

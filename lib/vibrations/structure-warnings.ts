@@ -2,6 +2,7 @@ import {
   type Crystal,
   cellContents,
   chooseComponents,
+  countNear,
   type Formula,
   POSITION_TOLERANCE,
   searchSymmetry,
@@ -104,8 +105,10 @@ function positionWarnings(crystal: Crystal): string[] {
   if (wide <= tolerance) return [];
   const near = crystal.sites.flatMap((s) => {
     if (s.occupancy < FULL || s.sharesPositionOf !== null) return [];
+    const kept = s.symmetry.operations.length;
+    if (countNear(group.operations, metric, s.position, wide) <= kept) return [];
     const wider = siteSymmetry(group.operations, metric, s.position, wide);
-    if (wider.operations.length <= s.symmetry.operations.length) return [];
+    if (wider.operations.length <= kept) return [];
     const { siteSymmetry: symbol, letter } = assignWyckoff(identified, wider.operations);
     return [`${s.label} ${wider.shift.toFixed(3)} A from ${symbol} (${letter})`];
   });
