@@ -11,6 +11,8 @@ export interface Source {
   readonly file: string;
   readonly text: string;
   readonly document: CifDocument;
+  /** What was wrong with the encoding or syntax and was read around. */
+  readonly problems: readonly InputProblem[];
 }
 
 /** Most syntax errors of one file that are shown; the rest is counted. */
@@ -32,16 +34,31 @@ export function blaming<T>(source: Source, work: () => T): T {
  * @throws LocatedProblem if the file cannot be read, or has an error and --strict is set
  */
 export async function readSource(file: string, args: Arguments): Promise<Source> {
+  const source = await loadSource(file, args);
+  tellProblems(source);
+  return source;
+}
+
+/** The same, for a command that has its own way of telling what is wrong with the text. */
+export async function loadSource(file: string, args: Arguments): Promise<Source> {
   const { text, encoding } = decodeCif(await bytesOf(file));
   const name = file === "-" ? "standard input" : file;
-  if (encoding === "latin-1") tell(`${name}: not UTF-8; read as Latin-1`);
   const { value, problems } = readCif(text);
   if (problems.length > 0 && args.flag("strict")) {
     throw new LocatedProblem(problemText(problems[0]!, name, text));
   }
-  for (const problem of problems.slice(0, SHOWN_PROBLEMS)) tell(problemText(problem, name, text));
-  if (problems.length > SHOWN_PROBLEMS) tell(`${name}: ${problems.length - SHOWN_PROBLEMS} more syntax errors`);
-  return { file: name, text, document: value };
+  const all = encoding === "latin-1" ? [notUtf8(), ...problems] : problems;
+  return { file: name, text, document: value, problems: all };
+}
+
+function notUtf8(): InputProblem {
+  return new InputProblem("encoding", "not UTF-8; read as Latin-1", null, "Save the file as UTF-8.");
+}
+
+/** The first faults of a text on standard error, the rest counted. */
+export function tellProblems({ file, text, problems }: Source): void {
+  for (const problem of problems.slice(0, SHOWN_PROBLEMS)) tell(problemText(problem, file, text));
+  if (problems.length > SHOWN_PROBLEMS) tell(`${file}: ${problems.length - SHOWN_PROBLEMS} more syntax errors`);
 }
 
 /** @throws LocatedProblem if the file cannot be read; `-` is standard input */

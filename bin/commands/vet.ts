@@ -1,9 +1,9 @@
-import { allCriteria, criterionOf, vetAnswer } from "../../lib/audit/index.ts";
+import { allCriteria, criterionOf, problemsByBlock, vetAnswer } from "../../lib/audit/index.ts";
 import { criteriaText, criterionText, type VettedBlock, vetTable, vetText } from "../../lib/report/index.ts";
 import { POSITION_TOLERANCE } from "../../lib/structure/index.ts";
 import { type Arguments, COMMON_OPTIONS, type CommandSpec, parseArguments } from "../arguments.ts";
 import { EXAMPLE } from "../examples/vet.ts";
-import { blaming, readSource, type Source } from "../input.ts";
+import { blaming, loadSource, type Source, tellProblems } from "../input.ts";
 import { deliver, type Heading, jsonDocument } from "../output.ts";
 import { LocatedProblem, UsageProblem } from "../problems.ts";
 import { structureBlocks } from "../structure-blocks.ts";
@@ -40,10 +40,13 @@ export async function run(words: readonly string[]): Promise<number> {
 async function vetFile(file: string, args: Arguments, tolerance: number): Promise<VettedBlock[]> {
   let source: Source;
   try {
-    source = await readSource(file, args);
+    source = await loadSource(file, args);
+    if (source.document.blocks.length === 0) tellProblems(source);
     const blocks = structureBlocks(source, args);
+    const dealt = args.text("block") === null ? blocks : source.document.blocks;
+    const problems = problemsByBlock(source.problems, dealt);
     return blocks.map((block) => {
-      const answer = blaming(source, () => vetAnswer(block, tolerance));
+      const answer = blaming(source, () => vetAnswer(block, tolerance, problems[dealt.indexOf(block)]));
       return { file: source.file, block: block.name, answer, problem: null };
     });
   } catch (e) {

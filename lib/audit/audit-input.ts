@@ -36,6 +36,8 @@ export interface AuditInput {
   readonly crystal: Crystal | null;
   /** Faults that kept a part from being read. */
   readonly obstacles: readonly InputProblem[];
+  /** Faults of syntax that the reader got over, in the order of the text. */
+  readonly syntaxProblems: readonly InputProblem[];
   /** Positions closer than this are one; angstrom. */
   readonly tolerance: number;
   /** Place of a span under a data name. */
@@ -43,7 +45,11 @@ export interface AuditInput {
 }
 
 /** Reads a block as far as it goes; never throws for faults of the file. @throws InputProblem `tolerance-impossible` */
-export function auditInput(block: CifBlock, tolerance: number = POSITION_TOLERANCE): AuditInput {
+export function auditInput(
+  block: CifBlock,
+  tolerance: number = POSITION_TOLERANCE,
+  syntaxProblems: readonly InputProblem[] = [],
+): AuditInput {
   checkedTolerance(tolerance);
   const obstacles: InputProblem[] = [];
   const attempt = <T>(work: () => T): T | null => {
@@ -67,7 +73,8 @@ export function auditInput(block: CifBlock, tolerance: number = POSITION_TOLERAN
     return attempt(() => crystalOf({ ...parts, symmetrySource: source, disagreements }));
   };
   const crystal = whole ?? (metric && symmetry && atoms.length > 0 ? rebuilt(metric, symmetry) : null);
-  return { block, metric, declared, symmetry, atoms, crystal, obstacles, tolerance, place: placer(block.source) };
+  const place = placer(block.source);
+  return { block, metric, declared, symmetry, atoms, crystal, obstacles, syntaxProblems, tolerance, place };
 }
 
 function symmetrySource({ symmetrySource: source }: Crystal): ResolvedSymmetry["source"] {

@@ -25,6 +25,7 @@ import * as siteSymmetry from "./site-symmetry.ts";
 import * as specialPositions from "./special-positions.ts";
 import * as symmetryOperations from "./symmetry-operations.ts";
 import * as symmetryStatements from "./symmetry-statements.ts";
+import * as syntax from "./syntax.ts";
 import * as uncertainties from "./uncertainties.ts";
 import * as wyckoffLetters from "./wyckoff-letters.ts";
 
@@ -36,6 +37,7 @@ export interface Check {
 
 /** Every check, in the order of the findings. A new check is a file of its own and one line here. */
 export const CHECKS: readonly Check[] = [
+  syntax,
   symmetryOperations,
   symmetryStatements,
   cellShape,

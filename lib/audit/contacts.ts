@@ -1,10 +1,19 @@
-import { type Crystal, type CrystalSite, cellAtoms, contactsWithin, isHydrogen } from "../structure/index.ts";
+import {
+  bondClasses,
+  type Crystal,
+  type CrystalSite,
+  cellAtoms,
+  contactsWithin,
+  isHydrogen,
+} from "../structure/index.ts";
 import type { AuditInput } from "./audit-input.ts";
 import { type Criterion, type Finding, finding, some } from "./finding.ts";
 import { mayMeet, NEAR_REACH, nearAtoms } from "./near-atoms.ts";
 
-/** Share of the sum of covalent radii below which no two atoms come; triple bonds reach 0.78, short metal pairs 0.7. */
+/** Share of the sum of covalent radii below which no two atoms come; short pairs of metals reach 0.7. */
 const CLOSEST_SHARE = 0.65;
+/** The same for two non-metals: their shortest bonds, triple ones, reach 0.77; libration takes off some hundredths. */
+const NON_METAL_SHARE = 0.72;
 /** The same where one atom is hydrogen, whose X-ray positions lie up to 0.15 Å too near. */
 const HYDROGEN_SHARE = 0.7;
 /** Two hydrogen atoms; those of water are 1.5 apart; angstrom. */
@@ -17,7 +26,8 @@ const TOO_CLOSE: Criterion = {
   severity: "doubt",
   criterion:
     "Two atoms that may be there at the same time (not alternatives of a disorder, occupancies adding up to more than 1) are " +
-    `nearer than ${CLOSEST_SHARE} of the sum of their covalent radii, ${HYDROGEN_SHARE} with hydrogen, ${HYDROGEN_PAIR} Å between two hydrogen atoms.`,
+    `nearer than ${CLOSEST_SHARE} of the sum of their covalent radii, ${NON_METAL_SHARE} for two non-metals, ` +
+    `${HYDROGEN_SHARE} with hydrogen, ${HYDROGEN_PAIR} Å between two hydrogen atoms.`,
   source: "Covalent radii of B. Cordero et al., Dalton Transactions (2008) 2832-2838; limits chosen here.",
   advice: "Look for a wrong coordinate, cell length, element or operation, or an occupancy that is missing.",
 };
@@ -54,7 +64,10 @@ export function check(input: AuditInput): Finding[] {
 function closest(a: CrystalSite, b: CrystalSite, distance: number, share: number): number {
   const [h, k] = [isHydrogen(a.element), isHydrogen(b.element)];
   if (h && k) return HYDROGEN_PAIR;
-  return ((h || k ? HYDROGEN_SHARE : CLOSEST_SHARE) * distance) / share;
+  const { nonMetal } = bondClasses();
+  const nonMetals = nonMetal.has(a.element ?? "") && nonMetal.has(b.element ?? "");
+  const least = h || k ? HYDROGEN_SHARE : nonMetals ? NON_METAL_SHARE : CLOSEST_SHARE;
+  return (least * distance) / share;
 }
 
 function tooClose(input: AuditInput, crystal: Crystal): Finding[] {

@@ -19,4 +19,5 @@ export type { TranslationTest } from "./lattice-centring.ts";
 export { ASSUMED_SIGMA } from "./observations.ts";
 export type { Quantity, Reflection, ReflectionList } from "./reflection-list.ts";
 export { readReflectionText, type TextReflections } from "./reflection-text.ts";
+export { problemsByBlock } from "./syntax.ts";
 export { allCriteria, criterionOf, type VetAnswer, vetAnswer } from "./vet-answer.ts";

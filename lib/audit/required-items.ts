@@ -46,9 +46,9 @@ const ATOMS: Criterion = {
 const FORMULA: Criterion = {
   id: "formula-missing",
   severity: "remark",
-  criterion: "The block gives no sum formula, or one but no number of formula units.",
+  criterion: "The block gives no sum formula, no number of formula units, or neither.",
   source: "IUCr core CIF dictionary, _chemical_formula.sum and _cell.formula_units_Z.",
-  advice: "Add both; without them the contents of the cell cannot be compared with anything.",
+  advice: "Add what is missing; without formula and Z the contents of the cell cannot be compared with anything.",
 };
 
 const NUMBER: Criterion = {
@@ -165,12 +165,16 @@ function withoutFormula(input: AuditInput): Finding[] {
   const formula = statedText(input, "_chemical_formula.sum");
   const z = numbOf(findValue(input.block, "_cell.formula_units_Z")?.value ?? null);
   if (formula && z) return [];
-  const missing = formula ? "number of formula units Z" : "sum formula";
-  const name = formula ? "_cell_formula_units_Z" : "_chemical_formula_sum";
-  return [
-    finding(FORMULA, input.place(name, null), `the block gives no ${missing}`, {
-      stated: { what: name, value: "absent" },
-      against: { what: "atoms listed", value: input.atoms.length },
-    }),
+  const lacking = [
+    ...(formula ? [] : [{ name: "_chemical_formula_sum", what: "sum formula" }]),
+    ...(z ? [] : [{ name: "_cell_formula_units_Z", what: "number of formula units Z" }]),
   ];
+  const names = lacking.map((l) => l.name);
+  const message = `the block gives no ${lacking.map((l) => l.what).join(" and no ")}`;
+  const found = finding(FORMULA, input.place(names[0]!, null), message, {
+    stated: { what: names.join(" and "), value: "absent" },
+    against: { what: "atoms listed", value: input.atoms.length },
+  });
+  const why = "without formula and Z the contents of the cell cannot be compared with anything.";
+  return [{ ...found, advice: `Add ${names.join(" and ")}; ${why}` }];
 }

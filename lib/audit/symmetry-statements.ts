@@ -64,8 +64,23 @@ export const criteria: readonly Criterion[] = [NAME, NAME_SETTING, NUMBER, HALL,
 /** Do operations, Hall symbol, name, number and crystal system mean the same group? */
 export function check(input: AuditInput): Finding[] {
   const { symmetry } = input;
-  if (!symmetry) return [];
+  if (!symmetry) return unreadable(input);
   return [...symmetry.disagreements.map((d) => disagreement(input, d)), ...system(input)];
+}
+
+/** Without a group in use nothing can be compared; the statement that could not be read is what to correct. */
+function unreadable({ declared, obstacles, place }: AuditInput): Finding[] {
+  const statements = [declared.hall, declared.hermannMauguin, declared.schoenflies, declared.number];
+  return obstacles.flatMap(({ message, span }) => {
+    const said = statements.find((s) => s && span && s.span.start === span.start);
+    if (!said) return [];
+    return [
+      finding(UNREADABLE, place(said.name, said.span), message, {
+        stated: { what: said.name, value: said.text },
+        against: { what: "needed", value: "a symbol, name or number of one of the 230 types" },
+      }),
+    ];
+  });
 }
 
 function criterionFor({ kind, level }: SymmetryDisagreement): Criterion {

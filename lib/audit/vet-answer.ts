@@ -1,4 +1,5 @@
 import type { CifBlock } from "../cif/index.ts";
+import type { InputProblem } from "../problem.ts";
 import { POSITION_TOLERANCE } from "../structure/index.ts";
 import { auditInput } from "./audit-input.ts";
 import { CHECKS } from "./checks.ts";
@@ -17,10 +18,15 @@ const ORDER: readonly Severity[] = ["contradiction", "doubt", "remark"];
  * Compares the statements of a block with each other and with what is physically likely. Faults of the file never
  * throw: they are findings, or leave a question unasked.
  * @param tolerance positions closer than this are one position; angstrom
+ * @param syntaxProblems what the reader of the text got over in this block; they become findings
  * @throws InputProblem `tolerance-impossible`
  */
-export function vetAnswer(block: CifBlock, tolerance: number = POSITION_TOLERANCE): VetAnswer {
-  const input = auditInput(block, tolerance);
+export function vetAnswer(
+  block: CifBlock,
+  tolerance: number = POSITION_TOLERANCE,
+  syntaxProblems: readonly InputProblem[] = [],
+): VetAnswer {
+  const input = auditInput(block, tolerance, syntaxProblems);
   const found = CHECKS.flatMap(({ check }) => check(input));
   const findings = ORDER.flatMap((severity) => found.filter((f) => f.severity === severity));
   const number = (severity: Severity) => findings.filter((f) => f.severity === severity).length;
