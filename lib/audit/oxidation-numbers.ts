@@ -1,5 +1,5 @@
-import { findLoop } from "../cif/index.ts";
-import { type AuditInput, rowNumber, rowText } from "./audit-input.ts";
+import { oxidationStates } from "../structure/index.ts";
+import type { AuditInput } from "./audit-input.ts";
 import { type Criterion, type Finding, finding } from "./finding.ts";
 import { formulasInCell, statedComposition, surplus } from "./stated-composition.ts";
 
@@ -19,21 +19,9 @@ const CHARGE: Criterion = {
 
 export const criteria: readonly Criterion[] = [CHARGE];
 
-/** Stated oxidation numbers by label of the site: from the list of atom types, else from the type symbol. */
+/** Stated oxidation numbers by label of the site. */
 export function oxidationNumbers(input: AuditInput): ReadonlyMap<string, number> {
-  const loop = findLoop(input.block, "_atom_type.symbol");
-  const byType = new Map<string, number>();
-  for (let row = 0; loop && row < loop.rowCount; row++) {
-    const symbol = rowText(loop, row, "_atom_type.symbol")?.text;
-    const value = rowNumber(loop, row, "_atom_type.oxidation_number");
-    if (symbol && value) byType.set(symbol, value.value);
-  }
-  const found = new Map<string, number>();
-  for (const { label, typeSymbol, charge } of input.atoms) {
-    const value = byType.get(typeSymbol ?? "") ?? charge;
-    if (value !== null) found.set(label, value);
-  }
-  return found;
+  return oxidationStates(input.block, input.atoms);
 }
 
 /** Do the stated charges cancel? */

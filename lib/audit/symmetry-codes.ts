@@ -1,14 +1,8 @@
-import type { IntMat3 } from "../algebra/index.ts";
-import { findLoop } from "../cif/index.ts";
-import type { Vec3 } from "../structure/index.ts";
-import { parseTriplet } from "../symmetry/index.ts";
-import { type AuditInput, rowText, type StatedText } from "./audit-input.ts";
+import { type Vec3, type WrittenOperation, writtenOperations } from "../structure/index.ts";
+import type { AuditInput, StatedText } from "./audit-input.ts";
 
 /** An image of a site as a symmetry code names it: x' = W x + t, whole cells included. */
-export interface CodedImage {
-  readonly W: IntMat3;
-  readonly t: Vec3;
-}
+export type CodedImage = WrittenOperation;
 
 /** What a code means: an image; an operation that is not listed; or nothing that can be read. */
 export type CodeReading =
@@ -24,7 +18,7 @@ const IDENTITY: CodedImage = { W: [1, 0, 0, 0, 1, 0, 0, 0, 1], t: [0, 0, 0] };
  * Source: IUCr core CIF dictionary, _geom_bond.site_symmetry_1.
  */
 export function codeReader(input: AuditInput): (code: StatedText | null) => CodeReading {
-  const operations = operationsById(input);
+  const operations = writtenOperations(input.block, input.declared.operations);
   return (code) => {
     if (code === null) return { kind: "image", image: IDENTITY };
     const parts = /^(\d+)(?:_(\d)(\d)(\d))?$/.exec(code.text);
@@ -39,22 +33,6 @@ export function codeReader(input: AuditInput): (code: StatedText | null) => Code
     const t = found.t.map((e, i) => e + cells[i]!) as unknown as Vec3;
     return { kind: "image", image: { W: found.W, t } };
   };
-}
-
-/** Operations by their id; null for lines that could not be read. */
-function operationsById(input: AuditInput): Map<string, CodedImage | null> {
-  const { operations } = input.declared;
-  const loop = findLoop(input.block, "_space_group_symop.operation_xyz");
-  const found = new Map<string, CodedImage | null>();
-  operations.forEach(({ operation, text }, i) => {
-    const id = loop ? (rowText(loop, i, "_space_group_symop.id")?.text ?? null) : null;
-    found.set(id ?? String(i + 1), operation && { W: operation.W, t: constantsOf(text) });
-  });
-  return found;
-}
-
-function constantsOf(text: string): Vec3 {
-  return parseTriplet(text, "xyz").map(({ constant: { n, d } }) => n / d) as unknown as Vec3;
 }
 
 /** Image of a point. */

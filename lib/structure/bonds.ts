@@ -40,6 +40,27 @@ export function bondsOf(crystal: Crystal, options: BondOptions = {}): BondList {
   const siteOf = (atom: number) => crystal.sites[atoms[atom]!.site]!;
   const together = withinOneCopy(crystal, atoms);
   const excluded = (c: Contact) => excludeEachOther(siteOf(c.first), siteOf(c.second), c.distance) || !together(c);
+  const { table, bonds, centred } = judgedBonds(crystal, atoms, overrides, excluded);
+  const notes = [...components.notes];
+  if (components.contested.length > 0) {
+    const contested = components.contested.map((i) => crystal.sites[i]!.label).join(", ");
+    notes.push(`images of a partly occupied site exclude each other, and symmetry keeps them all: ${contested}`);
+  }
+  const labels = [...new Set(centred.map((atom) => siteOf(atom).label))];
+  if (labels.length > 0) notes.push(`hydrogen centred between two atoms is bonded to neither: ${labels.join(", ")}`);
+  return { atoms, bonds, choice: summariseBonds(crystal, table), notes, compared: table.compared };
+}
+
+/**
+ * The bonds among given atoms, alternatives of a disorder included.
+ * @param excluded contacts of atoms that are never there at the same time
+ */
+export function judgedBonds(
+  crystal: Crystal,
+  atoms: readonly CellAtom[],
+  overrides: BondOverrides,
+  excluded: (contact: Contact) => boolean,
+): { table: ContactTable; bonds: Bond[]; centred: number[] } {
   const table = new ContactTable(crystal, atoms, overrides.limits(), excluded);
   applyElementRules(table);
   const centred = applyHydrogenRule(table);
@@ -50,12 +71,5 @@ export function bondsOf(crystal: Crystal, options: BondOptions = {}): BondList {
     const rule = table.rules[k];
     if (rule) bonds.push({ ...contact, rule });
   });
-  const notes = [...components.notes];
-  if (components.contested.length > 0) {
-    const contested = components.contested.map((i) => crystal.sites[i]!.label).join(", ");
-    notes.push(`images of a partly occupied site exclude each other, and symmetry keeps them all: ${contested}`);
-  }
-  const labels = [...new Set(centred.map((atom) => siteOf(atom).label))];
-  if (labels.length > 0) notes.push(`hydrogen centred between two atoms is bonded to neither: ${labels.join(", ")}`);
-  return { atoms, bonds, choice: summariseBonds(crystal, table), notes, compared: table.compared };
+  return { table, bonds, centred };
 }

@@ -19,7 +19,7 @@ export interface ShellAtom extends LatticeAtom {
 }
 
 /** A neighbour with what decides whether it belongs to the first shell. */
-interface Candidate extends ShellAtom {
+export interface ShellCandidate extends ShellAtom {
   readonly element: string | null;
   readonly place: Vec3;
   /** Distance over the sum of the covalent radii. */
@@ -40,9 +40,26 @@ export function coordinationShell(
   contacts: readonly Contact[],
   below: number | null,
 ): ShellAtom[] {
+  const direct = shellCandidates(crystal, metric, atoms, centre, neighboursOf(centre, contacts));
+  const shell = below === null ? direct.slice(0, endOfShell(direct)) : direct.filter((c) => c.distance < below);
+  return shell.map(({ atom, shift, distance }) => ({ atom, shift, distance }));
+}
+
+/**
+ * What may belong to the first shell of an atom, nearest first in sums of covalent radii: non-metals only, if the nearest
+ * is one, and none that is bonded to a nearer candidate.
+ * @param near all atoms around it within SHELL_REACH
+ */
+export function shellCandidates(
+  crystal: Crystal,
+  metric: Metric,
+  atoms: readonly CellAtom[],
+  centre: number,
+  near: readonly ShellAtom[],
+): ShellCandidate[] {
   const own = crystal.sites[atoms[centre]!.site]!.element;
-  const around = neighboursOf(centre, contacts)
-    .map((n): Candidate => {
+  const around = near
+    .map((n): ShellCandidate => {
       const { element } = crystal.sites[atoms[n.atom]!.site]!;
       const position = atoms[n.atom]!.position.map((e, i) => e + n.shift[i]!) as unknown as Vec3;
       const sum = radiusSum(own, element);
@@ -50,11 +67,8 @@ export function coordinationShell(
     })
     .sort((a, b) => a.share - b.share);
   const { nonMetal } = bondClasses();
-  const isNonMetal = (c: Candidate) => c.element !== null && nonMetal.has(c.element);
-  const ligands = around[0] && isNonMetal(around[0]) ? around.filter(isNonMetal) : around;
-  const direct = withoutThoseBehind(ligands);
-  const shell = below === null ? direct.slice(0, endOfShell(direct)) : direct.filter((c) => c.distance < below);
-  return shell.map(({ atom, shift, distance }) => ({ atom, shift, distance }));
+  const isNonMetal = (c: ShellCandidate) => c.element !== null && nonMetal.has(c.element);
+  return withoutThoseBehind(around[0] && isNonMetal(around[0]) ? around.filter(isNonMetal) : around);
 }
 
 function neighboursOf(centre: number, contacts: readonly Contact[]): ShellAtom[] {
@@ -65,8 +79,8 @@ function neighboursOf(centre: number, contacts: readonly Contact[]): ShellAtom[]
   });
 }
 
-function withoutThoseBehind(ligands: readonly Candidate[]): Candidate[] {
-  const direct: Candidate[] = [];
+function withoutThoseBehind(ligands: readonly ShellCandidate[]): ShellCandidate[] {
+  const direct: ShellCandidate[] = [];
   for (const far of [...ligands].sort((a, b) => a.distance - b.distance)) {
     const isBehind = direct.some((near) => {
       const sum = radiusSum(near.element, far.element);
@@ -79,7 +93,7 @@ function withoutThoseBehind(ligands: readonly Candidate[]): Candidate[] {
 }
 
 /** How many candidates stand before the widest gap; what lies beyond SHELL_REACH is unknown. */
-function endOfShell(candidates: readonly Candidate[]): number {
+export function endOfShell(candidates: readonly ShellCandidate[]): number {
   let end = 0;
   let widest = 0;
   candidates.forEach(({ share }, k) => {

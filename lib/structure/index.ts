@@ -133,6 +133,7 @@ export {
   orderedConfigurations,
 } from "./ordered-configurations.ts";
 export { type OrderedModel, orderedModel } from "./ordered-model.ts";
+export { oxidationStates } from "./oxidation-states.ts";
 export { nearestDistance, PeriodicPoints } from "./periodic-points.ts";
 export { type PointsAnswer, type PointsQuestion, pointsAnswer } from "./points-answer.ts";
 export {
@@ -186,3 +187,4 @@ export {
   searchSymmetry,
 } from "./symmetry-search.ts";
 export { type AtomGroup, hillFormula, sequenceFormula, unitFormula } from "./unit-formula.ts";
+export { type WrittenOperation, writtenOperations } from "./written-operations.ts";

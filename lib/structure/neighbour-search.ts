@@ -51,6 +51,41 @@ export function contactsWithin(
   return { contacts, compared };
 }
 
+/** An atom near another, moved by whole cells from where it was given. */
+export interface NearAtom {
+  readonly atom: number;
+  readonly shift: readonly [number, number, number];
+  /** angstrom */
+  readonly distance: number;
+}
+
+/**
+ * All atoms around chosen ones nearer than a limit, nearest first. Linear in the number of centres at given density.
+ * @param points fractional coordinates, anywhere
+ * @param centres indices of points
+ * @param reach largest distance wanted, angstrom
+ * @param limit largest distance wanted for a centre and another point, at most `reach`; angstrom
+ */
+export function atomsAround(
+  metric: Metric,
+  points: readonly Vec3[],
+  centres: readonly number[],
+  reach: number,
+  limit: (centre: number, other: number) => number = () => reach,
+): NearAtom[][] {
+  const grid = new BoxGrid(metric, points, reach);
+  return centres.map((centre) => {
+    const near: NearAtom[] = [];
+    grid.around(centre, (_, atom, t) => {
+      if (atom === centre && t[0] === 0 && t[1] === 0 && t[2] === 0) return;
+      const distance = grid.distance(centre, atom, t);
+      if (distance > reach || distance > limit(centre, atom)) return;
+      near.push({ atom, shift: grid.unwrapped(centre, atom, t), distance });
+    });
+    return near.sort((a, b) => a.distance - b.distance);
+  });
+}
+
 /** Of a translation and its opposite, one is forward; the null translation is not. */
 function isForward(t: readonly [number, number, number]): boolean {
   return t[0] > 0 || (t[0] === 0 && (t[1] > 0 || (t[1] === 0 && t[2] > 0)));
