@@ -9,6 +9,7 @@ const COMMANDS: readonly string[] = [
   "group",
   "sites",
   "positions",
+  "compose",
   "modes",
   "split",
   "polarise",

@@ -1,5 +1,7 @@
 /** Results as text. Takes finished result objects; computes nothing. */
 export { absencesText } from "./absences-text.ts";
+export { composeText } from "./compose-text.ts";
+export { composedCif } from "./composed-cif.ts";
 export { configurationsText } from "./configurations-text.ts";
 export { type CorrelationLevels, correlationDiagram, correlationLevels } from "./correlation-diagram.ts";
 export { correlationSvg } from "./correlation-svg.ts";

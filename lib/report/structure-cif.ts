@@ -17,6 +17,8 @@ export interface CifHeading {
   /** Lines of comment: where the structure comes from. */
   readonly comment: string;
   readonly ending: string;
+  /** What else is known of the structure, written before the cell. */
+  readonly items?: readonly WritableItem[];
 }
 
 /** A structure as a CIF: cell, symmetry with all operations, sites, displacement parameters. */
@@ -25,6 +27,7 @@ export function structureCif(structure: ListedStructure, version: CifVersion, he
   const named = spaceGroup !== null && spaceGroup.settingName !== "unconventional";
   const items: WritableItem[] = [
     ...(heading.comment === "" ? [] : [{ kind: "comment", text: heading.comment } as const]),
+    ...(heading.items ?? []),
     ...CELL.map((part, i) => item(`_cell_${part}`, plain(cell[i]!, i < 3 ? 6 : 5))),
     item("_cell_volume", plain(volume, 4)),
     ...(spaceGroup === null ? [item("_space_group_name_H-M_alt", "P 1")] : []),
@@ -58,6 +61,7 @@ const COLUMNS: readonly SiteColumn[] = [
   })),
   { name: "occupancy", value: (s) => plain(s.occupancy, 6) },
   { name: "site_symmetry_multiplicity", value: (s) => String(s.multiplicity), wanted: (s) => s.wyckoff !== null },
+  { name: "site_symmetry_order", value: (s) => String(s.order), wanted: (s) => s.wyckoff !== null },
   {
     name: "Wyckoff_symbol",
     value: (s) => (s.wyckoff === "A" ? "alpha" : (s.wyckoff ?? UNKNOWN)),

@@ -52,6 +52,9 @@ export { type ChangedCell, changeOfCell, metricIn, multiplesOf } from "./change-
 export { chosenComponent, type DecidedCrystal, orderedCrystal } from "./chosen-component.ts";
 export type { SymmetryDisagreement } from "./compare-statements.ts";
 export { type CellOrigin, completedCell } from "./completed-cell.ts";
+export { type ComposeAnswer, type ComposeResult, composeAnswer, type HigherSymmetry } from "./compose-answer.ts";
+export { type ComposedContents, composedContents } from "./composed-contents.ts";
+export { composedCrystal } from "./composed-crystal.ts";
 export { cellContents, contentsMisfit } from "./composition.ts";
 export {
   type ConfigurationRow,
@@ -95,6 +98,7 @@ export {
   listedGroup,
   type SymmetrySource,
 } from "./declared-symmetry.ts";
+export { DALTON_PER_CUBIC_ANGSTROM, massOf } from "./density.ts";
 export type { Deviation } from "./deviation.ts";
 export { type ComponentChoice, chooseComponents } from "./disorder.ts";
 export type { DisplacementTensor } from "./displacement.ts";
@@ -163,7 +167,10 @@ export {
 } from "./resite-answer.ts";
 export { cross3, dot3, length3, minus3, unit3 } from "./rotation-fit.ts";
 export { formatShellPattern, parseShellPattern, type ShellPattern } from "./shell-text.ts";
+export { type NearPair, type ShortDistances, shortDistances } from "./shortest-distance.ts";
 export { countNear, type SiteSymmetry, siteSymmetry } from "./site-symmetry.ts";
+export type { MeasuredNumber, PositionParameters, SiteTable, TableCoordinate, TableSite } from "./site-table.ts";
+export { formatSiteTable, parseSiteTable } from "./site-table-text.ts";
 export { type SiteAnswer, type SiteImage, type SitesAnswer, sitesAnswer } from "./sites-answer.ts";
 export { type DescribedSite, type StandardDescription, standardDescription } from "./standard-description.ts";
 export { type StandardisedCrystal, standardisedCrystal } from "./standardised-crystal.ts";

@@ -15,6 +15,8 @@ export interface ListedSite extends Omit<AtomSite, "span"> {
   readonly multiplicity: number;
   /** Letter of the Wyckoff position, null where the list has no symmetry. */
   readonly wyckoff: string | null;
+  /** Order of the site-symmetry group; 1 where the list has no symmetry. */
+  readonly order: number;
 }
 
 /** A structure as an atom list with its symmetry: what a CIF holds. Plain data. */
@@ -51,8 +53,9 @@ export function listedStructure(model: AtomModel): ListedStructure {
         from: crystal.metric,
         to: metric,
       });
-      const multiplicity = isKept ? crystal.sites[site]!.images.length : 1;
-      row = { ...atom, multiplicity, wyckoff: letters[site] ?? null };
+      const { images, symmetry: own } = crystal.sites[site]!;
+      const multiplicity = isKept ? images.length : 1;
+      row = { ...atom, multiplicity, wyckoff: letters[site] ?? null, order: isKept ? own.operations.length : 1 };
       carried.set(key, row);
     }
     return { ...row, position, label: labels.claim(crystal.sites[site]!.label) };

@@ -17,6 +17,10 @@ const LINES = [
   "sites fixtures/calcite.cif",
   "sites fixtures/gypsum-i2a.cif",
   "sites fixtures/damaged/several-elements-on-one-site.cif",
+  'sites --group "P 63/m m c" --at 0.333,0.667,1/4 --orbit',
+  "compose fixtures/tables/dolomite.txt",
+  "compose fixtures/tables/spinel.txt",
+  'compose --group "P 21/c" --cell "4 5 6 90 100 90" --site "Xe 2a"',
   "positions fixtures/halite.cif",
   "positions fixtures/ammonium-chloride.cif",
   "positions fixtures/ammonium-chloride.cif --enumerate",
@@ -68,6 +72,12 @@ const PROMISED: Readonly<Record<string, readonly string[]>> = {
   ],
   "sites fixtures/calcite.cif": [
     "spaceGroup",
+    ...["label", "element", "occupancy", "multiplicity", "wyckoff", "siteSymmetry", "schoenflies"].map(ofSite),
+    ...["order", "position", "snapped", "shift", "constraint", "adp"].map(ofSite),
+  ],
+  "compose fixtures/tables/dolomite.txt": [
+    "spaceGroup",
+    "cell",
     ...["label", "element", "occupancy", "multiplicity", "wyckoff", "siteSymmetry", "schoenflies"].map(ofSite),
     ...["order", "position", "snapped", "shift", "constraint", "adp"].map(ofSite),
   ],

@@ -5,8 +5,8 @@ import { CORPUS, CORPUS_FILES } from "../support/corpus.ts";
 import { BuiltCommands } from "../support/run-built-command.ts";
 import { COMMANDS, type Outcome } from "../support/run-command.ts";
 
-/** Commands that take a file. */
-const ASKED = COMMANDS.filter((name) => name !== "point");
+/** Commands that take a CIF. */
+const ASKED = COMMANDS.filter((name) => name !== "point" && name !== "compose");
 
 /** Longest time for one command on one file, seconds: the slowest needs a tenth of it. */
 const LONGEST = 20;

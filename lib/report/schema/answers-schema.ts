@@ -4,7 +4,7 @@ import { groupSchema } from "./group.ts";
 import { modesSchema, patternsSchema, polariseSchema } from "./modes.ts";
 import { pointSchema } from "./point.ts";
 import { type JsonSchema, when } from "./shape.ts";
-import { positionsSchema, reduceSchema, sitesSchema, symmetriseSchema } from "./structure.ts";
+import { composeSchema, positionsSchema, reduceSchema, sitesSchema, symmetriseSchema } from "./structure.ts";
 import { splitSchema } from "./units.ts";
 import { vetSchema } from "./vet.ts";
 
@@ -17,6 +17,7 @@ export function answersSchema(): JsonSchema {
     group: groupSchema().schema,
     sites: sitesSchema().schema,
     positions: positionsSchema().schema,
+    compose: composeSchema().schema,
     modes: modesSchema().schema,
     split: splitSchema().schema,
     polarise: polariseSchema().schema,

@@ -1,4 +1,5 @@
 import type {
+  ComposeAnswer,
   ConfigurationRow,
   ConfigurationsAnswer,
   HigherGroup,
@@ -29,6 +30,7 @@ import {
   type Shape,
   text,
   textLike,
+  pair as twoOf,
 } from "./shape.ts";
 
 /** An answer about a crystal, as it is printed. */
@@ -74,6 +76,37 @@ function siteShape(): Shape<SiteAnswer> {
 
 export function sitesSchema(): Shape<CrystalDocument<SitesAnswer>> {
   return object<CrystalDocument<SitesAnswer>>({ ...crystalHeading("sites"), sites: list(siteShape()) });
+}
+
+export function composeSchema(): Shape<CrystalDocument<ComposeAnswer>> {
+  const contents = object<ComposeAnswer["contents"]>({
+    sum: text("of one formula unit, Hill order"),
+    formula: text("as chemists write it"),
+    z: count("formula units in the cell", 1),
+    weight: orNull(amount("of one formula unit, dalton"), "null where an element has no standard mass"),
+    density: orNull(amount("g cm^-3"), "null where an element has no standard mass"),
+  });
+  const pair = object<NonNullable<ComposeAnswer["shortest"]>>({
+    labels: twoOf(text()),
+    distance: amount("angstrom"),
+  });
+  const higher = object<NonNullable<ComposeAnswer["higher"]>>({
+    number: count("", 1),
+    hermannMauguin: text(),
+    index: number("how many times as many operations as the group named, by volume"),
+  });
+  return object<CrystalDocument<ComposeAnswer>>({
+    ...crystalHeading("compose"),
+    cell: cellNumbers(),
+    volume: amount("cubic angstrom"),
+    sites: list(siteShape()),
+    contents,
+    shortest: orNull(pair, "between atoms that can be there together"),
+    higher: orNull(
+      higher,
+      "symmetry that the sites have beyond the group; null if none, or not looked for in large cells",
+    ),
+  });
 }
 
 export function positionsSchema(): Shape<CrystalDocument<PositionsAnswer>> {
