@@ -68,25 +68,7 @@ export interface Arguments {
  * @throws UsageProblem for options that are unknown, lack a value, or have one that is no number
  */
 export function parseArguments(words: readonly string[], spec: CommandSpec): Arguments {
-  const names = Object.keys(spec.options);
-  const ofType = (types: readonly string[]) => names.filter((n) => types.includes(spec.options[n]!.type));
-  const alias = Object.fromEntries(
-    names.flatMap((n) => (spec.options[n]!.alias ? [[n, spec.options[n]!.alias!]] : [])),
-  );
-  const parsed = parser(withValues(words, spec), {
-    boolean: ofType(["boolean"]),
-    string: [...ofType(["string", "number"]), "_"],
-    alias,
-    configuration: {
-      "camel-case-expansion": false,
-      "dot-notation": false,
-      "parse-positional-numbers": false,
-      "short-option-groups": false,
-      "boolean-negation": false,
-    },
-  });
-  const known = new Set(["_", ...names, ...Object.values(alias)]);
-  for (const key of Object.keys(parsed)) if (!known.has(key)) throw unknownOption(key, names, spec);
+  const parsed: Parsed = words.some((word) => word.startsWith("-")) ? withOptions(words, spec) : { _: [...words] };
   const texts = (name: string): string[] => {
     const value: unknown = parsed[name];
     const list = value === undefined ? [] : Array.isArray(value) ? value : [value];
@@ -106,6 +88,34 @@ export function parseArguments(words: readonly string[], spec: CommandSpec): Arg
     return value;
   };
   return { operands: parsed._.map(String), text, texts, flag: (name) => parsed[name] === true, number };
+}
+
+interface Parsed {
+  readonly _: readonly (string | number)[];
+  readonly [option: string]: unknown;
+}
+
+function withOptions(words: readonly string[], spec: CommandSpec): Parsed {
+  const names = Object.keys(spec.options);
+  const ofType = (types: readonly string[]) => names.filter((n) => types.includes(spec.options[n]!.type));
+  const alias = Object.fromEntries(
+    names.flatMap((n) => (spec.options[n]!.alias ? [[n, spec.options[n]!.alias!]] : [])),
+  );
+  const parsed = parser(withValues(words, spec), {
+    boolean: ofType(["boolean"]),
+    string: [...ofType(["string", "number"]), "_"],
+    alias,
+    configuration: {
+      "camel-case-expansion": false,
+      "dot-notation": false,
+      "parse-positional-numbers": false,
+      "short-option-groups": false,
+      "boolean-negation": false,
+    },
+  });
+  const known = new Set(["_", ...names, ...Object.values(alias)]);
+  for (const key of Object.keys(parsed)) if (!known.has(key)) throw unknownOption(key, names, spec);
+  return parsed;
 }
 
 /** Values may begin with a minus, `--at -0.1,0,0`, which the parser would take for options. */

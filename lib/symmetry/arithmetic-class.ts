@@ -1,5 +1,6 @@
 import type { IntMat3, IntVec3 } from "../algebra/index.ts";
 import { type GeometricClass, geometricClassNames } from "./geometric-class.ts";
+import { plainTriplet } from "./plain-operation.ts";
 import { ARITHMETIC_CLASSES } from "./tables/arithmetic-classes.ts";
 
 /** A point group acting on a lattice, in the axes of the reference settings. */
@@ -89,12 +90,9 @@ function twelfths(digits: string): IntVec3 {
   return [...digits].map((c) => Number.parseInt(c, 12)) as unknown as IntVec3;
 }
 
-/** `-y,x-y,z` without translations; the general reader of operations is not needed for our own table. */
+/** `-y,x-y,z`: the rotation part alone. */
 function rotationFromText(text: string): IntMat3 {
-  const rows = text.split(",").map((row) => {
-    const entries = [0, 0, 0];
-    for (const [, sign, letter] of row.matchAll(/(-?)\+?([xyz])/g)) entries["xyz".indexOf(letter!)] = sign ? -1 : 1;
-    return entries;
-  });
-  return rows.flat() as unknown as IntMat3;
+  const plain = plainTriplet(text);
+  if (!plain) throw new RangeError(`the table of arithmetic classes has the rotation "${text}"`);
+  return plain.W;
 }

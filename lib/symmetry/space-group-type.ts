@@ -17,25 +17,36 @@ export interface SpaceGroupType {
   readonly choice: "" | "2" | "H";
 }
 
-let decoded: readonly SpaceGroupType[] | null = null;
+let lines: readonly string[] | null = null;
+const decoded: (SpaceGroupType | undefined)[] = [];
 
-/** The 230 types in the order of their numbers; decoded once, on first use. */
+/** The 230 types in the order of their numbers; each decoded once, on first use. */
 export function spaceGroupTypes(): readonly SpaceGroupType[] {
-  decoded ??= SPACE_GROUP_TYPES.trim()
-    .split("\n")
-    .map((line, i): SpaceGroupType => {
-      const [schoenflies = "", symbol = "", hall = "", full] = line.split("|");
-      const [hermannMauguin = "", choice = ""] = symbol.split(":");
-      return {
-        number: i + 1,
-        schoenflies,
-        hermannMauguin,
-        fullHermannMauguin: full ?? hermannMauguin,
-        hall,
-        choice: choice.toUpperCase() as SpaceGroupType["choice"],
-      };
-    });
-  return decoded;
+  return tableLines().map((_, i) => typeAt(i)!);
+}
+
+function tableLines(): readonly string[] {
+  lines ??= SPACE_GROUP_TYPES.trim().split("\n");
+  return lines;
+}
+
+function typeAt(index: number): SpaceGroupType | undefined {
+  const line = tableLines()[index];
+  if (line !== undefined) decoded[index] ??= decode(line, index + 1);
+  return decoded[index];
+}
+
+function decode(line: string, number: number): SpaceGroupType {
+  const [schoenflies = "", symbol = "", hall = "", full] = line.split("|");
+  const [hermannMauguin = "", choice = ""] = symbol.split(":");
+  return {
+    number,
+    schoenflies,
+    hermannMauguin,
+    fullHermannMauguin: full ?? hermannMauguin,
+    hall,
+    choice: choice.toUpperCase() as SpaceGroupType["choice"],
+  };
 }
 
 /**
@@ -43,7 +54,7 @@ export function spaceGroupTypes(): readonly SpaceGroupType[] {
  * @throws InputProblem `space-group-number` outside 1 to 230
  */
 export function spaceGroupType(number: number): SpaceGroupType {
-  const type = spaceGroupTypes()[number - 1];
+  const type = typeAt(number - 1);
   if (type) return type;
   throw new InputProblem(
     "space-group-number",
