@@ -7,7 +7,8 @@ export const EXAMPLE: CommandExample = {
 fixtures/calcite.cif, block calcite
 space group R -3 c (No. 167, D3d^6), reference setting
 ...
-bonds that make units: C-O 1.281 Å
+bonds that make units: C-O 1.281 Å (non-metals)
+short enough for bonds, but taken for ions: Ca-O 2.360 Å; --bond "Ca-O<2.37" counts them
 
 CO3 (carbonate), 2 in the primitive cell: C1 O1
   free unit D3h (atoms at most 0.000 Å from it, 0.25 Å allowed); site 32 (D3); factor group D3d
@@ -25,6 +26,7 @@ CO3 (carbonate), 2 in the primitive cell: C1 O1
 Γ(librations) = A₂g + Eg(R) + A₂u(IR) + Eu(IR)
 Γ(translations) = A₂g + Eg(R) + A₁u + 2A₂u(IR) + 3Eu(IR)
 Γ(acoustic) = A₂u(IR) + Eu(IR), part of the translations
+Γ(optic) = A₁g(R) + 3A₂g + 4Eg(R) + 2A₁u + 3A₂u(IR) + 5Eu(IR)
 Γ(total) = A₁g(R) + 3A₂g + 4Eg(R) + 2A₁u + 4A₂u(IR) + 6Eu(IR)
 (the sum over units was compared with the result atom by atom)
 `,

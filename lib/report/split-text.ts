@@ -1,4 +1,5 @@
 import type { InternalMode, SpeciesCounts, SplitAnswer, UnitAnswer } from "../vibrations/index.ts";
+import { bondLines } from "./bond-lines.ts";
 import { speciesContentText, unitContentText } from "./content-text.ts";
 import { correlationDiagram } from "./correlation-diagram.ts";
 import { formatNumber } from "./format-number.ts";
@@ -20,14 +21,9 @@ export function splitText(answer: SplitAnswer, diagrams = false, species: Specie
 
 function subject({ factorGroup, labelAxes, bonds, unitNotes }: SplitAnswer): string {
   const axes = labelAxes === "file" ? "axes of the file" : "axes of the reference setting (the file's cell is skew)";
-  const bonded = bonds.bonded.map((b) => `${b.elements.join("-")} ${range(b.shortest, b.longest)}`);
   const lines = [
     `factor group ${factorGroup.hermannMauguin} (${factorGroup.schoenflies}); labels in the ${axes}${factorGroup.axes ? `: ${factorGroup.axes}` : ""}`,
-    `bonds that make units: ${bonded.join(", ") || "none"}`,
-    ...bonds.nearLimit.map(
-      (n) =>
-        `close to the limit: ${n.labels.join("-")} ${formatNumber(n.distance, 3)} Å, ${n.bonded ? "a bond" : "no bond"} (limit ${formatNumber(n.limit, 2)} Å)`,
-    ),
+    ...bondLines(bonds),
     ...unitNotes.map((n) => `- ${n}`),
   ];
   return lines.map((line) => wrapText(line, WIDTH, "    ")).join("\n");
@@ -37,11 +33,6 @@ function subject({ factorGroup, labelAxes, bonds, unitNotes }: SplitAnswer): str
 function axesText({ freeAxes, siteAxes }: UnitAnswer): string[] {
   const parts = [...(freeAxes ? [`free unit: ${freeAxes}`] : []), ...(siteAxes ? [`site: ${siteAxes}`] : [])];
   return parts.length > 0 ? [`axes of the labels: ${parts.join("; ")}`] : [];
-}
-
-function range(shortest: number, longest: number): string {
-  const [a, b] = [formatNumber(shortest, 3), formatNumber(longest, 3)];
-  return a === b ? `${a} Å` : `${a} to ${b} Å`;
 }
 
 function unitText(unit: UnitAnswer, answer: SplitAnswer, write: ActiveWriter): string {
@@ -161,6 +152,7 @@ function sumsText(answer: SplitAnswer, write: ActiveWriter): string {
   return [
     ...lattice,
     line("acoustic", sums.acoustic) + ", part of the translations",
+    line("optic", sums.optic),
     line("total", sums.total),
     "(the sum over units was compared with the result atom by atom)",
   ].join("\n");

@@ -16,6 +16,10 @@ export interface BondedPair {
 /** Contacts no longer than bonds between two elements that were not taken for bonds. Counts are per cell. */
 export interface LeftOutPair {
   readonly elements: readonly [string, string];
+  /** `water`: the second is the oxygen of a molecule of water; `asked`: cut by the caller; else `ions`. */
+  readonly why: "water" | "asked" | "ions";
+  /** Where length decides, what it would have to be below; angstrom. */
+  readonly bondedBelow: number | null;
   readonly count: number;
   /** angstrom */
   readonly shortest: number;
@@ -58,7 +62,11 @@ export function summariseBonds(crystal: Crystal, table: ContactTable): BondChoic
       isMetal(elements[0]) &&
       !isHydrogen(elements[1])
     ) {
-      leftOut.set(elements.join(), { elements, ...extended(leftOut.get(elements.join()), distance) });
+      const why = table.cuts[k] ?? "ions";
+      const bondedBelow =
+        why === "ions" ? (table.limits[k] ?? bondClasses().shortBond.get(elements.join("-")) ?? null) : null;
+      const key = `${elements.join()} ${why}`;
+      leftOut.set(key, { elements, why, bondedBelow, ...extended(leftOut.get(key), distance) });
     }
     const limit = table.limits[k] ?? null;
     if (limit === null || Math.abs(distance - limit) > NEAR_LIMIT || rule === "asked for") return;

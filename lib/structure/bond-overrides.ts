@@ -64,9 +64,9 @@ export class BondOverrides {
       const within = (p: BondPattern) => this.inRange(p, i, j, contact.distance);
       if (this.options.bond?.some(within)) table.rules[k] = "asked for";
       if (this.options.noBond?.some((p) => this.matches(p, i, j) && !isOutside(p, contact.distance))) {
-        table.rules[k] = null;
+        table.cut(k, "asked");
       }
-      if (this.units.some((u) => u.has(i) !== u.has(j))) table.rules[k] = null;
+      if (this.units.some((u) => u.has(i) !== u.has(j))) table.cut(k, "asked");
       else if (this.units.some((u) => u.has(i)) && this.belongTogether(i, j, contact.distance)) {
         table.rules[k] ??= "asked for";
       }

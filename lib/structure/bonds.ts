@@ -9,6 +9,7 @@ import { withinOneCopy } from "./disorder-copy.ts";
 import { applyHydrogenRule } from "./hydrogen-rule.ts";
 import { applyLigandRule } from "./ligand-rule.ts";
 import type { Contact } from "./neighbour-search.ts";
+import { freeWater } from "./water.ts";
 
 /** A bond of the periodic structure, once per cell. */
 export interface Bond extends Contact {
@@ -28,8 +29,8 @@ export interface BondList {
 }
 
 /**
- * Chooses the bonds of a crystal by rule: among non-metals, within oxo-, thio- and halo-anions, and in aqua, ammine,
- * cyano, carbonyl and like complexes; not between a cation and an ordinary anion, and no hydrogen bonds. Distances are
+ * Chooses the bonds of a crystal by rule: among non-metals, within oxo-, thio- and halo-anions, and in ammine, cyano,
+ * carbonyl and like complexes; not between a metal and water or an ordinary anion, and no hydrogen bonds. Distances are
  * compared with sums of covalent radii. Every choice can be overruled.
  * @throws InputProblem `bond-name-unknown`
  */
@@ -65,6 +66,7 @@ export function judgedBonds(
   applyElementRules(table);
   const centred = applyHydrogenRule(table);
   applyLigandRule(table);
+  freeWater(table);
   overrides.apply(table);
   const bonds: Bond[] = [];
   table.contacts.forEach((contact, k) => {

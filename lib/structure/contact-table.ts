@@ -22,7 +22,6 @@ export type BondRule =
   | "oxo-anion"
   | "thio-anion"
   | "halo complex"
-  | "aqua ligand"
   | "nitrogen ligand"
   | "carbon ligand"
   | "phosphorus or sulfur ligand"
@@ -45,6 +44,8 @@ export class ContactTable {
   readonly rules: (BondRule | null)[];
   /** Per contact: the limit, in angstrom, that it was measured by; null where distance did not decide. */
   readonly limits: (number | null)[];
+  /** Per contact: why it is no bond whatever its length, or null. */
+  readonly cuts: ("water" | "asked" | null)[];
   readonly compared: number;
   private readonly byAtom: number[][];
 
@@ -69,6 +70,7 @@ export class ContactTable {
     this.compared = search.compared;
     this.rules = this.contacts.map(() => null);
     this.limits = this.contacts.map(() => null);
+    this.cuts = this.contacts.map(() => null);
     this.byAtom = atoms.map(() => []);
     this.contacts.forEach((c, k) => {
       this.byAtom[c.first]!.push(k);
@@ -93,6 +95,13 @@ export class ContactTable {
     if (this.rules[contact] !== null) return;
     this.limits[contact] = limit;
     if (this.contacts[contact]!.distance <= limit) this.rules[contact] = rule;
+  }
+
+  /** Makes a contact no bond, whatever the rules said of its length. */
+  cut(contact: number, why: "water" | "asked"): void {
+    this.rules[contact] = null;
+    this.limits[contact] = null;
+    this.cuts[contact] = why;
   }
 
   /** Bonded neighbours of an atom, one entry per bond. */

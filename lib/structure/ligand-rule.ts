@@ -1,14 +1,14 @@
-import { bondClasses, isHydrogen } from "./bond-class.ts";
+import { bondClasses } from "./bond-class.ts";
 import { BOND_TOLERANCE, type BondRule, type ContactTable, radiusSum } from "./contact-table.ts";
 
 /** A carbon-nitrogen bond shorter than this is the triple bond of a cyanide; angstrom. */
 const TRIPLE_BOND = 1.25;
 
 /**
- * Bonds of metals to the ligands of complexes, told by what the ligand atom is bonded to: water, nitrogen (ammines,
- * amines, nitro, isothiocyanate; not the far end of a cyanide), carbon (cyanide, carbonyl, organic groups), phosphorus
- * and sulfur bearing carbon; then the oxygen of a ligand that holds the same metal by another atom already. Oxygen of
- * oxo-anions, alkoxides and carboxylates is not among them otherwise.
+ * Bonds of metals to the ligands of complexes, told by what the ligand atom is bonded to: nitrogen (ammines, amines,
+ * nitro, isothiocyanate; not the far end of a cyanide), carbon (cyanide, carbonyl, organic groups), phosphorus and sulfur
+ * bearing carbon; then the oxygen of a ligand that holds the same metal by another atom already. Oxygen of water,
+ * hydroxide, oxo-anions, alkoxides and carboxylates is not among them otherwise.
  */
 export function applyLigandRule(table: ContactTable): void {
   const ligands = pieces(table);
@@ -26,29 +26,10 @@ function bindDonors(table: ContactTable): void {
     for (const k of table.around(atom)) {
       const centre = table.other(k, atom);
       const metal = table.elements[centre];
-      if (!metal || !metals.has(metal) || (rule === "aqua ligand" && !isMostlyAqua(table, centre))) continue;
+      if (!metal || !metals.has(metal)) continue;
       table.judge(k, rule, radiusSum(metal, element)! + BOND_TOLERANCE);
     }
   });
-}
-
-/** At least half of the neighbours of a metal are water, as in Cu(H2O)4 of chalcanthite; not in kieserite. */
-function isMostlyAqua(table: ContactTable, metal: number): boolean {
-  const { nonMetal } = bondClasses();
-  const near = table.around(metal).flatMap((k) => {
-    const atom = table.other(k, metal);
-    const element = table.elements[atom] ?? "";
-    if (!nonMetal.has(element) || isHydrogen(element)) return [];
-    return table.contacts[k]!.distance <= radiusSum(table.elements[metal]!, element)! + BOND_TOLERANCE ? [atom] : [];
-  });
-  return 2 * near.filter((atom) => isWater(table, atom)).length >= near.length;
-}
-
-function isWater(table: ContactTable, atom: number): boolean {
-  if (table.elements[atom] !== "O") return false;
-  const { nonMetal } = bondClasses();
-  const elements = table.bonded(atom).flatMap((j) => table.elements[j] ?? []);
-  return elements.filter(isHydrogen).length >= 2 && elements.every((e) => isHydrogen(e) || !nonMetal.has(e));
 }
 
 function ligandKind(table: ContactTable, atom: number, element: string): BondRule | null {
@@ -56,8 +37,6 @@ function ligandKind(table: ContactTable, atom: number, element: string): BondRul
   const bonded = table.bonded(atom).filter((j) => nonMetal.has(table.elements[j] ?? ""));
   const elements = bonded.map((j) => table.elements[j]!);
   switch (element) {
-    case "O":
-      return isWater(table, atom) ? "aqua ligand" : null;
     case "N":
       return elements.length > 0 && !isCyanide(table, atom, bonded) ? "nitrogen ligand" : null;
     case "C":

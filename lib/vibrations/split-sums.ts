@@ -10,6 +10,8 @@ export interface SplitSums {
   readonly translations: SpeciesCounts;
   readonly extended: SpeciesCounts;
   readonly acoustic: SpeciesCounts;
+  /** All but the acoustic modes. */
+  readonly optic: SpeciesCounts;
   readonly total: SpeciesCounts;
 }
 
@@ -63,6 +65,7 @@ export function sumUp(
       translations: counts(translations),
       extended: counts(extended),
       acoustic: counts(modes.species.map((s) => s.acoustic)),
+      optic: counts(modes.species.map((s, i) => total[i]! - s.acoustic)),
       total: counts(total),
     },
     notes,

@@ -85,6 +85,12 @@ function hydrated(
   return places;
 }
 
+/** A vanadyl ion with water in its equatorial plane, near enough to its short bond for one shell. */
+function aquavanadyl(): Place[] {
+  const water = hydrated("V", OCTAHEDRON.slice(0, 4), "O", 1.85, 2);
+  return [...water, ["O", 0, 0, 1.6]];
+}
+
 describe("covalent radii", () => {
   test("are there for the first 96 elements, in order, and for no other", () => {
     const symbols = "H He Li C N O Si S Cl Ca Fe Mo Cs W Pb U Cm".split(" ");
@@ -117,7 +123,9 @@ describe("bonds to metals", () => {
     ["hexacyanoferrate", complex("Fe", OCTAHEDRON, ["C", 1.92], ["N", 3.08]), ["Fe(CN)6"]],
     ["tetracarbonylnickel", complex("Ni", TETRAHEDRON, ["C", 1.84], ["O", 2.98]), ["Ni(CO)4"]],
     ["hexaamminecobalt", hydrated("Co", OCTAHEDRON, "N", 1.97, 3), ["Co(NH3)6"]],
-    ["hexaaquanickel", hydrated("Ni", OCTAHEDRON, "O", 2.06, 2), ["Ni(H2O)6"]],
+    ["hexaaquanickel", hydrated("Ni", OCTAHEDRON, "O", 2.06, 2), [...new Array(6).fill("H2O"), "Ni"]],
+    ["vanadyl with water", aquavanadyl(), [...new Array(4).fill("H2O"), "VO"]],
+    ["hydroxide round magnesium", hydrated("Mg", OCTAHEDRON, "O", 2.1, 1), ["Mg", ...new Array(6).fill("OH")]],
     ["hydrated calcium", hydrated("Ca", OCTAHEDRON, "O", 2.37, 2), ["Ca", ...new Array(6).fill("H2O")]],
     ["hydrated sodium", hydrated("Na", OCTAHEDRON, "O", 2.4, 2), [...new Array(6).fill("H2O"), "Na"]],
     ["thiocyanate by nitrogen", complex("Co", TETRAHEDRON, ["N", 1.96], ["C", 3.12], ["S", 4.75]), ["Co(SCN)4"]],

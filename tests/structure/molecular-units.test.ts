@@ -157,12 +157,12 @@ describe("molecularUnits", () => {
     ["pyrite", ["S2 x 4"], [], ["Fe"]],
     ["calomel", ["Hg2Cl2 x 1"], [], []],
     ["potassium-hexachloroplatinate", ["PtCl6 x 1"], [], ["K"]],
-    ["potassium-alum", ["Al(H2O)6 x 4", "SO4 x 8", "H2O x 24"], [], ["K"]],
-    ["epsomite", ["Mg(H2O)6 x 4", "SO4 x 4", "H2O x 4"], [], []],
-    ["chalcanthite", ["Cu(H2O)4 x 1", "Cu(H2O)4 x 1", "SO4 x 2", "H2O x 2"], [], []],
+    ["potassium-alum", ["H2O x 24", "H2O x 24", "SO4 x 8"], [], ["K", "Al"]],
+    ["epsomite", [...new Array(7).fill("H2O x 4"), "SO4 x 4"], [], ["Mg"]],
+    ["chalcanthite", [...new Array(5).fill("H2O x 2"), "SO4 x 2"], [], ["Cu1", "Cu2"]],
     ["potassium-dihydrogen-phosphate", ["H2PO4 x 2"], [], ["K"]],
     ["ammonium-chloride", ["NH4 x 1"], [], ["Cl"]],
-    ["vivianite", ["Fe(H2O)4 x 1", "PO4 x 2", "H2O x 4"], [], ["Fe2"]],
+    ["vivianite", ["H2O x 4", "H2O x 4", "PO4 x 2"], [], ["Fe1", "Fe2"]],
     ["urea", ["CH4N2O x 2"], [], []],
     ["fullerene-fm-3", ["C60 x 1"], [], []],
   ])("takes %s apart as chemists do", (name, units, extended, lone) => {
@@ -209,6 +209,25 @@ describe("the choice of bonds", () => {
     const short = molecularUnits(wolframates, { bond: parseBondPatterns("W-O<1.95") });
     expect(short.units.map((u) => u.formula)).toEqual(["WO4"]);
     expect(molecularUnits(wolframates, { bond: parseBondPatterns("W-O<1.5") }).units).toHaveLength(1);
+  });
+
+  test("leaves water alone, says which bonds it cut, and joins it to a metal when asked", () => {
+    const epsomite = fixture("epsomite");
+    const { choice } = molecularUnits(epsomite);
+    expect(choice.leftOut).toEqual([expect.objectContaining({ elements: ["Mg", "O"], why: "water", count: 24 })]);
+    const asked = molecularUnits(epsomite, { bond: parseBondPatterns("Mg-O<2.07") });
+    expect(asked.units.map((u) => u.formula).sort()).toEqual(["H2O", "Mg(H2O)6", "SO4"]);
+    expect(asked.choice.leftOut).toEqual([]);
+  });
+
+  test("tells ions from bonds that the caller cut, and below what length a bond begins", () => {
+    const { choice } = molecularUnits(wolframates, { noBond: parseBondPatterns("W-O") });
+    expect(choice.leftOut.map((p) => [p.elements.join("-"), p.why])).toEqual([
+      ["Ca-O", "ions"],
+      ["W-O", "asked"],
+    ]);
+    const [sulfide] = molecularUnits(fixture("molybdenite-2h")).choice.leftOut;
+    expect(sulfide).toMatchObject({ elements: ["Mo", "S"], why: "ions", bondedBelow: 2.25 });
   });
 
   test("can be overruled by naming the members of a unit", () => {

@@ -82,7 +82,14 @@ function bonds(): Shape<BondChoice> {
     radii: text("source of the radii"),
     tolerance: amount("above the sum of the radii, angstrom"),
     bonded: list(object<BondChoice["bonded"][number]>({ elements, rule: { schema: text().schema }, ...range })),
-    leftOut: list(object<BondChoice["leftOut"][number]>({ elements, ...range })),
+    leftOut: list(
+      object<BondChoice["leftOut"][number]>({
+        elements,
+        why: choice({ water: true, asked: true, ions: true }),
+        bondedBelow: orNull(amount("angstrom"), "null where length does not decide"),
+        ...range,
+      }),
+    ),
     nearLimit: list(
       object<BondChoice["nearLimit"][number]>({
         labels: pair(text()),
@@ -237,6 +244,7 @@ export function splitSchema(): Shape<CrystalDocument<SplitAnswer & WithPolyhedra
       translations: species(),
       extended: species(),
       acoustic: species(),
+      optic: species(),
       total: species(),
     }),
     unitNotes: list(text()),

@@ -12,7 +12,7 @@ export const HALOGENS = "F Cl Br I At";
 export const HALIDE_METALS =
   "Be Al Ga In Tl Sn Pb Bi Sc Ti V Cr Mn Fe Co Ni Cu Zn Zr Nb Mo Tc Ru Rh Pd Ag Cd Hf Ta W Re Os Ir Pt Au Hg U Np Pu";
 
-/** Metals to which water, nitrogen, phosphorus and sulfur ligands bond. */
+/** Metals to which nitrogen, phosphorus and sulfur ligands bond. */
 export const LIGAND_METALS =
   "Be Mg Al Ga In Sn Sc Ti V Cr Mn Fe Co Ni Cu Zn Zr Nb Mo Tc Ru Rh Pd Ag Cd Hf Ta W Re Os Ir Pt Au Hg";
 
