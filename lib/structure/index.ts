@@ -51,6 +51,19 @@ export { type CellRequest, formatCellRequest, parseCellRequest, requestedCell } 
 export { type ChangedCell, changeOfCell, metricIn, multiplesOf } from "./change-of-cell.ts";
 export { chosenComponent, type DecidedCrystal, orderedCrystal } from "./chosen-component.ts";
 export type { SymmetryDisagreement } from "./compare-statements.ts";
+export {
+  COMPARISON_DISPLACEMENT,
+  COMPARISON_STRAIN,
+  type ComparedStructure,
+  type Comparison,
+  type ComparisonAnswer,
+  type ComparisonOptions,
+  compareStructures,
+  type Disagreement,
+  ISOTYPIC_DISPLACEMENT,
+  ISOTYPIC_STRAIN,
+  OCCUPANCY_DIFFERENCE,
+} from "./comparison-answer.ts";
 export { type CellOrigin, completedCell } from "./completed-cell.ts";
 export { type ComposeAnswer, type ComposeResult, composeAnswer, type HigherSymmetry } from "./compose-answer.ts";
 export { type ComposedContents, composedContents } from "./composed-contents.ts";
@@ -110,6 +123,7 @@ export { connectedUnit, gatheredPieces } from "./gathered-pieces.ts";
 export { CENTRED_HYDROGEN } from "./hydrogen-rule.ts";
 export { invariantMetric } from "./invariant-metric.ts";
 export { axesOf, changeAxes, type LatticeAxes } from "./lattice-axes.ts";
+export type { LatticeStrain } from "./lattice-match.ts";
 export { type LatticeSymmetry, latticeSymmetries } from "./lattice-symmetry.ts";
 export { type ListedSite, type ListedStructure, listedStructure } from "./listed-sites.ts";
 export { angle, distance, type Measure, torsion } from "./measure.ts";
@@ -138,6 +152,7 @@ export {
 } from "./ordered-configurations.ts";
 export { type OrderedModel, orderedModel } from "./ordered-model.ts";
 export { oxidationStates } from "./oxidation-states.ts";
+export type { ComparedSite, SiteAlone, SitePair } from "./paired-sites.ts";
 export { nearestDistance, PeriodicPoints } from "./periodic-points.ts";
 export { type PointsAnswer, type PointsQuestion, pointsAnswer } from "./points-answer.ts";
 export {
@@ -165,6 +180,7 @@ export {
   resited,
   type StandardisationAnswer,
 } from "./resite-answer.ts";
+export { resitedOnto } from "./resited-onto.ts";
 export { cross3, dot3, length3, minus3, unit3 } from "./rotation-fit.ts";
 export { formatShellPattern, parseShellPattern, type ShellPattern } from "./shell-text.ts";
 export { type NearPair, type ShortDistances, shortDistances } from "./shortest-distance.ts";

@@ -11,6 +11,7 @@ import {
 } from "../symmetry/index.ts";
 import type { Vec3 } from "./cell.ts";
 import { changeOfCell } from "./change-of-cell.ts";
+import type { ComparisonAnswer } from "./comparison-answer.ts";
 import type { Crystal } from "./crystal.ts";
 import type { DisplacementTensor } from "./displacement.ts";
 import { axesOf } from "./lattice-axes.ts";
@@ -78,6 +79,8 @@ export interface ResiteAnswer {
   readonly volume: number;
   readonly sites: readonly ResitedSite[];
   readonly standardisation?: StandardisationAnswer;
+  /** Where another file was compared; the structure is then written on the axes of that file if they agree. */
+  readonly comparison?: ComparisonAnswer;
 }
 
 /** An answer with the crystal it tells of. */
@@ -102,7 +105,7 @@ export function resited(crystal: Crystal, request: ResiteRequest): Resited {
     );
   }
   const labels = changed.sites.map((s) => s.label);
-  return { crystal: changed, answer: answerOf(crystal, changed, transformation, [0, 0, 0], labels), notes };
+  return { crystal: changed, answer: resiteAnswer(crystal, changed, transformation, [0, 0, 0], labels), notes };
 }
 
 function wanted(crystal: Crystal, request: Exclude<ResiteRequest, { kind: "standardised" }>): RequestedSetting {
@@ -127,7 +130,7 @@ function toReference({ identified, group, metric }: Crystal): Transformation {
 
 function standardised(crystal: Crystal, eitherHand: boolean): Resited {
   const result = standardisedCrystal(crystal, { eitherHand });
-  const answer = answerOf(crystal, result.crystal, result.transformation, result.shift, result.origins);
+  const answer = resiteAnswer(crystal, result.crystal, result.transformation, result.shift, result.origins);
   const standardisation = standardisationOf(result, eitherHand);
   return { crystal: result.crystal, answer: { ...answer, standardisation }, notes: [] };
 }
@@ -149,7 +152,8 @@ function standardisationOf({ description, mirrored }: StandardisedCrystal, eithe
   };
 }
 
-function answerOf(
+/** A crystal as it is told of in its new setting; `labels` are those of the file, site by site. */
+export function resiteAnswer(
   given: Crystal,
   crystal: Crystal,
   { P, p }: Transformation,

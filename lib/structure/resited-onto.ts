@@ -1,0 +1,59 @@
+import { InputProblem } from "../problem.ts";
+import { IDENTITY_TRANSFORMATION, type Transformation } from "../symmetry/index.ts";
+import type { Vec3 } from "./cell.ts";
+import { changeOfCell } from "./change-of-cell.ts";
+import { type ComparisonOptions, compareStructures } from "./comparison-answer.ts";
+import { type Crystal, crystalOf } from "./crystal.ts";
+import { type Resited, resiteAnswer } from "./resite-answer.ts";
+
+/**
+ * A structure compared with another, and where the two agree, written on the axes and origin of the other.
+ * @throws InputProblem as `compareStructures`
+ */
+export function resitedOnto(crystal: Crystal, other: Crystal, options: ComparisonOptions = {}): Resited {
+  const { answer: comparison, match } = compareStructures(crystal, other, options);
+  const stay = (note: string[]): Resited => ({
+    crystal,
+    answer: { ...unchanged(crystal), comparison },
+    notes: note,
+  });
+  if (!match || comparison.verdict === "different") return stay([]);
+  if (comparison.hand === "other") return stay(["written as it stands: axes of the other hand would turn it over"]);
+  if (!match.exact) return stay(["written as it stands: the operations of the two files do not agree about an origin"]);
+  const { origin, shift } = match.exact;
+  try {
+    const change: Transformation = { P: match.P, p: origin };
+    const { crystal: changed, rotations } = changeOfCell(shifted(crystal, shift), change);
+    const labels = changed.sites.map((s) => s.label);
+    const notes =
+      rotations.after < rotations.before
+        ? [
+            `on the axes of the second file ${rotations.after} of the ${rotations.before} rotation parts of its space group are left`,
+          ]
+        : [];
+    return {
+      crystal: changed,
+      answer: { ...resiteAnswer(crystal, changed, change, shift, labels), comparison },
+      notes,
+    };
+  } catch (e) {
+    if (!(e instanceof InputProblem)) throw e;
+    return stay([`written as it stands, since on the axes of the second file ${e.message}`]);
+  }
+}
+
+function unchanged(crystal: Crystal) {
+  const labels = crystal.sites.map((s) => s.label);
+  return resiteAnswer(crystal, crystal, IDENTITY_TRANSFORMATION, [0, 0, 0], labels);
+}
+
+/** The crystal with its origin moved along directions that its group leaves free; fractional. */
+function shifted(crystal: Crystal, shift: Vec3): Crystal {
+  if (shift.every((e) => e === 0)) return crystal;
+  const { name, metric, group, identified, tolerance } = crystal;
+  const sites = crystal.sites.map(({ images: _, alsoListedAs: __, sharesPositionOf: ___, symmetry, ...site }) => ({
+    ...site,
+    position: symmetry.point.map((e, i) => e - shift[i]!) as unknown as Vec3,
+  }));
+  return crystalOf({ name, metric, group, identified, sites, tolerance });
+}
