@@ -1,6 +1,6 @@
 import { describe, expect, it } from "vitest";
-import { ratVec3 } from "../../lib/algebra/index.ts";
-import { cellOfMetric, metricOf, reduceAnswer } from "../../lib/structure/index.ts";
+import { applyRow, type IntMat3, type IntVec3, inverseRatMat, mod, ratMat3, ratVec3 } from "../../lib/algebra/index.ts";
+import { cellOfMetric, type Mat3, metricOf, reduceAnswer } from "../../lib/structure/index.ts";
 
 const P = [ratVec3([0, 0, 0])];
 
@@ -74,6 +74,92 @@ const CHARACTERS: readonly (readonly [number, string, readonly [number, number, 
   [43, "mS", [9, 16, 25, -7, -3.5, -2]],
   [44, "aP", [9, 16, 25, -4, -2, -3]],
 ];
+
+/**
+ * The centring and the conventional basis of each character: rows of digits, minus before the digit, each row a
+ * conventional basis vector in terms of the reduced basis.
+ * Source: International Tables for Crystallography A (2016), table 3.1.3.1, last columns (from memory).
+ */
+const CONVENTIONAL = [
+  ...`
+F 1-11/11-1/-111    R 1-10/-101/-1-1-1   P 100/010/001       R 1-10/-101/-1-1-1  I 101/110/011
+I 011/101/110       I 101/110/011        I -1-10/-10-1/0-1-1 R 100/-110/-1-13    C 110/1-10/00-1
+P 100/010/001       P 100/010/001        C 110/-110/001      C 110/-110/001      I 100/010/112
+F -1-10/1-10/112    C 1-10/110/-10-1     I 0-11/1-1-1/100    I -100/0-11/-111    C 011/01-1/-100
+P 010/001/100       P 010/001/100        C 011/0-11/100      R 121/0-11/100      C 011/0-11/100
+F 100/-120/-102     C -120/-100/0-11     C -100/-102/010     C 100/1-20/00-1     C 010/01-2/-100
+P 100/010/001       P 100/010/001        P 100/010/001       P -100/00-1/0-10    P 0-10/-100/00-1
+C 100/-10-2/010     C 102/100/010        C -100/120/00-1     C -1-20/-100/00-1   C 0-10/012/-100
+C 0-1-2/0-10/-100   I -100/0-10/112      I -100/-1-1-2/0-10  P 100/010/001`.matchAll(/([PCIFR]) (\S+)/g),
+].map(([, letter, rows]) => [letter!, rows!] as const);
+
+/** Lattice points of the conventional cell that are not its corners; R obverse. */
+const CENTRINGS: Readonly<Record<string, readonly string[]>> = {
+  P: [],
+  C: ["0.500,0.500,0.000"],
+  I: ["0.500,0.500,0.500"],
+  F: ["0.000,0.500,0.500", "0.500,0.000,0.500", "0.500,0.500,0.000"],
+  R: ["0.333,0.667,0.667", "0.667,0.333,0.333"],
+};
+
+describe.each(CHARACTERS)(
+  "the conventional basis that International Tables print, character %i",
+  (number, type, form) => {
+    const [letter, rows] = CONVENTIONAL[number - 1]!;
+    const [A, B, C, D, E, F] = form;
+    const M = [...rows.matchAll(/-?\d/g)].map((m) => Number(m[0])) as unknown as IntMat3;
+    const conventional = conjugate([A, F, E, F, B, D, E, D, C], M);
+    const printed = cellOfMetric(conventional);
+
+    it("has the centring of its letter", () => {
+      const { n, d } = inverseRatMat(ratMat3(M));
+      const corners = [-2, -1, 0, 1, 2].flatMap((u) =>
+        [-2, -1, 0, 1, 2].flatMap((v) => [-1, 0, 1].map((w) => [u, v, w])),
+      );
+      const points = corners.map((u) =>
+        applyRow(u as unknown as IntVec3, n)
+          .map((e) => (mod(e, d) / d).toFixed(3))
+          .join(),
+      );
+      expect([...new Set(points)].filter((p) => p !== "0.000,0.000,0.000").sort()).toEqual(CENTRINGS[letter]);
+    });
+
+    it("is the conventional cell found, but for the order of axes that are alike", () => {
+      const found = reduceAnswer(metricOf(cellOfMetric([A, F, E, F, B, D, E, D, C])), P).conventional;
+      const [a, b, c] = found.cell;
+      expect(found.volume).toBeCloseTo(metricOf(printed).volume, 6);
+      if (type === "aP") return;
+      if (type[0] === "m") {
+        // the setting in the plane is a choice; the unique axis is none
+        expect([printed.alpha, printed.gamma, found.cell[3], found.cell[5]].map((e) => e.toFixed(6))).toEqual(
+          Array(4).fill("90.000000"),
+        );
+        expect(b).toBeCloseTo(printed.b, 6);
+        return;
+      }
+      const sorted = (lengths: readonly number[]) => lengths.map((e) => e.toFixed(6)).sort();
+      const [ab, abPrinted] = [
+        [a, b],
+        [printed.a, printed.b],
+      ];
+      expect(sorted(type === "oS" ? ab : [...ab, c])).toEqual(
+        sorted(type === "oS" ? abPrinted : [...abPrinted, printed.c]),
+      );
+      if (type === "oS") expect(c).toBeCloseTo(printed.c, 6);
+      expect([found.cell[3], found.cell[4], found.cell[5]].map((e) => e.toFixed(6))).toEqual(
+        [printed.alpha, printed.beta, printed.gamma].map((e) => e.toFixed(6)),
+      );
+    });
+  },
+);
+
+/** M G M^T: the metric on the axes that the rows of M are. */
+function conjugate(g: readonly number[], M: IntMat3): Mat3 {
+  const row = (i: number) => [M[3 * i]!, M[3 * i + 1]!, M[3 * i + 2]!];
+  const dot = (u: readonly number[], v: readonly number[]) =>
+    u.reduce((s, x, i) => s + v.reduce((t, y, j) => t + x * y * g[3 * i + j]!, 0), 0);
+  return [0, 1, 2].flatMap((i) => [0, 1, 2].map((j) => dot(row(i), row(j)))) as unknown as Mat3;
+}
 
 describe("the 44 lattice characters of International Tables", () => {
   it.each(CHARACTERS)("character %i is a lattice %s", (_, type, [A, B, C, D, E, F]) => {
