@@ -12,7 +12,8 @@ A₁  1    1    1
 A₂  1    1   -1
 E   2   -1    0
 
-axes of rotations and normals of planes: 2C₃ z; 3σv y (0.866, 0.5, 0) (0.866, -0.5, 0)
+axes: 2C₃ z
+planes, by their normals: 3σv y (0.866, 0.5, 0) (0.866, -0.5, 0)
 
 species  vectors  rotations  quadratic functions      first order      hyper-Raman
 A₁       z                   x²+y², z²                infrared, Raman  yes

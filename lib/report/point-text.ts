@@ -55,24 +55,43 @@ function characterText(c: number | string, closed: ReadonlyMap<string, string>):
   return form.includes("sqrt") ? form.replace("sqrt", "√") : formatNumber(c, 3);
 }
 
-function footnotes({ closedForms, classes, species, order }: PointAnswer, write: SpeciesWriter): string {
+function footnotes({ closedForms, classes, species, order, planeNaming }: PointAnswer, write: SpeciesWriter): string {
   const numbers = closedForms
     .filter((f) => !f.text.includes("sqrt"))
     .map((f) => `${formatNumber(f.value, 3)} = ${f.text.replace("pi", "π")}`);
   const pairs = species.filter((s) => s.complexPair).map((s) => write.label(s.label));
-  const axes = new Map<string, string[]>();
-  for (const c of classes) {
-    const key = axesText(c);
-    if (key) axes.set(key, [...(axes.get(key) ?? []), classText(c.name)]);
-  }
-  const named = [...axes].map(([text, names]) => `${names.join(", ")} ${text}`);
+  const axes = directionsOf(classes.filter((c) => !c.name.includes("sigma")));
+  const planes = directionsOf(classes.filter((c) => c.name.includes("sigma")));
   const lines = [
     ...(numbers.length > 0 ? [numbers.join(", ")] : []),
     ...(pairs.length > 0 ? [`* two complex conjugate species taken as one: ${pairs.join(", ")}`] : []),
     ...(order === null ? ["φ is any angle; S(φ) turns by φ and reflects at the plane normal to z"] : []),
-    ...(named.length > 0 ? [`axes of rotations and normals of planes: ${named.join("; ")}`] : []),
+    ...(axes.length > 0 ? [`axes: ${axes.join("; ")}`] : []),
+    ...(planes.length > 0 ? [`planes, by their normals: ${planes.join("; ")}`] : []),
+    ...namingLine(planeNaming),
   ];
   return lines.map((line) => wrapText(line, WIDTH, "    ")).join("\n");
+}
+
+/** Classes of one set of directions together, in the order of the table: `3σv [100] [010] [110], containing C₂″`. */
+function directionsOf(classes: PointAnswer["classes"]): string[] {
+  const named = new Map<string, string[]>();
+  for (const c of classes) {
+    const contained = c.containsAxes.length > 0 ? `, containing ${c.containsAxes.map(classText).join(" and ")}` : "";
+    const key = axesText(c) + contained;
+    if (key) named.set(key, [...(named.get(key) ?? []), classText(c.name)]);
+  }
+  return [...named].map(([text, names]) => `${names.join(", ")} ${text}`);
+}
+
+/** Where σv of one kind of table is σd of the other. */
+function namingLine(naming: PointAnswer["planeNaming"]): string[] {
+  if (naming === null) return [];
+  const [here, there] =
+    naming === "crystal"
+      ? ["crystals, where σv is normal to C₂′", "molecules σv contains C₂′"]
+      : ["molecules, where σv contains C₂′", "crystals σv is normal to C₂′"];
+  return [`planes named as for ${here}; for ${there}, so that σv and σd change places; species are named alike`];
 }
 
 /** Most directions of one class that are listed. */

@@ -13,7 +13,7 @@ export function orientedSymbols(): string[] {
  */
 export function crystalMatrices(symbol: string): IntMat3[] {
   const text = Object.hasOwn(GENERATORS, symbol) ? GENERATORS[symbol] : undefined;
-  if (text === undefined) throw new RangeError(`not an oriented symbol of a crystal class: ${symbol}`);
+  if (text === undefined) throw new RangeError(`"${symbol}" is not the symbol of a crystal class`);
   return closeMatrices(text.split(" ").filter(Boolean).map(readMatrix));
 }
 

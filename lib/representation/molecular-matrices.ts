@@ -34,7 +34,7 @@ export function molecularName(name: string): string {
   const axial = /^([CDS])([1-9]\d*)([hvd]?)$/.exec(plain);
   const known = ["Cs", "Ci", "T", "Td", "Th", "O", "Oh", "I", "Ih"].includes(plain);
   if (!known && (!axial || /^C\d+d|^D\d+v|^S\d+[hvd]/.test(plain))) {
-    throw new RangeError(`not the name of a finite point group: ${name}`);
+    throw new RangeError(`"${name}" is not the name of a finite point group`);
   }
   return plain;
 }

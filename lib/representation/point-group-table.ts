@@ -51,23 +51,23 @@ const SPELLINGS: Readonly<Record<string, string>> = {
 export function pointGroupTable(name: string): PointGroupTable {
   const plain = name.replace(/\s+/g, "");
   if (/^[A-Z]/.test(plain)) {
-    const group = named(name, () => molecularGroup(plain));
+    const group = named(() => molecularGroup(plain));
     return tableOf(group, group.elements, "x, y, z of the standard orientation: z along the principal axis");
   }
   const symbol = Object.hasOwn(SPELLINGS, plain) ? SPELLINGS[plain]! : plain;
-  const group = named(name, () => pointGroup(crystalMatrices(symbol)));
+  const group = named(() => pointGroup(crystalMatrices(symbol)));
   const frame = "x along a, y in the plane of a and b, z along c*, in conventional axes";
   return tableOf(group, cartesianMatrices(group.elements), frame);
 }
 
 /** The group, or the refusal of its name as a fault of the input. */
-function named<G>(name: string, make: () => G): G {
+function named<G>(make: () => G): G {
   try {
     return make();
   } catch (error) {
     if (!(error instanceof RangeError)) throw error;
     const hint = "Write a Schoenflies symbol such as D3d, or an International symbol such as -3m or -4m2.";
-    throw new InputProblem("unknown-point-group", `There is no table of "${name}": ${error.message}.`, null, hint);
+    throw new InputProblem("unknown-point-group", `There is no such table: ${error.message}.`, null, hint);
   }
 }
 

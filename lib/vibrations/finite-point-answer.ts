@@ -7,6 +7,7 @@ import {
   pointGroupTable,
 } from "../representation/index.ts";
 import { activities } from "./activity.ts";
+import { axesInPlanes, planeNaming } from "./plane-naming.ts";
 import { type PointTensorsAnswer, tensorsAnswer } from "./point-tensors.ts";
 import { type ProductAnswer, productAnswer } from "./species-product.ts";
 import { internationalSymbol, type SubgroupAnswer, subgroupAnswers } from "./subgroup-answer.ts";
@@ -18,6 +19,8 @@ export interface PointClassAnswer {
   readonly size: number | null;
   /** Axes, and normals of planes. */
   readonly directions: readonly string[];
+  /** Of planes through the principal axis: the classes of lateral twofold axes that lie in them. */
+  readonly containsAxes: readonly string[];
 }
 
 export interface PointSpeciesAnswer {
@@ -47,6 +50,11 @@ export interface PointAnswer {
   /** Directions that the labels refer to; empty where the frame says it all. */
   readonly axes: string;
   readonly classes: readonly PointClassAnswer[];
+  /**
+   * Whose names of sigma_v and sigma_d these are, where crystals and molecules have them the other way round; else null.
+   * The labels of the species agree.
+   */
+  readonly planeNaming: "crystal" | "molecule" | null;
   readonly species: readonly PointSpeciesAnswer[];
   /** Closed forms of characters that are not whole: `sqrt2`, `2cos(2pi/5)`. */
   readonly closedForms: readonly { readonly value: number; readonly text: string }[];
@@ -74,7 +82,11 @@ export function finitePointAnswer(name: string, options: PointOptions): PointAns
     order: group.order,
     frame: table.frame,
     axes: group.axes.text,
-    classes: group.classes.map(({ name: text, size, directions }) => ({ name: text, size, directions })),
+    classes: group.classes.map((c) => {
+      const { name: text, size, directions } = c;
+      return { name: text, size, directions, containsAxes: axesInPlanes(group, c) };
+    }),
+    planeNaming: internationalSymbol(group) === null ? null : planeNaming(group),
     species: speciesAnswers(table),
     closedForms: closedForms(group),
     tensors: options.tensors ? tensorsAnswer(table) : null,

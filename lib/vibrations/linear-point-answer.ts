@@ -34,7 +34,8 @@ export function linearPointAnswer(name: LinearGroupName, options: PointOptions):
     order: null,
     frame: "x, y, z of the standard orientation: z along the molecule",
     axes: "",
-    classes: CLASSES[name].map(([text, directions]) => ({ name: text, size: null, directions })),
+    classes: CLASSES[name].map(([text, directions]) => ({ name: text, size: null, directions, containsAxes: [] })),
+    planeNaming: null,
     species: rows.map((row, i) => ({
       label: row.label,
       dimension: row.dimension,

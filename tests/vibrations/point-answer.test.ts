@@ -215,3 +215,16 @@ describe("linear groups", () => {
     expect(problemOf(() => pointAnswer("Dinfh", { subgroups: ["all"] })).code).toBe("no-such-subgroup");
   });
 });
+
+test("a name that is none is refused in one sentence that names it once", () => {
+  const message = (name: string) => {
+    try {
+      pointAnswer(name);
+    } catch (e) {
+      return (e as Error).message;
+    }
+    return "";
+  };
+  expect(message("Th3")).toBe('There is no such table: "Th3" is not the name of a finite point group.');
+  expect(message("5/m").match(/5\/m/g)).toHaveLength(1);
+});

@@ -8,7 +8,7 @@ import type {
 } from "../../vibrations/index.ts";
 import { type Heading, heading, positionTolerance } from "./common.ts";
 import { hyperRaman } from "./modes.ts";
-import { count, either, flag, list, number, object, orNull, type Shape, text, whole } from "./shape.ts";
+import { choice, count, either, flag, list, number, object, orNull, type Shape, text, whole } from "./shape.ts";
 import { species } from "./units.ts";
 
 export function pointSchema(): Shape<Heading & PointAnswer> {
@@ -22,7 +22,16 @@ export function pointSchema(): Shape<Heading & PointAnswer> {
     frame: text(),
     axes: text("directions that the labels refer to"),
     classes: list(
-      object<PointClassAnswer>({ name: text(), size: orNull(count("", 1), infinite), directions: list(text()) }),
+      object<PointClassAnswer>({
+        name: text(),
+        size: orNull(count("", 1), infinite),
+        directions: list(text(), "axes, and normals of planes"),
+        containsAxes: list(text(), "classes of lateral twofold axes in vertical planes"),
+      }),
+    ),
+    planeNaming: orNull(
+      choice({ crystal: true, molecule: true }),
+      "whose names of sigma_v and sigma_d these are where the two differ",
     ),
     species: list(pointSpecies()),
     closedForms: list(
