@@ -20,6 +20,7 @@ export { positionsCsv } from "./positions-csv.ts";
 export { positionsText } from "./positions-text.ts";
 export { problemText } from "./problem-text.ts";
 export { reduceText } from "./reduce-text.ts";
+export { resiteText } from "./resite-text.ts";
 export { sitesText } from "./sites-text.ts";
 export {
   classText,

@@ -63,12 +63,9 @@ function compare(x: StructureMatch, y: StructureMatch): number {
 /** Components that operations of both structures fix are made exact; the others stay as measured, next to a fraction on it. */
 function exactly(first: Crystal, second: Crystal, match: StructureMatch): ChosenMatch {
   const { P, p } = match;
-  const { origin, shift } = exactOrigin(
-    first.metric,
-    first.group,
-    { basis: P, operations: second.group.operations },
-    p,
-  );
+  const found = exactOrigin(first.metric, first.group, { basis: P, operations: second.group.operations }, p);
+  const { origin } = found;
+  const shift: Vec3 = lengthOf(first.metric, found.shift) <= ROUNDED_BY ? [0, 0, 0] : found.shift;
   const whole = origin.n.map((e, i) => e / origin.d + shift[i]!) as unknown as Vec3;
   const rest: Vec3 = [p[0] - whole[0], p[1] - whole[1], p[2] - whole[2]];
   const shared = sharedRotations(first, second, { P, p: origin });

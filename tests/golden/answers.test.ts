@@ -107,6 +107,18 @@ const CASES: Readonly<Record<string, readonly string[]>> = {
     "sitefold symmetrise fixtures/calcite.cif --tolerance 3",
     "sitefold symmetrise fixtures/sodium-nitrite.cif --json",
   ],
+  resite: [
+    "sitefold resite fixtures/forsterite-pbnm.cif",
+    'sitefold resite fixtures/calcite.cif --setting "R -3 c :R"',
+    'sitefold resite fixtures/gypsum.cif --setting "P n m a"',
+    "sitefold resite fixtures/lithium-niobate.cif --standardised",
+    "sitefold resite fixtures/alpha-quartz.cif --standardised --either-hand",
+    "sitefold resite fixtures/gypsum-c2c.cif --to fixtures/gypsum-i2a.cif",
+    "sitefold resite fixtures/magnesite.cif --to fixtures/calcite.cif --isotypic",
+    "sitefold resite fixtures/aragonite.cif --to fixtures/calcite.cif",
+    "sitefold resite fixtures/zincite.cif --standardised --format cif",
+    "sitefold resite fixtures/calcite.cif --either-hand",
+  ],
   vet: [
     "sitefold vet fixtures/calcite.cif",
     "sitefold vet fixtures/damaged/operations-that-do-not-close.cif",

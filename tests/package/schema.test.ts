@@ -46,6 +46,11 @@ const LINES = [
   "reduce fixtures/gypsum.cif",
   "symmetrise fixtures/barium-titanate.cif --tolerance 0.2 --strain 0.03",
   "symmetrise fixtures/zircon.cif --given",
+  "resite fixtures/forsterite-pbnm.cif",
+  "resite fixtures/zincite.cif --standardised",
+  "resite fixtures/gypsum-c2c.cif --to fixtures/gypsum-i2a.cif",
+  "resite fixtures/magnesite.cif --to fixtures/calcite.cif --isotypic",
+  "resite fixtures/aragonite.cif --to fixtures/calcite.cif",
   "vet fixtures/calcite.cif",
   "vet fixtures/damaged/operations-that-do-not-close.cif",
   "vet fixtures/calcite.cif fixtures/damaged/empty.cif",
@@ -110,6 +115,10 @@ const PROMISED: Readonly<Record<string, readonly string[]>> = {
   "symmetrise fixtures/zircon.cif --given": [
     ..."declared.number found.number tolerance cell sites".split(" "),
     ...["xyz", "largest", "mean"].map((f) => `operations[].${f}`),
+  ],
+  "resite fixtures/forsterite-pbnm.cif": [
+    ..."spaceGroup.number P p cell sites".split(" "),
+    ...["label", "element", "occupancy", "multiplicity", "wyckoff", "position"].map(ofSite),
   ],
   "vet fixtures/damaged/operations-that-do-not-close.cif": [
     ...["id", "severity", "message", "where", "evidence"].map((f) => `findings[].${f}`),

@@ -3,6 +3,7 @@ import { definitions } from "./common.ts";
 import { groupSchema } from "./group.ts";
 import { modesSchema, patternsSchema, polariseSchema } from "./modes.ts";
 import { pointSchema } from "./point.ts";
+import { resiteSchema } from "./resite.ts";
 import { type JsonSchema, when } from "./shape.ts";
 import { composeSchema, positionsSchema, reduceSchema, sitesSchema, symmetriseSchema } from "./structure.ts";
 import { splitSchema } from "./units.ts";
@@ -25,6 +26,7 @@ export function answersSchema(): JsonSchema {
     point: pointSchema().schema,
     reduce: reduceSchema().schema,
     symmetrise: symmetriseSchema().schema,
+    resite: resiteSchema().schema,
     vet: vetSchema().schema,
     absences: absencesSchema().schema,
   };
