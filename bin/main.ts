@@ -17,6 +17,7 @@ const COMMANDS: readonly string[] = [
   "point",
   "reduce",
   "symmetrise",
+  "neighbours",
   "resite",
   "vet",
   "absences",

@@ -10,6 +10,7 @@ export { groupText } from "./group-text.ts";
 export { groupName, type HeadingData, headingText } from "./heading.ts";
 export { mmcifText } from "./mmcif.ts";
 export { modesText } from "./modes-text.ts";
+export { neighboursText } from "./neighbours-text.ts";
 export { patternsText } from "./patterns-text.ts";
 export { pdbText } from "./pdb.ts";
 export { pointText } from "./point-text.ts";

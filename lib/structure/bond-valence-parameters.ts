@@ -1,7 +1,7 @@
 import { BOND_VALENCES } from "./tables/bond-valences.ts";
 
 /** Slope of all parameters, angstrom. Source: I. D. Brown, D. Altermatt, Acta Crystallographica B41 (1985) 244-247. */
-const SLOPE = 0.37;
+export const BOND_VALENCE_SLOPE = 0.37;
 
 /** An oxidation state of a cation with R0 by anion, angstrom. */
 export interface CationState {
@@ -30,5 +30,5 @@ function decode(): Map<string, CationState[]> {
 
 /** Valence of a bond of length d, in valence units. */
 export function bondValence(r0: number, d: number): number {
-  return Math.exp((r0 - d) / SLOPE);
+  return Math.exp((r0 - d) / BOND_VALENCE_SLOPE);
 }

@@ -121,6 +121,7 @@ export { type Formula, formatFormula, hillOrder, parseFormula } from "./formula-
 export { type FormulaUnits, formulaUnits, statedFormula } from "./formula-units.ts";
 export { connectedUnit, gatheredPieces } from "./gathered-pieces.ts";
 export { CENTRED_HYDROGEN } from "./hydrogen-rule.ts";
+export { type IdealShape, idealShapes } from "./ideal-shapes.ts";
 export { invariantMetric } from "./invariant-metric.ts";
 export { axesOf, changeAxes, type LatticeAxes } from "./lattice-axes.ts";
 export type { LatticeStrain } from "./lattice-match.ts";
@@ -140,7 +141,17 @@ export {
 } from "./molecular-symmetry.ts";
 export type { MolecularUnit, UnitAtom, UnitSite } from "./molecular-unit.ts";
 export { type ExtendedUnit, type LoneAtom, molecularUnits, type UnitAnalysis } from "./molecular-units.ts";
+export type { NeighbourChoice } from "./neighbour-choice.ts";
+export type { Neighbour, NeighbourAngle, SiteNeighbours } from "./neighbour-description.ts";
+export type { MeasuredQuantity } from "./neighbour-measures.ts";
 export { type Contact, contactsWithin, type SearchResult } from "./neighbour-search.ts";
+export {
+  type CodedAtom,
+  type HydrogenBond,
+  type NeighboursAnswer,
+  type NeighboursOptions,
+  neighboursAnswer,
+} from "./neighbours-answer.ts";
 export { niggliReduction } from "./niggli-reduction.ts";
 export { type Image, multiplicityOf, orbitOf, wrap } from "./orbit.ts";
 export {
@@ -182,6 +193,7 @@ export {
 } from "./resite-answer.ts";
 export { resitedOnto } from "./resited-onto.ts";
 export { cross3, dot3, length3, minus3, unit3 } from "./rotation-fit.ts";
+export { type ShapeMeasure, shapeMeasures } from "./shape-measure.ts";
 export { formatShellPattern, parseShellPattern, type ShellPattern } from "./shell-text.ts";
 export { type NearPair, type ShortDistances, shortDistances } from "./shortest-distance.ts";
 export { countNear, type SiteSymmetry, siteSymmetry } from "./site-symmetry.ts";
@@ -209,5 +221,6 @@ export {
   type SymmetrySearch,
   searchSymmetry,
 } from "./symmetry-search.ts";
+export type { TorsionRow } from "./torsion-rows.ts";
 export { type AtomGroup, hillFormula, sequenceFormula, unitFormula } from "./unit-formula.ts";
 export { type WrittenOperation, writtenOperations } from "./written-operations.ts";

@@ -1,10 +1,9 @@
 import { bondClasses } from "./bond-class.ts";
-import { BondOverrides } from "./bond-overrides.ts";
-import { judgedBonds } from "./bonds.ts";
 import type { LatticeAtom } from "./cell-atoms.ts";
 import { type BondRule, radiusSum } from "./contact-table.ts";
 import { endOfShell, SHELL_REACH, type ShellCandidate, shellCandidates } from "./coordination-shell.ts";
 import { latticeKey, type NeighbourAtoms } from "./neighbour-atoms.ts";
+import { bondRules } from "./neighbour-bonds.ts";
 import { atomsAround, type NearAtom } from "./neighbour-search.ts";
 import { vanDerWaalsSum } from "./van-der-waals-radius.ts";
 
@@ -102,10 +101,14 @@ export class NeighbourLists {
   }
 
   /** All atoms around the centres that may be there together with them, nearest first. */
-  around(reach: number, limit?: (centre: number, other: number) => number): (site: number) => NearAtom[] {
+  around(
+    reach: number,
+    limit?: (centre: number, other: number) => number,
+    sites: readonly number[] = this.centres,
+  ): (site: number) => NearAtom[] {
     const { crystal, atoms } = this.source;
     const points = atoms.map((a) => a.position);
-    const centres = this.centres.map((site) => this.source.listed(site));
+    const centres = sites.map((site) => this.source.listed(site));
     const found = atomsAround(
       crystal.metric,
       points,
@@ -114,7 +117,7 @@ export class NeighbourLists {
       limit,
     );
     const lists = new Map(
-      this.centres.map((site, k) => {
+      sites.map((site, k) => {
         const { atom: first, shift: base } = centres[k]!;
         const there = found[k]!.filter(({ atom: second, shift, distance }) => {
           return !this.source.areApart({ first, second, shift, distance });
@@ -222,30 +225,4 @@ function firstOf(list: readonly ChosenNeighbour[], count: number): ChosenNeighbo
 function atomOfKey(key: string): LatticeAtom {
   const [atom, a, b, c] = key.split(" ").map(Number);
   return { atom: atom!, shift: [a!, b!, c!] };
-}
-
-/** Per site the rules of its bonds by the key of the neighbour, seen from the listed point. */
-function bondRules(source: NeighbourAtoms): Map<number, Map<string, BondRule>> {
-  const { crystal, atoms } = source;
-  const rules = new Map(
-    source.firstImage.flatMap((atom, site) => (atom === null ? [] : [[site, new Map<string, BondRule>()] as const])),
-  );
-  const { bonds } = judgedBonds(crystal, atoms, new BondOverrides(crystal, {}), (c) => source.areApart(c));
-  const add = (centre: number, atom: number, shift: readonly number[], rule: BondRule) => {
-    if (atoms[centre]!.image !== 0) return;
-    const { site } = atoms[centre]!;
-    const base = source.listed(site).shift;
-    const moved = { atom, shift: [0, 1, 2].map((i) => shift[i]! + base[i]! + 0) as unknown as LatticeAtom["shift"] };
-    rules.get(site)!.set(latticeKey(moved), rule);
-  };
-  for (const { first, second, shift, rule } of bonds) {
-    add(first, second, shift, rule);
-    add(
-      second,
-      first,
-      shift.map((e) => -e),
-      rule,
-    );
-  }
-  return rules;
 }

@@ -56,14 +56,19 @@ export function polyhedronDistortion(
   const isRegular = regular !== undefined && ideal !== undefined && shapes[0] === ideal && volume > 0;
   return {
     volume: volume > 1e-6 ? volume : null,
-    lengthDistortion: lengths.reduce((s, l) => s + Math.abs(l - mean), 0) / (n * mean),
+    lengthDistortion: clean(lengths.reduce((s, l) => s + Math.abs(l - mean), 0) / (n * mean)),
     quadraticElongation: isRegular
       ? lengths.reduce((s, l) => s + l * l, 0) / (n * (volume / regular.volume) ** (2 / 3))
       : null,
-    angleVariance: isRegular ? variance(angles, ideal, regular) : null,
-    tau4: n === 4 ? (360 - largest[0]! - largest[1]!) / (360 - 2 * TETRAHEDRAL) : null,
-    tau5: n === 5 ? (largest[0]! - largest[1]!) / 60 : null,
+    angleVariance: isRegular ? clean(variance(angles, ideal, regular)) : null,
+    tau4: n === 4 ? clean((360 - largest[0]! - largest[1]!) / (360 - 2 * TETRAHEDRAL)) : null,
+    tau5: n === 5 ? clean((largest[0]! - largest[1]!) / 60) : null,
   };
+}
+
+/** Without the rounding of sums of doubles, so that 0 is 0. */
+function clean(x: number): number {
+  return Math.abs(x) < 1e-9 ? 0 : x;
 }
 
 function pairs(n: number): (readonly [number, number])[] {

@@ -8,6 +8,9 @@ import { type CentredPoints, centred, largestOverlap, overlapMatrix } from "./sh
 /** Up to this many corners every assignment to the ideal corners is tried. */
 export const EXHAUSTIVE_CORNERS = 6;
 
+/** Measures are rounded to this; sums of doubles and double roots reach a tenth of it. */
+const ROUNDING = 1e-6;
+
 /** How far a polyhedron is from an ideal shape. */
 export interface ShapeMeasure {
   readonly name: string;
@@ -54,7 +57,8 @@ export function measureOf(
       found = order;
     }
   }
-  const measure = Math.max(0, 100 * (1 - (best * best) / (q.squares * p.squares)));
+  const exact = 100 * (1 - (best * best) / (q.squares * p.squares));
+  const measure = Math.max(0, Math.round(exact / ROUNDING) * ROUNDING);
   return { name: shape.name, symbol: shape.symbol, measure, order: found };
 }
 

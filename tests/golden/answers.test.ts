@@ -107,6 +107,18 @@ const CASES: Readonly<Record<string, readonly string[]>> = {
     "sitefold symmetrise fixtures/calcite.cif --tolerance 3",
     "sitefold symmetrise fixtures/sodium-nitrite.cif --json",
   ],
+  neighbours: [
+    "sitefold neighbours fixtures/calcite.cif --angles",
+    "sitefold neighbours fixtures/gypsum.cif",
+    "sitefold neighbours fixtures/chalcanthite.cif --site Cu --site S --all",
+    "sitefold neighbours fixtures/potassium-alum.cif",
+    "sitefold neighbours fixtures/perovskite.cif --nearest 12 --site Ca",
+    "sitefold neighbours fixtures/iodine.cif --contacts",
+    "sitefold neighbours fixtures/urea.cif --torsions",
+    "sitefold neighbours fixtures/calcite.cif --site Mg",
+    "sitefold neighbours fixtures/calcite.cif --within 3 --bonds",
+    "sitefold neighbours fixtures/gypsum.cif --site OW --json",
+  ],
   resite: [
     "sitefold resite fixtures/forsterite-pbnm.cif",
     'sitefold resite fixtures/calcite.cif --setting "R -3 c :R"',

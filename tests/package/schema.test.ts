@@ -46,6 +46,11 @@ const LINES = [
   "reduce fixtures/gypsum.cif",
   "symmetrise fixtures/barium-titanate.cif --tolerance 0.2 --strain 0.03",
   "symmetrise fixtures/zircon.cif --given",
+  "neighbours fixtures/gypsum.cif --angles --torsions",
+  "neighbours fixtures/cassiterite.cif --within 3.5",
+  "neighbours fixtures/potassium-alum.cif --nearest 6",
+  "neighbours fixtures/urea.cif --torsions --weak",
+  "neighbours fixtures/damaged/several-elements-on-one-site.cif",
   "resite fixtures/forsterite-pbnm.cif",
   "resite fixtures/zincite.cif --standardised",
   "resite fixtures/gypsum-c2c.cif --to fixtures/gypsum-i2a.cif",
@@ -115,6 +120,10 @@ const PROMISED: Readonly<Record<string, readonly string[]>> = {
   "symmetrise fixtures/zircon.cif --given": [
     ..."declared.number found.number tolerance cell sites".split(" "),
     ...["xyz", "largest", "mean"].map((f) => `operations[].${f}`),
+  ],
+  "neighbours fixtures/gypsum.cif --angles --torsions": [
+    ...["label", "coordination", "neighbours[].label", "neighbours[].code", "neighbours[].distance"].map(ofSite),
+    "sites[].neighbours[].su",
   ],
   "resite fixtures/forsterite-pbnm.cif": [
     ..."spaceGroup.number P p cell sites".split(" "),

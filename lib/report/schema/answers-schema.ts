@@ -2,6 +2,7 @@ import { absencesSchema } from "./absences.ts";
 import { definitions } from "./common.ts";
 import { groupSchema } from "./group.ts";
 import { modesSchema, patternsSchema, polariseSchema } from "./modes.ts";
+import { neighboursSchema } from "./neighbours.ts";
 import { pointSchema } from "./point.ts";
 import { resiteSchema } from "./resite.ts";
 import { type JsonSchema, when } from "./shape.ts";
@@ -26,6 +27,7 @@ export function answersSchema(): JsonSchema {
     point: pointSchema().schema,
     reduce: reduceSchema().schema,
     symmetrise: symmetriseSchema().schema,
+    neighbours: neighboursSchema().schema,
     resite: resiteSchema().schema,
     vet: vetSchema().schema,
     absences: absencesSchema().schema,
