@@ -45,7 +45,7 @@ export function completedCell(given: CellParameters, group: SpaceGroup, origin: 
       return verdict === "waits";
     });
   }
-  const missing = facts.missing();
+  const missing = facts.missing().filter((p) => given[p] === undefined);
   if (missing.length > 0) throw incomplete(missing, given, origin);
   return metricOf(Object.fromEntries(CELL_PARAMETERS.map((p) => [p, facts.known(p)!])) as unknown as Cell);
 }
@@ -81,7 +81,7 @@ class MetricFacts {
     return "learnt";
   }
 
-  /** Parameters that have to be given as well. */
+  /** Parameters that do not follow from those learnt and those before them in the list. */
   missing(): CellParameter[] {
     return CELL_PARAMETERS.filter((p) => this.facts.addIfNew(this.row(p)));
   }

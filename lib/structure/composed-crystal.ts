@@ -20,7 +20,7 @@ const TOLD_SHIFT = 1e-3;
 
 /**
  * The crystal that a table of Wyckoff sites means. Where the group's name leaves origin or axes open, the most usual
- * setting is taken in which the cell and every site fit, and if it can be, atoms are no nearer than they come. The tolerance tells how far coordinates may be off their position.
+ * setting is taken in which the cell and every site fit; of two origins one where atoms are no nearer than they come. The tolerance tells how far coordinates may be off their position.
  * @throws InputProblem with the place in the table: what `namedGroup`, `completedCell` and `placedSite` throw,
  * `element-unknown`, `occupancy-impossible`, `position-overfull`, `tolerance-impossible`
  */
@@ -30,9 +30,11 @@ export function composedCrystal(table: SiteTable, options: CrystalOptions = {}):
   const tried = named.settings.map((setting) => ({ setting, ...composedOrNot(setting, table, tolerance) }));
   const fitting = tried.flatMap(({ setting, crystal }) => (crystal ? [{ setting, crystal }] : []));
   if (fitting.length === 0) throw tried[0]!.problem;
-  const roomy = fitting.length > 1 ? fitting.filter((f) => shortDistances(f.crystal).tooNear.length === 0) : fitting;
+  const origins = fitting.filter((f) => f.setting.axes === fitting[0]!.setting.axes);
+  const roomy = origins.length > 1 ? origins.filter((f) => shortDistances(f.crystal).tooNear.length === 0) : origins;
   const { setting, crystal } = roomy[0] ?? fitting[0]!;
-  const note = groupNote(table.group.text, named, setting, { fitting: fitting.length, roomy: roomy.length });
+  const byDistance = roomy.length > 0 && roomy.length < origins.length;
+  const note = groupNote(table.group.text, named, setting, { fitting: fitting.length, byDistance });
   return { ...crystal, notes: [note, ...crystal.notes] };
 }
 
@@ -88,26 +90,26 @@ function composedIn(setting: NamedSetting, table: SiteTable, tolerance: number):
   return crystalOf({ name: table.name, metric, group, identified, sites, notes, tolerance: ON_POSITION });
 }
 
-/** Settings that cell and sites fit, and those of them in which no atoms are nearer than they come. */
-interface FittingSettings {
+/** How many settings cell and sites fit, and whether distances decided between two origins. */
+interface Choice {
   readonly fitting: number;
-  readonly roomy: number;
+  readonly byDistance: boolean;
 }
 
 /** How the group was read, and what settled what its name leaves open. */
-function groupNote(text: string, named: NamedGroup, taken: NamedSetting, count: FittingSettings): string {
+function groupNote(text: string, named: NamedGroup, taken: NamedSetting, choice: Choice): string {
   const { understoodAs, settings, ambiguity } = named;
   const read = `space group ${text} read as ${understoodAs}`;
   if (settings.length === 1) return read;
   const open = ambiguity.join(", ") || "the setting";
-  return `${read}, which leaves open: ${open}; ${taken.name} is used, ${settledBy(count)}`;
+  return `${read}, which leaves open: ${open}; ${taken.name} is used, ${settledBy(choice)}`;
 }
 
-function settledBy({ fitting, roomy }: FittingSettings): string {
+function settledBy({ fitting, byDistance }: Choice): string {
   if (fitting === 1) return "cell and sites fit no other";
-  const asked = "write it behind the group if another is meant";
-  if (roomy === 1) return `in the other of the ${fitting} that cell and sites fit atoms are too near; ${asked}`;
-  return `the most usual of the ${roomy || fitting} that cell and sites fit; ${asked}`;
+  const hint = "write the setting behind the group if another is meant";
+  if (byDistance) return `since about the other origin atoms are too near; ${hint}`;
+  return `the most usual of ${fitting} that cell and sites fit; ${hint}`;
 }
 
 function speciesOf({ label, species, spans }: TableSite): { element: string; charge: number | null } {

@@ -137,6 +137,12 @@ function onPosition(
   su: PlacedSite["su"],
   at: PlacingGroup,
 ): PlacedSite {
+  const near = siteSymmetry(at.identified.group.operations, at.metric, x, at.tolerance);
+  const found = assignWyckoff(at.identified, near.operations);
+  if (found.letter === position.letter) {
+    return { point: near.point, su: freeOnly(su, found.form.M.n), shift: near.shift };
+  }
+  // a less special position may pass within the tolerance, and is meant if it is named
   const { point, distance } = nearestOnPosition(pointsOfPosition(at.identified, position), at.metric, x);
   if (distance > at.tolerance) throw unlike(site, position, x, at, { point, distance });
   requireLetter(site, position, point, at);

@@ -8,6 +8,8 @@ import { type SpaceGroup, spaceGroup } from "./space-group.ts";
 export interface NamedSetting {
   /** `P 1 21/c 1`, `I 41/a m d:2`, a Hall symbol. */
   readonly name: string;
+  /** Name of the axes: equal for settings that differ in their origin only. */
+  readonly axes: string;
   readonly group: SpaceGroup;
 }
 
@@ -40,8 +42,9 @@ export function namedGroup(text: string): NamedGroup {
 }
 
 function settingOf({ number, setting, transformation }: GroupNameCandidate): NamedSetting {
-  const { hermannMauguin, choice } = setting;
+  const { hermannMauguin, choice, axes } = setting;
   return {
+    axes: /^[12]?$/.test(choice) ? axes : `${axes}:${choice}`,
     name: `${hermannMauguin.full}${choice ? `:${choice}` : ""}`,
     group: spaceGroup(settingOperations({ number, toReference: transformation })),
   };
@@ -62,7 +65,7 @@ function fromHall(text: string, symbol: string, offset: number): NamedGroup {
   try {
     const group = spaceGroup(operationsFromHall(symbol.trim()).operations);
     const understoodAs = `the Hall symbol ${symbol.trim()}`;
-    return { understoodAs, settings: [{ name: symbol.trim(), group }], ambiguity: [] };
+    return { understoodAs, settings: [{ name: symbol.trim(), axes: "", group }], ambiguity: [] };
   } catch (e) {
     if (!(e instanceof InputProblem) || !e.span) throw e;
     const start = Math.min(text.length, e.span.start + offset + (symbol.length - symbol.trimStart().length));

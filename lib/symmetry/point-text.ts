@@ -33,13 +33,14 @@ function grammar(): P.Parser<WrittenPoint> {
     return { value, decimals: digits > 0 ? digits : null };
   });
   const number = P.alt(fraction, decimal).desc(`a fraction, or a decimal of at most ${MOST_DECIMALS} digits`);
-  const coordinate = P.seqMap(sign, number, blank, (s, { value, decimals }) => ({
+  const coordinate = P.seqMap(sign, number, (s, { value, decimals }) => ({
     value: { n: s * value.n + 0, d: value.d },
     decimals,
   }));
-  const separator = P.alt(P.regexp(/,\s*/), P.succeed("")).desc("a comma");
+  const separator = P.regexp(/\s*,\s*|\s+/).desc("a comma");
   built = blank
     .then(P.seqMap(coordinate, separator, coordinate, separator, coordinate, (x, _, y, __, z) => [x, y, z] as const))
+    .skip(blank)
     .skip(P.eof);
   return built;
 }

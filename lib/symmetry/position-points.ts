@@ -2,8 +2,9 @@ import type { IntVec3 } from "../algebra/index.ts";
 import { type AffineForm, directionsOfForm, formatForm, formFromSetting, imageOfForm } from "./affine-form.ts";
 import { subspaceThrough } from "./affine-subspace.ts";
 import { plainestForm } from "./plainest-form.ts";
+import { referenceGroup } from "./reference-group.ts";
 import type { AssignmentGroup } from "./site-assignment.ts";
-import { wyckoffPositions } from "./wyckoff-positions.ts";
+import { tabulated, wyckoffPosition } from "./wyckoff-positions.ts";
 
 /** Points that one triplet of a Wyckoff position stands for, modulo the lattice: the x with F x = c modulo 1. */
 export interface PositionPoints {
@@ -30,19 +31,35 @@ export interface PositionInCell {
 /** A group with what `identifyGroup` says of it. */
 export type PositionGroup = AssignmentGroup & { readonly isReference: boolean };
 
-/** The Wyckoff positions of a group in the cell in use, in the order of their letters. */
-export function positionsInCell({ group, number, toReference, isReference }: PositionGroup): PositionInCell[] {
-  return wyckoffPositions(number).map((position) => {
-    const form = isReference ? position.form : plainestForm(group, formFromSetting(position.form, toReference));
+/**
+ * The Wyckoff positions of a group in the cell in use, in the order of their letters; triplets are worked out when they
+ * are asked for.
+ */
+export function positionsInCell(context: PositionGroup): PositionInCell[] {
+  const { group, number } = context;
+  const whole = referenceGroup(number).operations.length;
+  return tabulated(number).map(({ letter, multiplicity: referenceMultiplicity }, index) => {
+    const order = whole / referenceMultiplicity;
+    let known: AffineForm | null = null;
     return {
-      letter: position.letter,
-      multiplicity: group.operations.length / position.order,
-      referenceMultiplicity: position.multiplicity,
-      order: position.order,
-      triplet: formatForm(form),
-      form,
+      letter,
+      multiplicity: group.operations.length / order,
+      referenceMultiplicity,
+      order,
+      get triplet() {
+        return formatForm(this.form);
+      },
+      get form() {
+        known ??= formInCell(context, index);
+        return known;
+      },
     };
   });
+}
+
+function formInCell({ group, number, toReference, isReference }: PositionGroup, index: number): AffineForm {
+  const { form } = wyckoffPosition(number, index);
+  return isReference ? form : plainestForm(group, formFromSetting(form, toReference));
 }
 
 /** All triplets of a position, each as the points it stands for, those equal modulo the lattice once. */

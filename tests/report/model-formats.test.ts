@@ -7,19 +7,30 @@ import {
   atomModel,
   type Crystal,
   cellContents,
+  composedCrystal,
   coordinateList,
   type ExpandedAtom,
   type ListedStructure,
   listedStructure,
   modelPositions,
   PeriodicPoints,
+  parseSiteTable,
   searchSymmetry,
+  sitesAnswer,
 } from "../../lib/structure/index.ts";
-import { identify } from "../../lib/symmetry/index.ts";
-import { readCsv, readExtendedXyz, readPdb, readStructure, readXyz } from "../support/coordinate-readers.ts";
+import { identify, settingsOf } from "../../lib/symmetry/index.ts";
+import {
+  readCsv,
+  readExtendedXyz,
+  readPdb,
+  readPositions,
+  readStructure,
+  readXyz,
+} from "../support/coordinate-readers.ts";
 import { atom, fixture } from "../support/crystals.ts";
 import { problemOf } from "../support/problem-of.ts";
 import { randomNumbers, randomStructure } from "../support/random-structures.ts";
+import { tableOf } from "../support/site-tables.ts";
 
 const heading = { comment: "a wall of the old harbour", ending: "" };
 const cif = (structure: ListedStructure, version: "1.1" | "2.0" = "1.1") => structureCif(structure, version, heading);
@@ -30,6 +41,7 @@ const READ_BACK: Readonly<Record<string, (model: AtomModel) => Crystal>> = {
   "CIF 2.0": (model) => readStructure(cif(listedStructure(model), "2.0")),
   XYZ: (model) => readXyz(xyzText(coordinateList(model)), model.metric),
   "extended XYZ": (model) => readExtendedXyz(extendedXyz(coordinateList(model))),
+  JSON: (model) => readPositions(JSON.stringify(modelPositions(model))),
   CSV: (model) => readCsv(positionsCsv(modelPositions(model)), model.metric),
   PDB: (model) => readPdb(pdbText(coordinateList(model))),
   mmCIF: (model) => readStructure(mmcifText(coordinateList(model))),
@@ -46,15 +58,29 @@ function expectSameAtoms(read: Crystal, model: AtomModel, within: number) {
   }
 }
 
-describe("a structure written and read back", () => {
+/** Composed from its sites, by letters and free parameters, in the reference setting. */
+function composed(number: number): Crystal {
+  const random = randomStructure(number, randomNumbers(number + 3000));
+  const { choice } = settingsOf(number)[0]!;
+  const group = `${number}${choice ? `:${choice}` : ""}`;
+  const crystal = composedCrystal(parseSiteTable(tableOf(random, "parameters", group)));
+  expect(crystal.identified.summary.settingName).toBe("reference");
+  expect(sitesAnswer(crystal).sites.map((s) => s.referencePosition)).toEqual(
+    sitesAnswer(random).sites.map((s) => s.referencePosition),
+  );
+  return crystal;
+}
+
+describe("a structure composed, expanded, written and read back", () => {
   it.each(Array.from({ length: 230 }, (_, i) => i + 1))("is the same, with the same type, type %i", (number) => {
-    const crystal = randomStructure(number, randomNumbers(number + 3000));
+    const crystal = composed(number);
     const kept = atomModel(crystal);
     for (const version of ["1.1", "2.0"] as const) {
       const read = readStructure(cif(listedStructure(kept), version));
       expect(read.identified.number).toBe(number);
       expect(read.disagreements).toEqual([]);
       expect(read.identified.summary.operations).toEqual(crystal.identified.summary.operations);
+      expect(sitesAnswer(read).sites.map((s) => s.wyckoff)).toEqual(sitesAnswer(crystal).sites.map((s) => s.wyckoff));
       expectSameAtoms(read, kept, 1e-4);
     }
     const plain = atomModel(crystal, { symmetry: "none", cell: { kind: "primitive" } });

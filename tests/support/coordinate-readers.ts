@@ -11,6 +11,7 @@ import {
   type Metric,
   metricOf,
   multiply3,
+  type PositionsAnswer,
   type Vec3,
 } from "../../lib/structure/index.ts";
 import { IDENTITY_OPERATION, spaceGroup } from "../../lib/symmetry/index.ts";
@@ -69,6 +70,18 @@ export function readCsv(text: string, metric: Metric): Crystal {
     occupancy: Number(at(row, "occupancy")),
   }));
   return bare(metric, atoms);
+}
+
+/** The JSON of `positions`, by its schema: the cell, and fractional coordinates. */
+export function readPositions(text: string): Crystal {
+  const { positions, cell } = JSON.parse(text) as Pick<PositionsAnswer, "positions" | "cell">;
+  const [a, b, c, alpha, beta, gamma] = cell.cell;
+  const atoms = positions.map(({ element, x, y, z, occupancy }) => ({
+    element: element!,
+    x: [x, y, z] as Vec3,
+    occupancy,
+  }));
+  return bare(metricOf({ a, b, c, alpha, beta, gamma }), atoms);
 }
 
 export function csvFields(line: string): string[] {
