@@ -78,7 +78,7 @@ interface DeclaredGroup {
 
 function declaredGroup(block: CifBlock, metric: Metric): DeclaredGroup {
   try {
-    const { identified, notes } = resolveSymmetry(declaredSymmetry(block), metric, () => null);
+    const { identified, notes } = resolveSymmetry(declaredSymmetry(block), metric, () => null, "accept");
     return { declared: identified, notes };
   } catch (e) {
     if (!(e instanceof InputProblem && e.code === "symmetry-missing")) throw e;

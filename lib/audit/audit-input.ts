@@ -84,10 +84,10 @@ function symmetrySource({ symmetrySource: source }: Crystal): ResolvedSymmetry["
 /** The group by what the file says besides operations that are none. */
 function otherStatements(declared: DeclaredSymmetry, metric: Metric): ResolvedSymmetry {
   try {
-    return resolveSymmetry(declared, metric, () => null);
+    return resolveSymmetry(declared, metric, () => null, "accept");
   } catch (e) {
     if (!(e instanceof InputProblem) || declared.operations.length === 0) throw e;
-    return resolveSymmetry({ ...declared, operations: [] }, metric, () => null);
+    return resolveSymmetry({ ...declared, operations: [] }, metric, () => null, "accept");
   }
 }
 

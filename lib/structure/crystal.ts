@@ -5,11 +5,12 @@ import { type AtomSite, readAtomSites, readNumber } from "./atom-site.ts";
 import { type Cell, METRIC_TOLERANCE, type Metric, metricOf } from "./cell.ts";
 import type { SymmetryDisagreement } from "./compare-statements.ts";
 import { cellContents, contentsMisfit } from "./composition.ts";
-import { type Arbiter, resolveSymmetry, shapeMisfit } from "./declared-group.ts";
+import { type Arbiter, resolveSymmetry } from "./declared-group.ts";
 import { declaredSymmetry, type SymmetrySource } from "./declared-symmetry.ts";
 import { parseFormula } from "./formula-text.ts";
 import { type Image, orbitOf } from "./orbit.ts";
 import { PeriodicPoints } from "./periodic-points.ts";
+import { shapeMisfit } from "./shape-misfit.ts";
 import { type SiteSymmetry, siteSymmetry } from "./site-symmetry.ts";
 
 /** Positions closer than this are one position unless the user says otherwise; angstrom. */

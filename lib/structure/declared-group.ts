@@ -10,9 +10,14 @@ import {
   settingOperations,
   spaceGroup,
 } from "../symmetry/index.ts";
-import { METRIC_TOLERANCE, type Metric, metricMisfit } from "./cell.ts";
+import { METRIC_TOLERANCE, type Metric } from "./cell.ts";
 import { compareStatements, type SymmetryDisagreement } from "./compare-statements.ts";
 import { type Declared, type DeclaredSymmetry, listedGroup, type SymmetrySource } from "./declared-symmetry.ts";
+import { primitiveSettings } from "./primitive-setting.ts";
+import { shapeMisfit } from "./shape-misfit.ts";
+
+/** Strain above which a name cannot be meant for a cell: no rounding and no s.u. explains it. */
+export const NAME_STRAIN = 0.05;
 
 /** The group of a block and how it was settled. */
 export interface ResolvedSymmetry {
@@ -29,10 +34,17 @@ export type Arbiter = (groups: readonly SpaceGroup[]) => { readonly index: numbe
  * The space group of a block: the operations listed if there are any; else the Hall symbol, else the name, else the
  * number. The other statements are compared with it; every disagreement is told.
  * @param arbiter settles what a name leaves open after the shape of the cell was asked
- * @throws InputProblem `symmetry-missing`, or the problem of the statement in use where that cannot be read
+ * @param strained whether a name whose group strains the cell by more than NAME_STRAIN is refused or taken all the same
+ * @throws InputProblem `symmetry-missing`, `cell-not-of-group`, or the problem of the statement in use where that cannot
+ *   be read
  */
-export function resolveSymmetry(declared: DeclaredSymmetry, metric: Metric, arbiter: Arbiter): ResolvedSymmetry {
-  const base = fromOperations(declared) ?? fromHall(declared) ?? fromName(declared, metric, arbiter);
+export function resolveSymmetry(
+  declared: DeclaredSymmetry,
+  metric: Metric,
+  arbiter: Arbiter,
+  strained: "refuse" | "accept" = "refuse",
+): ResolvedSymmetry {
+  const base = fromOperations(declared) ?? fromHall(declared) ?? fromName(declared, metric, arbiter, strained);
   if (!base) {
     throw new InputProblem(
       "symmetry-missing",
@@ -44,7 +56,7 @@ export function resolveSymmetry(declared: DeclaredSymmetry, metric: Metric, arbi
   const { group, source } = base;
   const stated = Number(declared.number?.text);
   const identified = identifyGroup(group, Number.isInteger(stated) ? stated : null);
-  const disagreements = compareStatements(declared, identified, source);
+  const disagreements = [...base.disagreements, ...compareStatements(declared, identified, source)];
   return { identified, source, notes: [...base.notes, ...disagreements.map((d) => d.message)], disagreements };
 }
 
@@ -52,22 +64,29 @@ interface Base {
   readonly group: SpaceGroup;
   readonly source: SymmetrySource;
   readonly notes: readonly string[];
+  readonly disagreements: readonly SymmetryDisagreement[];
 }
 
 function fromOperations({ operations }: DeclaredSymmetry): Base | null {
   const listed = listedGroup(operations);
   if (!listed) return null;
   const notes = ["symmetry: the operations listed in the file", ...listed.notes];
-  return { group: spaceGroup(listed.operations), source: "operations", notes };
+  return { group: spaceGroup(listed.operations), source: "operations", notes, disagreements: [] };
 }
 
 function fromHall({ hall }: DeclaredSymmetry): Base | null {
   if (!hall) return null;
   const group = placed(hall, () => spaceGroup(operationsFromHall(hall.text).operations));
-  return { group, source: "hall", notes: [`symmetry: the Hall symbol ${hall.text}; no operations are listed`] };
+  const notes = [`symmetry: the Hall symbol ${hall.text}; no operations are listed`];
+  return { group, source: "hall", notes, disagreements: [] };
 }
 
-function fromName(declared: DeclaredSymmetry, metric: Metric, arbiter: Arbiter): Base | null {
+function fromName(
+  declared: DeclaredSymmetry,
+  metric: Metric,
+  arbiter: Arbiter,
+  strained: "refuse" | "accept",
+): Base | null {
   const name = declared.hermannMauguin ?? declared.schoenflies;
   const stated = name ?? declared.number;
   if (!stated) return null;
@@ -75,15 +94,63 @@ function fromName(declared: DeclaredSymmetry, metric: Metric, arbiter: Arbiter):
   const what = name ? `the name ${name.text}` : `the number ${stated.text}`;
   const notes = [`symmetry: ${what}, read as ${reading.understoodAs}; no operations are listed`];
   const narrowed = numberFits(reading, declared.number);
-  const groups = narrowed.map(groupOf);
-  const fitting = groups.map((g, i) => ({ g, i })).filter(({ g }) => shapeMisfit(metric, g) <= METRIC_TOLERANCE);
-  const open = fitting.length > 0 ? fitting : [{ g: groups[0]!, i: 0 }];
-  if (groups.length > 1 && open.length < groups.length)
-    notes.push(`the shape of the cell leaves ${open.length} of ${groups.length} settings`);
-  const verdict = open.length > 1 ? arbiter(open.map(({ g }) => g)) : null;
+  const { open, note, disagreements } = settingsOfCell(metric, narrowed, strained, stated, what);
+  notes.push(...note);
+  const verdict = open.length > 1 ? arbiter(open.map(({ group }) => group)) : null;
   const chosen = open[verdict?.index ?? 0]!;
-  if (open.length > 1) notes.push(openText(reading, narrowed[chosen.i]!, verdict?.why ?? null));
-  return { group: chosen.g, source: name ? "name" : "number", notes };
+  if (open.length > 1) notes.push(openText(reading, narrowed[chosen.candidate]!, verdict?.why ?? null));
+  return { group: chosen.group, source: name ? "name" : "number", notes, disagreements };
+}
+
+interface OpenSetting {
+  readonly group: SpaceGroup;
+  readonly candidate: number;
+}
+
+/** The settings of a name that the shape of the cell leaves: conventional ones, else primitive ones, else the nearest. */
+function settingsOfCell(
+  metric: Metric,
+  candidates: readonly GroupNameCandidate[],
+  strained: "refuse" | "accept",
+  stated: Declared,
+  what: string,
+): Pick<Base, "disagreements"> & { open: readonly OpenSetting[]; note: readonly string[] } {
+  const all = candidates.map((c, candidate) => {
+    const group = groupOf(c);
+    return { group, candidate, strain: shapeMisfit(metric, group) };
+  });
+  const fitting = all.filter(({ strain }) => strain <= METRIC_TOLERANCE);
+  if (fitting.length > 0) {
+    const left = `the shape of the cell leaves ${fitting.length} of ${all.length} settings`;
+    return { open: fitting, note: all.length > 1 && fitting.length < all.length ? [left] : [], disagreements: [] };
+  }
+  const nearest = all.reduce((a, b) => (b.strain < a.strain ? b : a));
+  const percent = `${(100 * nearest.strain).toFixed(1)} %`;
+  const primitive = primitiveSettings(
+    metric,
+    candidates,
+    all.map((a) => a.group),
+  );
+  const [first] = primitive;
+  if (first && nearest.strain > NAME_STRAIN) {
+    const message =
+      `the cell is not the conventional one of ${what}, whose operations would strain it by ${percent}, ` +
+      `but the primitive one, with axes ${first.axes}: they are used over these`;
+    return {
+      open: primitive,
+      note: [],
+      disagreements: [{ kind: "name", declared: stated, level: "setting", message }],
+    };
+  }
+  if (nearest.strain > NAME_STRAIN && strained === "refuse") {
+    throw new InputProblem(
+      "cell-not-of-group",
+      `${stated.name}: the cell does not have the shape that ${what} needs (strain ${percent}), nor that of a usual primitive cell of its lattice`,
+      stated.span,
+      "correct the cell or the name, or list the operations in the axes of this cell",
+    );
+  }
+  return { open: [nearest], note: [], disagreements: [] };
 }
 
 function openText(reading: GroupNameReading, chosen: GroupNameCandidate, why: string | null): string {
@@ -102,11 +169,6 @@ function numberFits(reading: GroupNameReading, number: Declared | null): readonl
 
 function groupOf({ number, transformation }: GroupNameCandidate): SpaceGroup {
   return spaceGroup(settingOperations({ number, toReference: transformation }));
-}
-
-/** Largest strain of the cell under the operations of a group; dimensionless. */
-export function shapeMisfit(metric: Metric, group: SpaceGroup): number {
-  return group.representatives.reduce((worst, a) => Math.max(worst, metricMisfit(metric, a.W)), 0);
 }
 
 /** Runs a reader of a statement; its problem is placed in the file. */

@@ -101,7 +101,6 @@ export {
   type Arbiter,
   type ResolvedSymmetry,
   resolveSymmetry,
-  shapeMisfit,
 } from "./declared-group.ts";
 export {
   type Declared,
@@ -194,6 +193,7 @@ export {
 export { resitedOnto } from "./resited-onto.ts";
 export { cross3, dot3, length3, minus3, unit3 } from "./rotation-fit.ts";
 export { type ShapeMeasure, shapeMeasures } from "./shape-measure.ts";
+export { shapeMisfit } from "./shape-misfit.ts";
 export { formatShellPattern, parseShellPattern, type ShellPattern } from "./shell-text.ts";
 export { type NearPair, type ShortDistances, shortDistances } from "./shortest-distance.ts";
 export { countNear, type SiteSymmetry, siteSymmetry } from "./site-symmetry.ts";

@@ -216,7 +216,7 @@ describe("linear groups", () => {
   });
 });
 
-test("a name that is none is refused in one sentence that names it once", () => {
+it("a name that is none is refused in one sentence that names it once", () => {
   const message = (name: string) => {
     try {
       pointAnswer(name);
