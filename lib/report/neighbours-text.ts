@@ -2,7 +2,7 @@ import type { NeighboursAnswer, SiteNeighbours } from "../structure/index.ts";
 import { formatNumber } from "./format-number.ts";
 import { hydrogenBondTable } from "./hydrogen-bonds-text.ts";
 import { quantity } from "./quantity-text.ts";
-import { isPolyhedron, siteDetails } from "./site-neighbours-text.ts";
+import { areAlike, isPolyhedron, siteDetails } from "./site-neighbours-text.ts";
 import { textTable, wrapText } from "./table.ts";
 
 const WIDTH = 110;
@@ -105,7 +105,7 @@ function summaryTable(sites: readonly SiteNeighbours[], left: number, all: boole
     String(s.coordination),
     s.formula,
     rangeText(s),
-    s.meanDistance && s.coordination > 1 ? quantity(s.meanDistance, 4) : "",
+    s.meanDistance && s.coordination > 1 && areAlike(s) ? quantity(s.meanDistance, 4) : "",
     s.numbers.effective === null ? "" : formatNumber(s.numbers.effective, 2),
     s.numbers.solidAngle === null ? "" : formatNumber(s.numbers.solidAngle, 2),
     ...(hasValences ? [valenceText(s)] : []),

@@ -19,6 +19,11 @@ export function siteDetails(site: SiteNeighbours, all: boolean): string {
 /** Longest over shortest distance beyond which the distances, not the directions, make the shape measures. */
 const LARGEST_SPREAD = 1.6;
 
+/** Whether all neighbours are of one element. */
+export function areAlike({ neighbours }: SiteNeighbours): boolean {
+  return neighbours.every((n) => n.element === neighbours[0]!.element);
+}
+
 /** Whether the neighbours make a polyhedron that a shape measure can judge. */
 export function isPolyhedron({ neighbours, shapes }: SiteNeighbours): boolean {
   const [first, last] = [neighbours[0], neighbours.at(-1)];
@@ -30,7 +35,10 @@ function headText(site: SiteNeighbours): string {
   const { label, alsoHere, formula, coordination, occupied, numbers, gap, kind, next } = site;
   const shared = alsoHere.length > 0 ? ` (with ${alsoHere.join(", ")})` : "";
   const partly = Math.abs(occupied - coordination) > 0.01 ? `, occupied ${formatNumber(occupied, 2)}` : "";
-  const words = [`${label}${shared}: ${formula}, ${coordination} neighbour${coordination === 1 ? "" : "s"}${partly}`];
+  const either = site.alternatives ? ", some of them alternatives" : "";
+  const words = [
+    `${label}${shared}: ${formula}, ${coordination} neighbour${coordination === 1 ? "" : "s"}${partly}${either}`,
+  ];
   if (numbers.bonds > 0 && numbers.bonds !== coordination) words.push(`${numbers.bonds} bonded`);
   if (gap?.next && kind === "metal")
     words.push(gapText(gap.last, gap.next, gap.count === coordination ? null : gap.count));
@@ -76,9 +84,9 @@ function neighbourTable({ neighbours }: SiteNeighbours, all: boolean): string {
 }
 
 function shapeLine(site: SiteNeighbours): string {
-  const { kind, shapes, distortion, shapeSearch, neighbours } = site;
+  const { kind, shapes, distortion, shapeSearch } = site;
   if (!distortion || !isPolyhedron(site)) return "";
-  const alike = neighbours.every((n) => n.element === neighbours[0]!.element);
+  const alike = areAlike(site);
   const named = shapes
     .slice(0, SHAPES)
     .map((s) => `${s.name}${s.symbol ? ` (${s.symbol})` : ""} ${formatNumber(s.measure, 3)}`);

@@ -9,7 +9,7 @@ import { length3, minus3 } from "./rotation-fit.ts";
 /** No first shell reaches beyond this many sums of the covalent radii. */
 export const SHELL_REACH = 1.6;
 
-/** An atom bonded to a neighbour that is nearer by more than this belongs to the second shell; angstrom. */
+/** An atom bonded to a non-metal that is nearer by more than this belongs to the second shell; angstrom. */
 const BEHIND = 0.3;
 
 /** A neighbour of a centre. */
@@ -47,7 +47,7 @@ export function coordinationShell(
 
 /**
  * What may belong to the first shell of an atom, nearest first in sums of covalent radii: non-metals only, if the nearest
- * is one, and none that is bonded to a nearer candidate.
+ * is one, and none that is bonded to a nearer non-metal.
  * @param near all atoms around it within SHELL_REACH
  */
 export function shellCandidates(
@@ -80,9 +80,11 @@ function neighboursOf(centre: number, contacts: readonly Contact[]): ShellAtom[]
 }
 
 function withoutThoseBehind(ligands: readonly ShellCandidate[]): ShellCandidate[] {
+  const { nonMetal } = bondClasses();
   const direct: ShellCandidate[] = [];
   for (const far of [...ligands].sort((a, b) => a.distance - b.distance)) {
     const isBehind = direct.some((near) => {
+      if (near.element === null || !nonMetal.has(near.element)) return false; // metals pack; nothing stands behind them
       const sum = radiusSum(near.element, far.element);
       if (sum === null || far.distance <= near.distance + BEHIND) return false;
       return length3(minus3(near.place, far.place)) <= sum + BOND_TOLERANCE;

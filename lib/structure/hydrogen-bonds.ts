@@ -79,12 +79,13 @@ export class HydrogenBonds {
       return ACCEPTORS.has(this.element(a)) ? (vanDerWaalsSum("H", this.element(a)) ?? 0) : 0;
     };
     const near = this.lists.around(LONGEST_CONTACT, limit, hydrogens);
+    const seen = new Set<string>();
     return hydrogens.flatMap((site) => {
       const listed = source.listed(site);
       return this.donorsOf(site, near(site), weak).flatMap((donor) =>
         near(site)
           .filter((a) => latticeKey(a) !== latticeKey(donor) && this.accepts(a.atom))
-          .flatMap((acceptor) => this.hydrogenBond(donor, listed, acceptor) ?? []),
+          .flatMap((acceptor) => this.hydrogenBond(donor, listed, acceptor, seen) ?? []),
       );
     });
   }
@@ -105,14 +106,17 @@ export class HydrogenBonds {
     return element !== "N" || around.length < 4;
   }
 
-  /** The bond moved so that the donor stands as listed; null where the angle is too small. */
-  private hydrogenBond(d: LatticeAtom, h: LatticeAtom, a: LatticeAtom): FoundHydrogenBond | null {
+  /** The bond moved so that the donor stands as listed; null where the angle is too small or the bond was seen before. */
+  private hydrogenBond(d: LatticeAtom, h: LatticeAtom, a: LatticeAtom, seen: Set<string>): FoundHydrogenBond | null {
     const { source, measures } = this;
     const angle = measures.angle(d, h, a);
     if (angle.value < LEAST_HYDROGEN_ANGLE) return null;
     const hydrogen = source.reverse(h, d);
     const donor = source.listed(source.atoms[d.atom]!.site);
     const acceptor = source.reverse(a, d);
+    const orbit = this.orbit(donor, [hydrogen, acceptor]);
+    if (seen.has(orbit[0]!)) return null;
+    for (const key of orbit) seen.add(key);
     return {
       donor,
       hydrogen,
@@ -121,14 +125,16 @@ export class HydrogenBonds {
       hydrogenAcceptor: measures.distance(hydrogen, acceptor),
       donorAcceptor: measures.distance(donor, acceptor),
       angle,
-      count: this.orbitSize(donor, [hydrogen, acceptor]),
+      count: orbit.length,
     };
   }
 
-  private orbitSize(donor: LatticeAtom, others: readonly LatticeAtom[]): number {
+  /** Keys of the images of other atoms under the site symmetry of the donor. */
+  private orbit(donor: LatticeAtom, others: readonly LatticeAtom[]): string[] {
     const { site } = this.source.atoms[donor.atom]!;
     const { operations } = this.source.crystal.sites[site]!.symmetry;
-    return new Set(operations.map((g) => others.map((o) => latticeKey(this.source.action.image(g, o))).join())).size;
+    const keys = operations.map((g) => others.map((o) => latticeKey(this.source.action.image(g, o))).join());
+    return [...new Set(keys.map((key) => `${site}: ${key}`))];
   }
 
   private withoutHydrogen(shells: ReadonlyMap<number, readonly ChosenNeighbour[]>): FoundHydrogenBond[] {

@@ -56,6 +56,14 @@ export class NeighbourAtoms {
     return excludeEachOther(p, q, contact.distance) || !this.together(contact);
   }
 
+  /** Whether two atoms of the lattice are alternatives. */
+  excludes(a: LatticeAtom, b: LatticeAtom): boolean {
+    const shift = a.shift.map((e, i) => b.shift[i]! - e) as unknown as IntVec3;
+    const [x, y] = [this.cartesian(a), this.cartesian(b)];
+    const distance = Math.hypot(y[0] - x[0], y[1] - x[1], y[2] - x[2]);
+    return this.areApart({ first: a.atom, second: b.atom, shift, distance });
+  }
+
   /** The listed point of a site as an atom of the lattice. */
   listed(site: number): LatticeAtom {
     const atom = this.firstImage[site]!;

@@ -48,6 +48,7 @@ const FARTHEST = 24;
 export class NeighbourLists {
   private readonly source: NeighbourAtoms;
   private readonly rules: ReadonlyMap<number, ReadonlyMap<string, BondRule>>;
+  private ends: ReadonlyMap<number, ShellEnd | null> | null = null; // found when first asked for
   /** Indices of sites that have lists. */
   readonly centres: readonly number[];
 
@@ -80,6 +81,11 @@ export class NeighbourLists {
 
   /** Ends of the first shells by the widest gap; null where nothing lies within SHELL_REACH. */
   shellEnds(): ReadonlyMap<number, ShellEnd | null> {
+    this.ends ??= this.findShellEnds();
+    return this.ends;
+  }
+
+  private findShellEnds(): ReadonlyMap<number, ShellEnd | null> {
     const { source } = this;
     const { limit, reach } = this.pairLimit((a, b) => SHELL_REACH * (radiusSum(a, b) ?? 0));
     const near = this.around(reach, limit);

@@ -91,6 +91,8 @@ export interface SiteNeighbours {
   readonly next: { readonly label: string; readonly distance: number } | null;
   readonly meanDistance: MeasuredQuantity | null;
   readonly valence: ValenceSum | null;
+  /** Whether some neighbours are never there at the same time; there is no shape then. */
+  readonly alternatives: boolean;
   /** Best first. */
   readonly shapes: readonly CoordinationShape[];
   /** Whether every assignment of corners was tried. */

@@ -19,7 +19,7 @@ export interface SiteDomains {
 }
 
 /** Neighbours are looked for within the first of these; where they do not close the domain, within the next; angstrom. */
-const REACHES = [6, 12] as const;
+const REACHES = [6, 9] as const;
 
 /** Domains of atoms; those that reach farther than half the last reach, into a void, are left out. */
 export function atomDomains(source: NeighbourAtoms, lists: NeighbourLists, centres: readonly number[]): SiteDomains {

@@ -48,8 +48,9 @@ export function siteNeighbours(context: SiteContext, site: number, around: SiteS
   const orbits = orbitsOf(singles, permutations, String);
   const orbitOf = new Map(orbits.flatMap((members, k) => members.map((i) => [i, k] as const)));
   const neighbours = around.chosen.map((n, i) => neighbourOf(context, site, listed, n, orbitOf.get(i)!, around.shares));
+  const alternatives = around.chosen.some((a, i) => around.chosen.slice(0, i).some((b) => source.excludes(a, b)));
   const places = around.chosen.map((n) => measures.between(listed, n));
-  const shapes = shapeMeasures(places);
+  const shapes = alternatives ? [] : shapeMeasures(places);
   return {
     label,
     element,
@@ -74,7 +75,8 @@ export function siteNeighbours(context: SiteContext, site: number, around: SiteS
     valence: valences.sum(site, measures, listed),
     shapes: shapes.map(({ name, symbol, measure }) => ({ name, symbol, measure })),
     shapeSearch: places.length <= EXHAUSTIVE_CORNERS ? "exhaustive" : "turns",
-    distortion: polyhedronDistortion(places, shapes),
+    distortion: alternatives ? null : polyhedronDistortion(places, shapes),
+    alternatives,
     neighbours,
     angles: context.withAngles || neighbours.length === 2 ? anglesOf(context, listed, around.chosen, permutations) : [],
   };
@@ -142,12 +144,14 @@ function meanDistance(
 }
 
 function anglesOf(
-  { measures }: SiteContext,
+  { source, measures }: SiteContext,
   listed: LatticeAtom,
   chosen: readonly ChosenNeighbour[],
   permutations: readonly (readonly number[])[],
 ): NeighbourAngle[] {
-  const pairs = chosen.flatMap((_, i) => chosen.slice(i + 1).map((__, k) => [i, i + k + 1] as const));
+  const pairs = chosen
+    .flatMap((_, i) => chosen.slice(i + 1).map((__, k) => [i, i + k + 1] as const))
+    .filter(([i, j]) => !source.excludes(chosen[i]!, chosen[j]!));
   const orbits = orbitsOf(pairs, permutations, ([a = 0, b = 0]) => (a < b ? `${a} ${b}` : `${b} ${a}`));
   return orbits.map((members) => {
     const ends = pairs[members[0]!]!;

@@ -96,6 +96,7 @@ const site = () =>
         hydrogens: count("bonded to the site, and not in the sum"),
       }),
     ),
+    alternatives: flag("whether some neighbours are never there at the same time; there is no shape then"),
     shapes: list(
       object<SiteNeighbours["shapes"][number]>({ name: text(), symbol: orNull(text()), measure: amount("0 to 100") }),
       "continuous shape measures, best first",
