@@ -12,6 +12,12 @@ import { Scanner } from "./scanner.ts";
  * next data name, loop or block. `requireClean` makes the reading strict. Time and memory are linear in the length.
  * Sources: S. R. Hall, F. H. Allen, I. D. Brown, Acta Cryst. A 47, 655 (1991); International Tables for Crystallography
  * G (2006), chapter 2.2; H. J. Bernstein et al., J. Appl. Cryst. 49, 277 (2016) for CIF 2.0.
+ * @example
+ * ```ts
+ * const { value, problems } = readCif("data_salt _cell_length_a 5.64(1)");
+ * findNumb(value.blocks[0]!, "_cell.length_a")!.value; // 5.64
+ * problems.length; // 0
+ * ```
  */
 export function readCif(text: string): ParseResult<CifDocument> {
   const problems = new ProblemList();

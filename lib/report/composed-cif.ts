@@ -7,6 +7,15 @@ import { structureCif } from "./structure-cif.ts";
 /**
  * A composed structure as a CIF: besides cell, symmetry and sites its formula, Z, mass and density, of which the comment
  * says that they are computed.
+ * @example
+ * ```ts
+ * const rutile = composedCrystal(parseSiteTable("group 136\ncell a=4.59 c=2.96\nTi Ti4+ 2a\nO O2- 4f x=0.305"));
+ * const { answer, notes } = composeAnswer(rutile);
+ * const cif = composedCif(listedStructure(atomModel(rutile)), answer, notes, "1.1");
+ * const block = requireClean(readCif(cif)).blocks[0]!;
+ * findNumb(block, "_cell.formula_units_Z")!.value; // 2
+ * findLoop(block, "_atom_type.oxidation_number")!.rowCount; // 2
+ * ```
  */
 export function composedCif(
   structure: ListedStructure,

@@ -36,6 +36,12 @@ const ATOM = [
  * All atoms of a cell as a file of the category atom_site with Cartesian coordinates, in P 1.
  * Source of the data names: PDBx/mmCIF dictionary, version 5 (wwPDB): entry, entity, chem_comp, struct_asym, cell,
  * symmetry, atom_type, atom_site.
+ * @example
+ * ```ts
+ * const halite = composedCrystal(parseSiteTable("group 225\ncell a=5.64\nNa 4a\nCl 4b"));
+ * const block = requireClean(readCif(mmcifText(coordinateList(atomModel(halite, { symmetry: "none" }))))).blocks[0]!;
+ * findLoop(block, "_atom_site.Cartn_x")!.rowCount; // 8
+ * ```
  */
 export function mmcifText(list: CoordinateList): string {
   const id = blockName(list.name, "");

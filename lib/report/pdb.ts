@@ -13,6 +13,12 @@ const EIGHT_PI_SQUARED = 8 * Math.PI * Math.PI;
  * that does not repeat gets the unit cell 1 1 1 90 90 90, as the format asks where there is no crystal.
  * @throws InputProblem `format-too-small` if numbers of atoms, coordinates or names do not fit the columns
  * Source: Protein Data Bank Contents Guide, Atomic Coordinate Entry Format, version 3.3 (wwPDB, 2012).
+ * @example
+ * ```ts
+ * const halite = composedCrystal(parseSiteTable("group 225\ncell a=5.64\nNa 4a\nCl 4b"));
+ * const list = coordinateList(atomModel(halite, { symmetry: "none", cell: { kind: "primitive" } }));
+ * pdbText(list).split("\n")[0]; // "CRYST1    3.988    3.988    3.988  60.00  60.00  60.00 P 1           1          "
+ * ```
  */
 export function pdbText(list: CoordinateList): string {
   if (list.atoms.length > MOST_ATOMS)

@@ -6,6 +6,13 @@ const NAMES = ["label", "element", "occupancy", "x", "y", "z", "operation", "cod
 /**
  * Positions as comma-separated values with a line of names; fractional coordinates with eight decimals.
  * Source: Y. Shafranovich, RFC 4180 (2005): lines end with CR LF, fields with commas or quotes are quoted.
+ * @example
+ * ```ts
+ * const halite = composedCrystal(parseSiteTable("group 225\ncell a=5.64\nNa 4a\nCl 4b"));
+ * const [names, first] = positionsCsv(positionsAnswer(halite)).split("\r\n");
+ * names; // "label,element,occupancy,x,y,z,operation,code,meaning"
+ * first; // 'Na,Na,1,0.00000000,0.00000000,0.00000000,"x,y,z",1_555,1'
+ * ```
  */
 export function positionsCsv({ positions }: PositionsAnswer): string {
   const lines = [NAMES.join(",")];

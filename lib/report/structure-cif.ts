@@ -21,7 +21,17 @@ export interface CifHeading {
   readonly items?: readonly WritableItem[];
 }
 
-/** A structure as a CIF: cell, symmetry with all operations, sites, displacement parameters. */
+/**
+ * A structure as a CIF: cell, symmetry with all operations, sites, displacement parameters.
+ * @example
+ * ```ts
+ * const halite = composedCrystal(parseSiteTable("group 225\ncell a=5.64\nNa 4a\nCl 4b"));
+ * const cif = structureCif(listedStructure(atomModel(halite)), "1.1", { comment: "table salt", ending: "" });
+ * const again = crystalFromBlock(requireClean(readCif(cif)).blocks[0]!);
+ * again.identified.summary.hermannMauguin; // "F m -3 m"
+ * cellContents(again.sites); // new Map([["Na", 4], ["Cl", 4]])
+ * ```
+ */
 export function structureCif(structure: ListedStructure, version: CifVersion, heading: CifHeading): string {
   const { cell, volume, spaceGroup, sites } = structure;
   const named = spaceGroup !== null && spaceGroup.settingName !== "unconventional";

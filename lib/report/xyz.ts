@@ -6,7 +6,15 @@ const DECIMALS = 6;
 /** The symbol that stands for an atom whose element is not known. */
 const UNKNOWN = "X";
 
-/** XYZ: the number of atoms, a line of comment, then element and Cartesian coordinates in angstrom, a line each. */
+/**
+ * XYZ: the number of atoms, a line of comment, then element and Cartesian coordinates in angstrom, a line each.
+ * @example
+ * ```ts
+ * const halite = composedCrystal(parseSiteTable("group 225\ncell a=5.64\nNa 4a\nCl 4b"));
+ * const list = coordinateList(atomModel(halite, { symmetry: "none", cell: { kind: "primitive" } }));
+ * xyzText(list).split("\n")[3]; // "Cl 3.988082 2.302520 1.628128"
+ * ```
+ */
 export function xyzText(list: CoordinateList): string {
   const lines = [String(list.atoms.length), oneLine(list.name)];
   for (const atom of list.atoms) lines.push(`${symbolOf(atom)} ${coordinates(atom)}`);
@@ -16,6 +24,12 @@ export function xyzText(list: CoordinateList): string {
 /**
  * Extended XYZ: the second line holds `key=value` pairs, among them the lattice (Cartesian components of a, b, c) and
  * the meaning of the columns: species, position, occupancy, label of the site, number of the operation that made it.
+ * @example
+ * ```ts
+ * const halite = composedCrystal(parseSiteTable("group 225\ncell a=5.64\nNa 4a\nCl 4b"));
+ * const list = coordinateList(atomModel(halite, { symmetry: "none", cell: { kind: "primitive" } }));
+ * extendedXyz(list).split("\n")[3]; // "Cl 3.988082 2.302520 1.628128 1 Cl 1"
+ * ```
  */
 export function extendedXyz(list: CoordinateList): string {
   const lattice = list.cell ? [`Lattice="${list.axes.flatMap((axis) => axis.map(figure)).join(" ")}"`] : [];

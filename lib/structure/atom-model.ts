@@ -43,6 +43,15 @@ export interface AtomModel {
 /**
  * The atoms asked for, with the symmetry that the cell can hold or without.
  * @throws InputProblem as `changeOfCell` and `expandedAtoms`
+ * @example
+ * ```ts
+ * const halite = composedCrystal(parseSiteTable("group 225\ncell a=5.64\nNa 4a\nCl 4b"));
+ * atomModel(halite).atoms.length; // 8
+ * atomModel(halite, { cell: { kind: "primitive" } }).atoms.length; // 2
+ * atomModel(halite, { range: parseRange("0:1,0:1,0:1") }).atoms.length; // 27
+ * atomModel(halite, { content: "asymmetric" }).atoms.length; // 2
+ * atomModel(halite, { cell: parseCellRequest("2,1,1"), symmetry: "none" }).symmetry; // "none"
+ * ```
  */
 export function atomModel(crystal: Crystal, options: ModelOptions = {}): AtomModel {
   const transformation = options.cell ? requestedCell(crystal, options.cell) : IDENTITY_TRANSFORMATION;

@@ -15,6 +15,12 @@ export type CellRequest =
  * Reads a cell: `primitive`, `reference`, multiples of the axes `2,2,1`, a matrix of nine integers row by row whose
  * columns are the new axes, or axes and origin `a-b,a+b,c;0,0,1/4`.
  * @throws InputProblem `cell-unreadable`, and what `parseTransformation` throws
+ * @example
+ * ```ts
+ * parseCellRequest("primitive").kind; // "primitive"
+ * formatCellRequest(parseCellRequest("2,2,1")); // "2a,2b,c;0,0,0"
+ * formatCellRequest(parseCellRequest("a-b,a+b,c;0,0,1/4")); // "a-b,a+b,c;0,0,1/4"
+ * ```
  */
 export function parseCellRequest(text: string): CellRequest {
   const plain = text.trim();
@@ -48,7 +54,16 @@ function unreadable(text: string): InputProblem {
   );
 }
 
-/** The change of cell that a request means for a crystal; the primitive cell is the Niggli cell. */
+/**
+ * The change of cell that a request means for a crystal; the primitive cell is the Niggli cell.
+ * @example
+ * ```ts
+ * const halite = composedCrystal(parseSiteTable("group 225\ncell a=5.64\nNa 4a\nCl 4b"));
+ * const { P, p } = requestedCell(halite, { kind: "primitive" });
+ * ratDeterminant(P); // { n: 1, d: 4 }
+ * formatVector(p); // "0,0,0"
+ * ```
+ */
 export function requestedCell(crystal: Crystal, request: CellRequest): Transformation {
   if (request.kind === "axes") return request.transformation;
   if (request.kind === "reference") return crystal.identified.toReference;

@@ -42,6 +42,14 @@ export function metricIn(metric: Metric, P: RatMat3): Metric {
  * are integer in it, with every translation of the crystal. Worked out exactly; an orbit that falls apart under fewer
  * operations gets a site for each part.
  * @throws InputProblem `cell-left-handed`, `cell-no-lattice`, `cell-too-large`, `operations-too-many`
+ * @example
+ * ```ts
+ * const halite = composedCrystal(parseSiteTable("group 225\ncell a=5.64\nNa 4a\nCl 4b"));
+ * const { crystal, rotations } = changeOfCell(halite, multiplesOf(1, 1, 2));
+ * rotations; // { before: 48, after: 16 }
+ * crystal.identified.summary.hermannMauguin; // "I 4/m m m"
+ * crystal.metric.volume / halite.metric.volume; // 2
+ * ```
  */
 export function changeOfCell(crystal: Crystal, transformation: Transformation): ChangedCell {
   const { representatives, centrings } = crystal.group;

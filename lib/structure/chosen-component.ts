@@ -24,6 +24,21 @@ const FULL = 0.98;
  * The crystal with one disorder group of each assembly named, fully occupied, and the others of that assembly left out.
  * @param wanted `2` for every assembly that has a group 2, `A:1,B:2` for assemblies by name
  * @throws InputProblem `component-unknown` with the groups that there are
+ * @example
+ * ```ts
+ * const document = requireClean(
+ *   readCif(`data_split
+ *     _cell_length_a 6  _cell_length_b 7  _cell_length_c 8
+ *     _cell_angle_alpha 90  _cell_angle_beta 90  _cell_angle_gamma 90
+ *     _space_group_name_H-M_alt "P 1"
+ *     loop_ _atom_site_label _atom_site_fract_x _atom_site_fract_y _atom_site_fract_z
+ *           _atom_site_occupancy _atom_site_disorder_group
+ *     C1 0.1 0.1 0.1 1 .  O1A 0.3 0.1 0.1 0.6 1  O1B 0.25 0.2 0.1 0.4 2`),
+ * );
+ * const { crystal, notes } = chosenComponent(crystalFromBlock(document.blocks[0]!), "2");
+ * crystal.sites.map((s) => [s.label, s.occupancy]); // [["C1", 1], ["O1B", 1]]
+ * notes; // ["disorder groups 2 taken; left out: O1A"]
+ * ```
  */
 export function chosenComponent(crystal: Crystal, wanted: string): DecidedCrystal {
   const names = wanted.split(",").map((word): ComponentName => {
@@ -72,6 +87,13 @@ function unknown({ assembly, group }: ComponentName, grouped: readonly CrystalSi
  * One ordered structure for a disordered one: of alternatives the one of largest occupancy, fully occupied; where images
  * of a site exclude each other the space group is lowered, as `orderedModel` does. Partly occupied sites without an
  * alternative stay as they are and are named.
+ * @example
+ * ```ts
+ * const list = "group P m -3 m\ncell a=3.876\nN 1b\nCl 1a\nH 8g x=0.347 occ=0.5";
+ * const { crystal } = orderedCrystal(composedCrystal(parseSiteTable(list)));
+ * crystal.identified.summary.hermannMauguin; // "P -4 3 m"
+ * crystal.sites.map((s) => s.occupancy); // [1, 1, 1]
+ * ```
  */
 export function orderedCrystal(crystal: Crystal): DecidedCrystal {
   const { chosen, contested, notes } = chooseComponents(crystal);

@@ -32,6 +32,13 @@ const DEGREE = Math.PI / 180;
  * the metric tensor is linear in its free components, and each parameter fixes one component.
  * @throws InputProblem `cell-contradiction` where a parameter cannot have the value given, `cell-incomplete` where the
  * group leaves one free that is not given, `cell-impossible`
+ * @example
+ * ```ts
+ * const { group } = namedGroup("P 63/m m c").settings[0];
+ * const { cell, volume } = completedCell({ a: 3.16, c: 12.3 }, group, { groupName: "P 63/m m c", spans: {} });
+ * [cell.b, cell.gamma]; // [3.16, 120]
+ * volume.toFixed(2); // "106.37"
+ * ```
  */
 export function completedCell(given: CellParameters, group: SpaceGroup, origin: CellOrigin): Metric {
   requirePossible(given, origin);

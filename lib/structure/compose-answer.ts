@@ -38,7 +38,19 @@ export interface ComposeResult {
   readonly notes: readonly string[];
 }
 
-/** Sites, contents, distances and symmetry of a crystal made from a table. */
+/**
+ * Sites, contents, distances and symmetry of a crystal made from a table.
+ * @example
+ * ```ts
+ * const table = parseSiteTable("group R -3 c\ncell a=5.07 c=16.82\nNa 6b\nN 6a\nO 18e x=0.245");
+ * const { answer, notes } = composeAnswer(composedCrystal(table));
+ * answer.contents.formula; // "NaNO3"
+ * answer.contents.z; // 6
+ * answer.contents.density!.toFixed(2); // "2.26"
+ * answer.shortest!.labels; // ["N", "O"]
+ * notes; // []
+ * ```
+ */
 export function composeAnswer(crystal: Crystal): ComposeResult {
   const { shortest, tooNear } = shortDistances(crystal);
   const higher = higherSymmetry(crystal);

@@ -23,6 +23,14 @@ const TOLD_SHIFT = 1e-3;
  * setting is taken in which the cell and every site fit; of two origins one where atoms are no nearer than they come. The tolerance tells how far coordinates may be off their position.
  * @throws InputProblem with the place in the table: what `namedGroup`, `completedCell` and `placedSite` throw,
  * `element-unknown`, `occupancy-impossible`, `position-overfull`, `tolerance-impossible`
+ * @example
+ * ```ts
+ * const table = parseSiteTable("group R -3 c\ncell a=5.07 c=16.82\nNa 6b\nN 6a\nO 0.245,0,1/4");
+ * const nitratine = composedCrystal(table);
+ * nitratine.metric.cell.gamma; // 120
+ * nitratine.sites.map((s) => s.images.length); // [6, 6, 18]
+ * nitratine.notes[0]!.includes("cell and sites fit no other"); // true
+ * ```
  */
 export function composedCrystal(table: SiteTable, options: CrystalOptions = {}): Crystal {
   const tolerance = checkedTolerance(options.tolerance ?? POSITION_TOLERANCE);

@@ -19,6 +19,16 @@ export interface ConfigurationsAnswer {
   readonly list: readonly ConfigurationRow[];
 }
 
+/**
+ * @example
+ * ```ts
+ * const half = composedCrystal(parseSiteTable("group 221\ncell a=4.1\nCs 1a\nCl 1b occ=0.5\nBr 1b occ=0.5"));
+ * const square = changeOfCell(half, multiplesOf(2, 2, 1)).crystal;
+ * const { arrangements, list } = configurationsAnswer(orderedConfigurations(square));
+ * arrangements; // "6"
+ * list.map((row) => [row.degeneracy, row.spaceGroup.hermannMauguin]); // [[2, "P 4/m m m"], [4, "P m m m"]]
+ * ```
+ */
 export function configurationsAnswer(found: ConfigurationList): ConfigurationsAnswer {
   const { arrangements, inequivalent, excluded, places, configurations } = found;
   const list = configurations.map(({ crystal, degeneracy }, i): ConfigurationRow => {

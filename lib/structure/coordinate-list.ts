@@ -38,7 +38,16 @@ export interface CoordinateList {
   readonly atoms: readonly CoordinateAtom[];
 }
 
-/** The atoms of a model as a list of coordinates; whole cells repeat, other lists do not. */
+/**
+ * The atoms of a model as a list of coordinates; whole cells repeat, other lists do not.
+ * @example
+ * ```ts
+ * const halite = composedCrystal(parseSiteTable("group 225\ncell a=5.64\nNa 4a\nCl 4b"));
+ * const { cell, atoms } = coordinateList(atomModel(halite, { symmetry: "none" }));
+ * cell; // [5.64, 5.64, 5.64, 90, 90, 90]
+ * atoms[1]!.cartesian; // [0, 2.82, 2.82]
+ * ```
+ */
 export function coordinateList(model: AtomModel): CoordinateList {
   const { crystal, metric, atoms, name, content } = model;
   const m = metric.toCartesian;

@@ -80,6 +80,13 @@ export function crystalOf(parts: CrystalParts): Crystal {
 /**
  * Builds the crystal from a CIF block.
  * @throws InputProblem for a missing or impossible cell, symmetry or atom list
+ * @example
+ * ```ts
+ * const document = requireClean(readCif(text));
+ * const calcite = crystalFromBlock(document.blocks[0]!);
+ * calcite.identified.summary.hermannMauguin; // "R -3 c"
+ * calcite.sites.map((s) => s.images.length); // [6, 6, 18]
+ * ```
  */
 export function crystalFromBlock(block: CifBlock, options: CrystalOptions = {}): Crystal {
   const metric = metricOf(readCell(block));

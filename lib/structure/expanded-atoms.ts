@@ -47,6 +47,14 @@ export const MOST_ATOMS = 4_000_000;
  * Every atom of a cell, or of a range of coordinates: site by site, image by image, lattice point by lattice point.
  * No symmetry of the new cell is needed, so any cell can be filled; linear in the number of atoms.
  * @throws InputProblem `cell-left-handed`, `cell-no-lattice`, `cell-too-large`, `range-empty`
+ * @example
+ * ```ts
+ * const halite = composedCrystal(parseSiteTable("group 225\ncell a=5.64\nNa 4a\nCl 4b"));
+ * const atoms = expandedAtoms(halite, { transformation: multiplesOf(2, 2, 2) });
+ * atoms.length; // 64
+ * const shell = expandedAtoms(halite, { range: [[0, 1], [0, 1], [0, 0]], boundary: "in" });
+ * shell.filter((a) => a.site === 0).length; // 5
+ * ```
  */
 export function expandedAtoms(crystal: Crystal, options: ExpansionOptions = {}): ExpandedAtom[] {
   const { transformation = IDENTITY_TRANSFORMATION } = options;

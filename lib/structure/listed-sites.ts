@@ -33,6 +33,14 @@ export interface ListedStructure {
 /**
  * The atom list of a model: one row for each site and the operations if the symmetry is kept and the atoms were not
  * gathered otherwise, else every atom of the cell. S.u. and displacement parameters go with the atoms.
+ * @example
+ * ```ts
+ * const halite = composedCrystal(parseSiteTable("group 225\ncell a=5.64\nNa 4a\nCl 4b"));
+ * const { sites, spaceGroup } = listedStructure(atomModel(halite));
+ * sites.map((s) => `${s.label} ${s.multiplicity}${s.wyckoff}`); // ["Na 4a", "Cl 4b"]
+ * spaceGroup!.number; // 225
+ * listedStructure(atomModel(halite, { symmetry: "none" })).sites.length; // 8
+ * ```
  */
 export function listedStructure(model: AtomModel): ListedStructure {
   const { crystal, symmetry, metric, content, fromCrystal } = model;

@@ -81,6 +81,13 @@ export interface NeighboursOptions {
  * Neighbours of every site with symmetry codes, distances and uncertainties, coordination numbers and shapes, bond
  * valences, and hydrogen bonds.
  * @throws InputProblem `neighbour-name-unknown`, `neighbour-choice-impossible`
+ * @example
+ * ```ts
+ * const rutile = composedCrystal(parseSiteTable("group 136\ncell a=4.59 c=2.96\nTi 2a\nO 4f x=0.305"));
+ * const [titanium] = neighboursAnswer(rutile).sites;
+ * titanium!.coordination; // 6
+ * titanium!.neighbours.map((n) => n.distance.toFixed(3)); // ["1.947", "1.947", "1.947", "1.947", "1.980", "1.980"]
+ * ```
  */
 export function neighboursAnswer(crystal: Crystal, options: NeighboursOptions = {}): NeighboursAnswer {
   const { block = null, choice = { kind: "shell" }, angles = false } = options;

@@ -36,7 +36,16 @@ export const MOST_ARRANGEMENTS = 500_000;
 /** Ordered structures made at most. */
 export const MOST_CONFIGURATIONS = 2000;
 
-/** Counts without making any. @throws InputProblem as `disorderSlots` */
+/**
+ * Counts without making any. @throws InputProblem as `disorderSlots`
+ * @example
+ * ```ts
+ * const half = composedCrystal(parseSiteTable("group 221\ncell a=4.1\nCs 1a\nCl 1b occ=0.5\nBr 1b occ=0.5"));
+ * const doubled = changeOfCell(half, multiplesOf(2, 1, 1)).crystal;
+ * countConfigurations(doubled).arrangements; // "2"
+ * countConfigurations(doubled).inequivalent; // "1"
+ * ```
+ */
 export function countConfigurations(crystal: Crystal): ConfigurationCount {
   return countOf(disorderSlots(crystal));
 }
@@ -64,6 +73,14 @@ function rangesOf(orbits: DisorderSlots["orbits"]): PlaceRange[] {
  * Every ordered structure of a disordered cell, once for all that the space group makes of it, each in the group of the
  * operations that keep it. Counted first; nothing is made where there are too many.
  * @throws InputProblem `configurations-too-many` with the count, and as `disorderSlots`
+ * @example
+ * ```ts
+ * const half = composedCrystal(parseSiteTable("group 221\ncell a=4.1\nCs 1a\nCl 1b occ=0.5\nBr 1b occ=0.5"));
+ * const doubled = changeOfCell(half, multiplesOf(2, 1, 1)).crystal;
+ * const { configurations } = orderedConfigurations(doubled);
+ * configurations.map((c) => c.degeneracy); // [2]
+ * configurations[0]!.crystal.identified.summary.hermannMauguin; // "P 4/m m m"
+ * ```
  */
 export function orderedConfigurations(crystal: Crystal): ConfigurationList {
   const slots = disorderSlots(crystal);

@@ -32,7 +32,18 @@ export interface PointsAnswer extends SitesAnswer {
 /** Digits of an image that is not exact. */
 const DIGITS = 6;
 
-/** Site symmetry, Wyckoff position and constraints of points, in the order given; each is labelled as it was written. */
+/**
+ * Site symmetry, Wyckoff position and constraints of points, in the order given; each is labelled as it was written.
+ * @example
+ * ```ts
+ * const identified = identifyGroup(namedGroup("P n m a").settings[0].group);
+ * const points = [parsePoint("0.1,1/4,0.3")];
+ * const [site] = pointsAnswer({ identified, points, near: null, images: true }).sites;
+ * site!.referencePosition; // "4c"
+ * site!.siteSymmetry; // ".m."
+ * site!.images!.map((i) => i.coordinates); // ["1/10,1/4,3/10", "2/5,3/4,4/5", "9/10,3/4,7/10", "3/5,1/4,1/5"]
+ * ```
+ */
 export function pointsAnswer(question: PointsQuestion): PointsAnswer {
   const sites = question.points.map((point) => answerAt(point, question));
   return { sites, notes: question.near ? [] : question.points.flatMap((p, i) => missed(p, sites[i]!, question)) };

@@ -56,12 +56,32 @@ export interface PositionsAnswer {
   readonly configurations?: ConfigurationsAnswer;
 }
 
-/** Every atom of the cell, site by site in the order of the file, image by image in the order of the operations. */
+/**
+ * Every atom of the cell, site by site in the order of the file, image by image in the order of the operations.
+ * @example
+ * ```ts
+ * const rutile = composedCrystal(parseSiteTable("group 136\ncell a=4.59 c=2.96\nTi 2a\nO 4f x=0.305"));
+ * const { count, positions } = positionsAnswer(rutile);
+ * count; // 6
+ * positions.map((p) => p.operation).slice(2, 4); // ["x,y,z", "-x,-y,z"]
+ * positions[4]!.meaning; // "4+(0,0,1/2) 0,1/2,z"
+ * ```
+ */
 export function positionsAnswer(crystal: Crystal): PositionsAnswer {
   return modelPositions(cellModel(crystal));
 }
 
-/** The atoms of a model, each with the operation that made it. */
+/**
+ * The atoms of a model, each with the operation that made it.
+ * @example
+ * ```ts
+ * const halite = composedCrystal(parseSiteTable("group 225\ncell a=5.64\nNa 4a\nCl 4b"));
+ * const supercell = atomModel(halite, { cell: parseCellRequest("2,2,1") });
+ * const { count, cell } = modelPositions(supercell);
+ * count; // 32
+ * cell.cell; // [11.28, 11.28, 5.64, 90, 90, 90]
+ * ```
+ */
 export function modelPositions(model: AtomModel): PositionsAnswer {
   const { crystal, atoms, metric, transformation, symmetry } = model;
   const operations = crystal.group.operations.map(formatOperation);

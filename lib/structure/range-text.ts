@@ -6,6 +6,11 @@ export type CoordinateRange = readonly [Interval, Interval, Interval];
 /**
  * Reads a range of fractional coordinates, `0:1,0:1,-0.5:0.5`.
  * @throws InputProblem `range-unreadable`
+ * @example
+ * ```ts
+ * parseRange("0:1,0:1,-0.5:0.5")[2]; // [-0.5, 0.5]
+ * formatRange([[0, 1], [0, 1], [0, 2]]); // "0:1,0:1,0:2"
+ * ```
  */
 export function parseRange(text: string): CoordinateRange {
   const parts = text.split(",").map((part) => part.split(":").map((e) => (e.trim() === "" ? Number.NaN : Number(e))));

@@ -9,6 +9,13 @@ import { type Resited, resiteAnswer } from "./resite-answer.ts";
 /**
  * A structure compared with another, and where the two agree, written on the axes and origin of the other.
  * @throws InputProblem as `compareStructures`
+ * @example
+ * ```ts
+ * const rutile = composedCrystal(parseSiteTable("group 136\ncell a=4.59 c=2.96\nTi 2a\nO 4f x=0.305"));
+ * const other = changeOfCell(rutile, parseTransformation("b,c,a;1/2,1/2,1/2")).crystal;
+ * const { answer } = resitedOnto(rutile, other);
+ * answer.P; // "b,c,a"
+ * ```
  */
 export function resitedOnto(crystal: Crystal, other: Crystal, options: ComparisonOptions = {}): Resited {
   const { answer: comparison, match } = compareStructures(crystal, other, options);

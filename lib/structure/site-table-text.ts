@@ -26,6 +26,20 @@ interface Line {
  * Wyckoff position; the coordinates, or the values of the free ones, or both; `occ=`; `U=` or `B=`, or `U11=` to `U23=`.
  * Position or coordinates may be left out, not both.
  * @throws InputProblem `table-unreadable`, `cell-unreadable`, `group-missing`, `cell-missing`, `sites-missing`, with span
+ * @example
+ * ```ts
+ * const { group, cell, sites } = parseSiteTable(`
+ *   group R -3 c
+ *   cell  a=5.070 c=16.82     # nitratine, Paul & Pryor 1971
+ *   Na 6b
+ *   N  6a
+ *   O  18e x=0.2450(2)
+ * `);
+ * group.text; // "R -3 c"
+ * cell.values; // { a: 5.07, c: 16.82 }
+ * sites.map((s) => s.letter); // ["b", "a", "e"]
+ * sites[2]!.parameters; // { x: { value: 0.245, su: 0.0002 } }
+ * ```
  */
 export function parseSiteTable(text: string): SiteTable {
   const read: { name: string; group: SiteTable["group"] | null; cell: WrittenCell | null } = {
@@ -118,7 +132,14 @@ function missing(what: string, example: string, text: string): InputProblem {
   );
 }
 
-/** Inverse of `parseSiteTable`. */
+/**
+ * Inverse of `parseSiteTable`.
+ * @example
+ * ```ts
+ * const table = parseSiteTable("group 136; cell a=4.59".replace("; ", "\n") + "\nO O2- 4(f) (x, x, 0) x=.305 occ=1/2");
+ * formatSiteTable(table).split("\n")[2]; // "O O2- 4f x,x,0 x=0.305 occ=0.5"
+ * ```
+ */
 export function formatSiteTable({ name, group, cell, sites }: SiteTable): string {
   const lines = [
     ...(name === "" ? [] : [`name ${name}`]),

@@ -49,7 +49,18 @@ export interface SitesAnswer {
   readonly sites: readonly SiteAnswer[];
 }
 
-/** Site symmetry, Wyckoff position and constraints of every site, in the order of the file. */
+/**
+ * Site symmetry, Wyckoff position and constraints of every site, in the order of the file.
+ * @example
+ * ```ts
+ * const rutile = composedCrystal(parseSiteTable("group 136\ncell a=4.59 c=2.96\nTi 2a\nO 4f x=0.305"));
+ * const oxygen = sitesAnswer(rutile).sites[1]!;
+ * oxygen.referencePosition; // "4f"
+ * oxygen.siteSymmetry; // "m.2m"
+ * oxygen.constraint; // "x,x,0"
+ * oxygen.adp; // "u11,u11,u33,u12,0,0"
+ * ```
+ */
 export function sitesAnswer(crystal: Crystal): SitesAnswer {
   return { sites: crystal.sites.map((site) => siteAnswer(site, crystal.identified)) };
 }

@@ -99,6 +99,13 @@ export interface SymmetriseOptions {
 /**
  * The symmetry that the atoms of a crystal have, whatever the file declares, and the structure made exact in it.
  * @throws InputProblem `tolerance-impossible`, `atoms-missing`, `cell-not-kept`
+ * @example
+ * ```ts
+ * const list = "group P 4/m m m\ncell a=3.905 c=3.905\nSr 1a\nTi 1d\nO1 1c\nO2 2e";
+ * const { found, index } = symmetriseAnswer(composedCrystal(parseSiteTable(list)));
+ * found.hermannMauguin; // "P m -3 m"
+ * index; // 3
+ * ```
  */
 export function symmetriseAnswer(crystal: Crystal, options: SymmetriseOptions = {}): SymmetriseAnswer {
   const { tolerance = SEARCH_TOLERANCE, strain = METRIC_TOLERANCE, cell = "conventional" } = options;

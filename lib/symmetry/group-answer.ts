@@ -84,7 +84,16 @@ export interface GroupAnswer {
   readonly letterExchanges: readonly LetterExchange[];
 }
 
-/** Operations with their meaning, reflection conditions and Wyckoff positions of a group in the setting in use. */
+/**
+ * Operations with their meaning, reflection conditions and Wyckoff positions of a group in the setting in use.
+ * @example
+ * ```ts
+ * const { spaceGroup } = groupAnswer(identifyGroup(namedGroup("P 21/c").settings[0].group));
+ * spaceGroup.hall; // "-P 2ybc"
+ * spaceGroup.wyckoff.map((w) => `${w.multiplicity}${w.letter}`); // ["2a", "2b", "2c", "2d", "4e"]
+ * spaceGroup.conditions.filter((c) => !c.implied).map((c) => `${c.reflections}: ${c.condition}`); // ["h0l: l=2n", "0k0: k=2n"]
+ * ```
+ */
 export function groupAnswer(identified: IdentifiedGroup): GroupAnswer {
   const { group, number, summary } = identified;
   const setting = conventionalSetting(identified);

@@ -27,6 +27,13 @@ export interface NamedGroup {
  * The groups that a text may mean: a number, a Hermann-Mauguin or Schoenflies symbol as `readGroupName` reads it, or a
  * Hall symbol, which may have `Hall` in front where it could be either.
  * @throws InputProblem as `readGroupName`; that of the Hall symbol where the text can only be meant as one
+ * @example
+ * ```ts
+ * const { settings, ambiguity } = namedGroup("F d -3 m");
+ * settings.map((s) => s.name); // ["F 41/d -3 2/m:2", "F 41/d -3 2/m:1"]
+ * ambiguity; // ["origin choice"]
+ * identifyGroup(namedGroup("-P 2ac 2n").settings[0].group).number; // 62
+ * ```
  */
 export function namedGroup(text: string): NamedGroup {
   const asked = /^(\s*hall\b[\s:]*)(.*)$/is.exec(text);

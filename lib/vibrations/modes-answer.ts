@@ -75,6 +75,13 @@ export interface ModesAnswer {
 /**
  * Species, activities and counts of the modes of a crystal at k = 0, as plain data.
  * @param formula the formula that the file states, for counting formula units
+ * @example
+ * ```ts
+ * const rutile = composedCrystal(parseSiteTable("group 136\ncell a=4.59 c=2.96\nTi 2a\nO 4f x=0.305"));
+ * const { irreps, totals } = modesAnswer(rutile);
+ * irreps.filter((s) => s.raman).map((s) => `${s.optic}${s.label}`); // ["1A1g", "1B1g", "1B2g", "1Eg"]
+ * totals.ramanBands; // 4
+ * ```
  */
 export function modesAnswer(crystal: Crystal, formula: Formula | null = null): ModesAnswer {
   const { identified } = crystal;

@@ -58,6 +58,13 @@ export interface SplitOptions {
  * factor group.
  * @throws InputProblem for options that do not fit the crystal
  * @throws RangeError if the sum over units differs from the atom-by-atom result: a defect of this program
+ * @example
+ * ```ts
+ * const nitratine = composedCrystal(parseSiteTable("group R -3 c\ncell a=5.07 c=16.82\nNa 6b\nN 6a\nO 18e x=0.245"));
+ * const [nitrate] = splitAnswer(nitratine).units;
+ * nitrate!.formula; // "NO3"
+ * nitrate!.internal.map((m) => m.name); // ["nu1", "nu3", "nu4", "nu2"]
+ * ```
  */
 export function splitAnswer(crystal: Crystal, options: SplitOptions = {}): SplitAnswer {
   const { frames } = crystal.identified;
