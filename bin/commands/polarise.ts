@@ -1,7 +1,8 @@
 import { polariseText, speciesWriter } from "../../lib/report/index.ts";
-import { type PolariseOptions, polariseAnswer } from "../../lib/vibrations/index.ts";
+import { statedFormula } from "../../lib/structure/index.ts";
+import { type PolariseOptions, polariseAnswer, structureWarnings } from "../../lib/vibrations/index.ts";
 import { type Arguments, COMMON_OPTIONS, type CommandSpec, SPECIES_OPTIONS } from "../arguments.ts";
-import { answerQuestion, askCrystal } from "../ask.ts";
+import { answerQuestion, askCrystal, withNotes } from "../ask.ts";
 import { EXAMPLE } from "../examples/polarise.ts";
 import { UsageProblem } from "../problems.ts";
 import { usage } from "../usage.ts";
@@ -41,7 +42,8 @@ export const spec: CommandSpec = {
 };
 
 export async function run(words: readonly string[]): Promise<number> {
-  const question = await askCrystal(words, spec);
+  const asked = await askCrystal(words, spec);
+  const question = withNotes(asked, structureWarnings(asked.crystal, statedFormula(asked.block)));
   const options = readOptions(question.args);
   const answer = usage(() => polariseAnswer(question.crystal, options));
   return answerQuestion(question, answer, () =>

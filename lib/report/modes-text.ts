@@ -1,4 +1,5 @@
 import type { IrrepAnswer, ModesAnswer } from "../vibrations/index.ts";
+import { formatNumber } from "./format-number.ts";
 import { type SpeciesWriter, speciesWriter } from "./species.ts";
 import { type Column, textTable, wrapText } from "./table.ts";
 
@@ -12,12 +13,13 @@ export function modesText(answer: ModesAnswer, write: SpeciesWriter = speciesWri
 
 /** What was reduced, and the axes of the labels. */
 function subject(answer: ModesAnswer, write: SpeciesWriter): string {
-  const { factorGroup, atomsInPrimitiveCell: atoms, formulaUnits: units, labelsInReference } = answer;
+  const { factorGroup, formulaUnits: units, labelsInReference } = answer;
   const axes =
     answer.labelAxes === "file" ? "axes of the file" : "axes of the reference setting (the file's cell is skew)";
   const formula = units ? `: ${units.inPrimitiveCell} ${units.formula}` : "";
   const lines = [
-    `${atoms} vibrating ${atoms === 1 ? "atom" : "atoms"} in the primitive cell${formula}`,
+    `${vibrating(answer)} in the primitive cell${formula}`,
+    ...average(answer),
     reduction(answer),
     `factor group ${factorGroup.hermannMauguin} (${factorGroup.schoenflies}); labels in the ${axes}${factorGroup.axes ? `: ${factorGroup.axes}` : ""}`,
   ];
@@ -25,6 +27,17 @@ function subject(answer: ModesAnswer, write: SpeciesWriter): string {
   if (swaps.length > 0) lines.push(`in the axes of the reference setting ${swaps.join(", ")}`);
   lines.push(...exchangeable(answer, write));
   return lines.map((line) => wrapText(line, WIDTH, "    ")).join("\n");
+}
+
+/** `10 vibrating atoms`, or `20 places of vibrating atoms, 16 atoms by their occupancy`. */
+function vibrating({ atomsInPrimitiveCell: places, atomsByOccupancy: atoms }: ModesAnswer): string {
+  if (places === atoms) return `${places} vibrating ${places === 1 ? "atom" : "atoms"}`;
+  const shown = Number.isInteger(atoms) ? String(atoms) : formatNumber(atoms, 2);
+  return `${places} places of vibrating atoms, ${shown} ${atoms === 1 ? "atom" : "atoms"} by their occupancy,`;
+}
+
+function average({ atomsInPrimitiveCell: places, atomsByOccupancy: atoms }: ModesAnswer): string[] {
+  return places === atoms ? [] : ["all counts are those of the average structure, with every place filled"];
 }
 
 /** Groups with two kinds of lateral axes or planes, alike but for their names. */

@@ -37,7 +37,7 @@ function axesText({ freeAxes, siteAxes }: UnitAnswer): string[] {
 
 function unitText(unit: UnitAnswer, answer: SplitAnswer, write: ActiveWriter): string {
   const name = unit.freeName ? ` (${unit.freeName})` : "";
-  const head = `${unit.formula}${name}, ${unit.count} in the primitive cell: ${unit.labels.join(" ")}`;
+  const head = `${unit.formula}${name}${averageText(unit)}, ${unit.count} in the primitive cell: ${unit.labels.join(" ")}`;
   const fit = `atoms at most ${formatNumber(unit.deviation.largest, 3)} Å from it, ${formatNumber(unit.shapeTolerance, 2)} Å allowed`;
   const lines = [
     `free unit ${unit.pointGroup} (${fit}); site ${unit.siteSymmetry} (${unit.schoenflies}); factor group ${answer.factorGroup.schoenflies}`,
@@ -62,6 +62,13 @@ function unitText(unit: UnitAnswer, answer: SplitAnswer, write: ActiveWriter): s
   ];
   const under = lines.map((l) => `  ${wrapText(l, WIDTH - 2, "    ")}`);
   return [wrapText(head, WIDTH, "    "), ...under, textTable(columns, rows)].join("\n");
+}
+
+/** A shape that no unit has at a time must not pass for one. */
+function averageText({ places, atomsByOccupancy: atoms }: UnitAnswer): string {
+  if (places === atoms) return "";
+  const shown = Number.isInteger(atoms) ? String(atoms) : formatNumber(atoms, 2);
+  return `, the average of a disorder (${places} places, ${shown} atoms by occupancy)`;
 }
 
 /** Writes species, and sums over the factor group with their activity. */

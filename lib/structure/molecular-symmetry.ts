@@ -73,8 +73,9 @@ export type ShapedUnit = Pick<MolecularUnit, "atoms" | "bonds" | "site" | "centr
 
 /**
  * The largest point group that a unit has within a tolerance and that holds its site group exactly, with matrices fitted
- * to the unit: those of the site are among them to rounding. Different elements are never carried onto each other;
- * isotopes of hydrogen are one element.
+ * to the unit: those of the site are among them to rounding. Different elements are never carried onto each other, nor
+ * isotopes of hydrogen where each has places of its own: HDO vibrates otherwise than H2O. Isotopes that share partly
+ * occupied places are one element.
  * @throws InputProblem `symmetry-not-below` if `lowerTo` names no subgroup that holds the site group
  * @throws RangeError for a unit of one atom
  */
@@ -84,9 +85,16 @@ export function molecularSymmetry(unit: ShapedUnit, options: MolecularSymmetryOp
   const centre = unit.centroid.cartesian;
   const body: Body = {
     points: unit.atoms.map((a) => minus3(a.cartesian, centre)),
-    kinds: unit.atoms.map((a) => (isHydrogen(a.element) ? "H" : a.element)),
+    kinds: unit.atoms.map(kindOf),
   };
   return linear(unit, body, tolerance, options.lowerTo) ?? finite(unit, body, tolerance, options.lowerTo);
+}
+
+/** Occupancies count as full from here; files round them. */
+const FULL = 0.995;
+
+function kindOf({ element, occupancy }: ShapedUnit["atoms"][number]): string {
+  return isHydrogen(element) && occupancy < FULL ? "H" : element;
 }
 
 /** The tolerance used by default, angstrom: STAR_TOLERANCE (or a fifth of the bond) for XY_n, else SHAPE_TOLERANCE. */

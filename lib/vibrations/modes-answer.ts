@@ -8,6 +8,7 @@ import {
   type ModeTotals,
   type SiteModes,
 } from "./factor-group.ts";
+import { vibratingSites, wholeAtoms } from "./vibrating-sites.ts";
 
 /** A species of the factor group as the JSON contract lays it out. */
 export interface IrrepAnswer {
@@ -54,7 +55,10 @@ export interface PolarSpecies {
 }
 
 export interface ModesAnswer {
+  /** Places of vibrating atoms; partly occupied ones count in full. */
   readonly atomsInPrimitiveCell: number;
+  /** The same, each place by its occupancy. */
+  readonly atomsByOccupancy: number;
   /** How many primitive cells the cell of the file holds. */
   readonly primitiveCellsInCell: number;
   /** Translations that make the cell of the file larger than the primitive one, `2/3,1/3,1/3`. */
@@ -90,6 +94,12 @@ export function modesAnswer(crystal: Crystal, formula: Formula | null = null): M
   const { group } = modes;
   return {
     atomsInPrimitiveCell: modes.atomsInPrimitiveCell,
+    atomsByOccupancy: wholeAtoms(
+      vibratingSites(crystal).reduce(
+        (n, { sites, count }) => n + count * sites.reduce((s, a) => s + a.occupancy, 0),
+        0,
+      ),
+    ),
     primitiveCellsInCell: crystal.group.centrings.length,
     centrings: crystal.group.centrings.filter(({ n }) => n.some((e) => e !== 0)).map(formatVector),
     formulaUnits: formulaUnits(crystal, formula),

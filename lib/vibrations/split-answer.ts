@@ -14,6 +14,7 @@ import { countsOf, type SpeciesCounts } from "./species-counts.ts";
 import { addAll, type SplitSums, siteContribution, sumUp } from "./split-sums.ts";
 import { type UnitAnswer, unitAnswer } from "./unit-answer.ts";
 import { correlateUnit } from "./unit-correlation.ts";
+import { placeOccupancies } from "./vibrating-sites.ts";
 
 export interface LoneAtomAnswer {
   readonly label: string;
@@ -75,6 +76,7 @@ export function splitAnswer(crystal: Crystal, options: SplitOptions = {}): Split
     const symmetry = molecularSymmetry(unit, shapeOptions(unit, options));
     return { unit, symmetry, correlation: correlateUnit(unit, symmetry, modes.group, frame) };
   });
+  const occupancies = placeOccupancies(crystal);
   const { sums, notes } = sumUp(crystal, modes, analysis, correlated);
   const named = (numbers: readonly number[]) => countsOf(modes.group.irreps, numbers);
   const activity = activities(modes.group);
@@ -91,7 +93,7 @@ export function splitAnswer(crystal: Crystal, options: SplitOptions = {}): Split
       raman: activity[i]!.raman,
     })),
     bonds: analysis.choice,
-    units: correlated.map((c) => unitAnswer(crystal, modes, c)),
+    units: correlated.map((c) => unitAnswer(crystal, modes, c, occupancies)),
     loneAtoms: analysis.loneAtoms.map((atom) => ({
       label: atom.label,
       element: atom.element,

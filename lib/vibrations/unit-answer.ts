@@ -9,6 +9,7 @@ import { countsOf, type SpeciesCounts } from "./species-counts.ts";
 import type { FreeMode, FreeUnit } from "./tables/free-units.ts";
 import { type KindAnswer, type SpeciesContent, unitContent } from "./unit-content.ts";
 import type { FreeSpeciesCorrelation, UnitCorrelation } from "./unit-correlation.ts";
+import { wholeAtoms } from "./vibrating-sites.ts";
 
 /** One internal mode of the free unit (or several of one species) and what the crystal makes of it. */
 export interface InternalMode {
@@ -58,6 +59,9 @@ export interface UnitAnswer {
   readonly labels: readonly string[];
   /** Units in the primitive cell. */
   readonly count: number;
+  /** Places of atoms in one unit, and atoms there on average; the former are more where alternatives are averaged. */
+  readonly places: number;
+  readonly atomsByOccupancy: number;
   readonly pointGroup: string;
   /** Distance of the atoms from the idealised unit, angstrom. */
   readonly deviation: { readonly largest: number; readonly mean: number };
@@ -89,11 +93,12 @@ export interface CorrelatedUnit {
   readonly correlation: UnitCorrelation;
 }
 
-/** Everything that is printed of one kind of unit. */
+/** Everything that is printed of one kind of unit. @param occupancies of the places of all sites, `placeOccupancies` */
 export function unitAnswer(
   crystal: Crystal,
   modes: FactorGroupModes,
   { unit, symmetry, correlation }: CorrelatedUnit,
+  occupancies: readonly number[],
 ): UnitAnswer {
   const free = freeUnitsLike(unit, symmetry.schoenflies)[0] ?? null;
   const names = { site: correlation.siteGroup.irreps, factorGroup: modes.group.irreps };
@@ -109,6 +114,8 @@ export function unitAnswer(
     freeSource: fits ? [free.source, free.note].filter(Boolean).join("; ") : null,
     labels: unit.labels,
     count: unit.count,
+    places: unit.atoms.length,
+    atomsByOccupancy: wholeAtoms(unit.atoms.reduce((n, a) => n + occupancies[a.site]!, 0)),
     pointGroup: symmetry.schoenflies,
     deviation: { largest: symmetry.deviation.largest, mean: symmetry.deviation.mean },
     shapeTolerance: symmetry.tolerance,

@@ -43,8 +43,14 @@ export function unitSummaries({ units, loneAtoms, extended, unitNotes, activity 
     })),
     loneAtoms,
     extended,
-    unitNotes,
+    unitNotes: [...unitNotes, ...averages(units)],
   };
+}
+
+/** Units that no unit is like at a time. */
+function averages(units: readonly UnitAnswer[]): string[] {
+  const mean = units.filter((u) => u.places !== u.atomsByOccupancy);
+  return mean.map((u) => `${u.formula} is the average of a disorder: ${u.places} places in one, more than its atoms`);
 }
 
 /** In the order of the species. */

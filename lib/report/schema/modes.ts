@@ -10,6 +10,7 @@ import type {
 import { vector, xyz } from "./common.ts";
 import { letter } from "./group.ts";
 import {
+  amount,
   byName,
   choice,
   count,
@@ -71,7 +72,8 @@ export function modesSchema(): Shape<CrystalDocument<ModesAnswer & WithUnits & W
   });
   return object<CrystalDocument<ModesAnswer & WithUnits & WithPolyhedra>>({
     ...crystalHeading("modes"),
-    atomsInPrimitiveCell: count("", 1),
+    atomsInPrimitiveCell: count("places, partly occupied ones in full", 1),
+    atomsByOccupancy: amount("the same, each place by its occupancy"),
     primitiveCellsInCell: count("", 1),
     centrings: list(xyz(), "centring translations but 0,0,0"),
     formulaUnits: orNull(

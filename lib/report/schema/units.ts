@@ -128,6 +128,8 @@ function unit(): Shape<UnitAnswer> {
     freeName: orNull(text(), "free ion or molecule taken for comparison"),
     freeSource: orNull(text()),
     labels: list(text()),
+    places: count("of atoms in one unit", 1),
+    atomsByOccupancy: amount("atoms there on average"),
     count: count("in the primitive cell", 1),
     pointGroup: text("Schoenflies symbol of the free unit"),
     deviation: deviation(),
