@@ -1,4 +1,4 @@
-import { addVectors, type IntMat3, type RatVec3 } from "../algebra/index.ts";
+import { addVectors, type IntMat3, multiplyRatMat, type RatMat3, type RatVec3, ZERO_VECTOR } from "../algebra/index.ts";
 import {
   formatVector,
   operationKey,
@@ -10,6 +10,7 @@ import {
 import { apply3, lengthOf, type Vec3 } from "./cell.ts";
 import type { Crystal } from "./crystal.ts";
 import { exactOrigin } from "./exact-origin.ts";
+import { inCell } from "./preferred-reference.ts";
 import { keepsHand, type StructureMatch } from "./structure-match.ts";
 
 /** A match with its origin as exact as the symmetry of the two structures makes it. */
@@ -24,8 +25,8 @@ export interface ChosenMatch extends StructureMatch {
 const EQUALLY_GOOD = 1e-3;
 /** A mirror image is preferred only where it lies nearer by this; angstrom. */
 const BETTER_BY = 0.05;
-/** An exact origin is taken where it displaces atoms by at most this much more; angstrom. */
-const ROUNDED_BY = 2e-3;
+/** A free origin this near to a fraction is on it: coordinates are rounded by as much; angstrom. */
+const ROUNDED_BY = 1e-4;
 
 /** Of equally good matches the one nearest to the identity, of the same hand unless the other is clearly better. */
 export function chosenMatch(first: Crystal, second: Crystal, matches: readonly StructureMatch[]): ChosenMatch | null {
@@ -37,8 +38,15 @@ export function chosenMatch(first: Crystal, second: Crystal, matches: readonly S
   const best = list[0];
   if (!best) return null;
   const good = list.filter((m) => m.rootMeanSquare <= best.rootMeanSquare + EQUALLY_GOOD);
-  const chosen = good.map((m) => ({ ...m, p: wrapped(m.p) })).reduce((x, y) => (compare(y, x) < 0 ? y : x));
+  const chosen = good.flatMap((m) => equivalents(first, m)).reduce((x, y) => (compare(y, x) < 0 ? y : x));
   return exactly(first, second, chosen);
+}
+
+/** The match with its origin moved by each lattice point of the cell. */
+function equivalents({ group }: Crystal, match: StructureMatch): StructureMatch[] {
+  return group.centrings.map(({ n, d }) => {
+    return { ...match, p: wrapped(match.p.map((e, i) => e + n[i]! / d) as unknown as Vec3) };
+  });
 }
 
 /** Into (-1/2, 1/2], as far as rounding lets it. */
@@ -63,7 +71,7 @@ function compare(x: StructureMatch, y: StructureMatch): number {
 /** Components that operations of both structures fix are made exact; the others stay as measured, next to a fraction on it. */
 function exactly(first: Crystal, second: Crystal, match: StructureMatch): ChosenMatch {
   const { P, p } = match;
-  const found = exactOrigin(first.metric, first.group, { basis: P, operations: second.group.operations }, p);
+  const found = exactOrigin(first.metric, first.group, primitiveFrame(second, P), p);
   const { origin } = found;
   const shift: Vec3 = lengthOf(first.metric, found.shift) <= ROUNDED_BY ? [0, 0, 0] : found.shift;
   const whole = origin.n.map((e, i) => e / origin.d + shift[i]!) as unknown as Vec3;
@@ -77,6 +85,12 @@ function exactly(first: Crystal, second: Crystal, match: StructureMatch): Chosen
   const measured = whole.map((e, i) => e + free[i]!) as unknown as Vec3;
   const left = shift.map((e, i) => e + free[i]!) as unknown as Vec3;
   return { ...match, p: measured, exact: shared ? { origin, shift: left } : null, text: decimals(measured) };
+}
+
+/** The group of the second structure on primitive axes, which are given in terms of the first. */
+function primitiveFrame({ group }: Crystal, P: RatMat3) {
+  const change: Transformation = { P: group.primitive, p: ZERO_VECTOR };
+  return { basis: multiplyRatMat(P, group.primitive), operations: inCell(group.operations, change) };
 }
 
 /** Rotation parts that both groups have, or null where their operations do not agree about the origin. */

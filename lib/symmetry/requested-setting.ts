@@ -28,7 +28,7 @@ export function requestedSetting(given: Given, text: string): RequestedSetting {
   const settings = settingsOf(given.number);
   const named = wanted === "reference" ? settings[0] : settings.find((s) => s.name !== "" && s.name === wanted);
   if (named) return { transformation: wayTo(given, named.toReference), note: null };
-  if (wanted.includes(",") && !/^[A-Za-z] ?[\d-]/.test(wanted)) {
+  if (wanted.includes(",") && /^[-+*/.,;\sabc\d]+$/.test(wanted)) {
     return { transformation: parseTransformation(wanted), note: null };
   }
   return bySymbol(given, wanted, settings);
