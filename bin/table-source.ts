@@ -12,7 +12,7 @@ export interface TableSource {
   readonly file: string | null;
 }
 
-/** The table of a file, or the one that --group, --cell and --site make, a line each. @throws UsageProblem, LocatedProblem */
+/** The table of a file, or the one of --group, --cell and --site, a line each. @throws UsageProblem, LocatedProblem */
 export async function tableSource(args: Arguments): Promise<TableSource> {
   const [file, ...others] = args.operands;
   const lines = ["name", "group", "cell"].flatMap((key) => {

@@ -8,12 +8,18 @@ export { InputProblem, locate, type ParseResult, type Place, requireClean, type 
 export { problemText } from "./report/index.ts";
 export { molecularGroup, type PointGroup, pointGroup, pointGroupTable } from "./representation/index.ts";
 export {
+  atomModel,
+  type ComposeAnswer,
   type Crystal,
+  composeAnswer,
+  composedCrystal,
   crystalFromBlock,
   crystalOf,
   molecularUnits,
   POSITION_TOLERANCE,
   type PositionsAnswer,
+  parseSiteTable,
+  pointsAnswer,
   positionsAnswer,
   type SitesAnswer,
   sitesAnswer,
@@ -24,7 +30,9 @@ export {
   groupAnswer,
   identify,
   identifyGroup,
+  namedGroup,
   parseOperation,
+  parsePoint,
   readGroupName,
   reflectionConditions,
   type SpaceGroup,

@@ -1,6 +1,6 @@
 import { findLoop } from "../cif/index.ts";
 import type { Formula } from "../structure/index.ts";
-import { metricOf } from "../structure/index.ts";
+import { DALTON_PER_CUBIC_ANGSTROM, massOf, metricOf } from "../structure/index.ts";
 import {
   type AuditInput,
   rounding,
@@ -16,7 +16,6 @@ import { cellTolerance, statedCell } from "./stated-cell.ts";
 import {
   accountsOfCell,
   electronsOf,
-  massOf,
   type StatedComposition,
   statedComposition,
   summed,
@@ -32,8 +31,6 @@ const NO_STANDARD_MASS = ["Tc", "Pm", "Po", "At", "Rn", "Fr", "Ra", "Ac", "Np", 
 const ELECTRON_TOLERANCE = { least: 1, share: 2e-3 };
 /** Densities computed and measured on the same substance agree better; relative. */
 const MEASURED_TOLERANCE = 0.1;
-/** g cm^-3 of one dalton per cubic angstrom. Source: CODATA 2018, atomic mass constant 1.66053907e-27 kg. */
-const DALTON = 1.66053907;
 
 const MASS: Criterion = {
   id: "molar-mass",
@@ -156,7 +153,7 @@ function densities(input: AuditInput, c: StatedComposition): Expected[] {
   if (!metric) return [];
   return expectedOf(accountsOfCell(c), (atoms) => {
     const mass = massOf(atoms);
-    return mass === null ? null : (mass * DALTON) / metric.volume;
+    return mass === null ? null : (mass * DALTON_PER_CUBIC_ANGSTROM) / metric.volume;
   });
 }
 

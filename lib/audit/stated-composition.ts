@@ -113,11 +113,6 @@ export function isFormulaOfCell(c: StatedComposition): boolean {
   return divisible && unlike(c, 1).length === 0;
 }
 
-/** Mass in dalton; null where an element has none tabulated. */
-export function massOf(formula: Formula): number | null {
-  return summed(formula, (symbol) => element(symbol)?.mass ?? null);
-}
-
 /** Electrons of the neutral atoms. */
 export function electronsOf(formula: Formula): number | null {
   return summed(formula, (symbol) => element(symbol)?.number ?? null);

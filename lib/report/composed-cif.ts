@@ -5,8 +5,8 @@ import { formatNumber } from "./format-number.ts";
 import { structureCif } from "./structure-cif.ts";
 
 /**
- * A composed structure as a CIF: besides cell, symmetry and sites its formula, Z, mass and density, of which the comment
- * says that they are computed.
+ * A composed structure as a CIF: besides cell, symmetry and sites its formula, Z, mass and density, of which the
+ * comment says that they are computed.
  * @example
  * ```ts
  * const rutile = composedCrystal(parseSiteTable("group 136\ncell a=4.59 c=2.96\nTi Ti4+ 2a\nO O2- 4f x=0.305"));

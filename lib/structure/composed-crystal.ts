@@ -20,7 +20,8 @@ const TOLD_SHIFT = 1e-3;
 
 /**
  * The crystal that a table of Wyckoff sites means. Where the group's name leaves origin or axes open, the most usual
- * setting is taken in which the cell and every site fit; of two origins one where atoms are no nearer than they come. The tolerance tells how far coordinates may be off their position.
+ * setting is taken in which the cell and every site fit; of two origins one where atoms are no nearer than they come.
+ * The tolerance tells how far coordinates may be off their position.
  * @throws InputProblem with the place in the table: what `namedGroup`, `completedCell` and `placedSite` throw,
  * `element-unknown`, `occupancy-impossible`, `position-overfull`, `tolerance-impossible`
  * @example

@@ -21,11 +21,12 @@ interface Line {
  *     S  8a
  *     O  32h 0.2137,0.0556,0.2855 U=0.012
  *
- * `group` takes a number, a Hermann-Mauguin or a Hall symbol, `cell` the parameters that symmetry leaves free or all six.
- * Every other line is a site: its label; the element, with a charge if wanted, where the label does not begin with it; the
- * Wyckoff position; the coordinates, or the values of the free ones, or both; `occ=`; `U=` or `B=`, or `U11=` to `U23=`.
- * Position or coordinates may be left out, not both.
- * @throws InputProblem `table-unreadable`, `cell-unreadable`, `group-missing`, `cell-missing`, `sites-missing`, with span
+ * `group` takes a number, a Hermann-Mauguin or a Hall symbol, `cell` the parameters that symmetry leaves free or all
+ * six. Every other line is a site: its label; the element, with a charge if wanted, where the label does not begin with
+ * it; the Wyckoff position; the coordinates, or the values of the free ones, or both; `occ=`; `U=` or `B=`, or `U11=` to
+ * `U23=`. Position or coordinates may be left out, not both.
+ * @throws InputProblem `table-unreadable`, `cell-unreadable`, `group-missing`, `cell-missing`, `sites-missing`, with the
+ * place
  * @example
  * ```ts
  * const { group, cell, sites } = parseSiteTable(`
@@ -42,6 +43,7 @@ interface Line {
  * ```
  */
 export function parseSiteTable(text: string): SiteTable {
+  refuseCif(text);
   const read: { name: string; group: SiteTable["group"] | null; cell: WrittenCell | null } = {
     name: "",
     group: null,
@@ -67,6 +69,14 @@ export function parseSiteTable(text: string): SiteTable {
   if (!cell) throw missing("cell", "cell a=4.99 c=17.06", text);
   if (sites.length === 0) throw missing("sites", "Ca 6b", text);
   return { name, group, cell, sites };
+}
+
+function refuseCif(text: string): void {
+  const m = /^[ \t]*data_\S*/im.exec(text);
+  if (!m) return;
+  const hint = "give a table of group, cell and sites; positions writes what a CIF holds in other formats";
+  const span = { start: m.index, end: m.index + m[0].length };
+  throw new InputProblem("table-unreadable", "this is a CIF and no table of sites", span, hint);
 }
 
 function* linesOf(text: string): Generator<Line> {
@@ -107,7 +117,7 @@ function unreadable({ text, start }: Line, at: number, expected: readonly string
     { start: start + at, end: start + Math.min(at + 1, text.length) + (at >= text.length ? 1 : 0) },
     number
       ? "a site has three coordinates; further numbers are named, such as occ=0.5, U=0.012 or B=0.9"
-      : 'write a site like "O1 18e x=0.2568" or "O1 0.2568,0,1/4 occ=0.5", or group, cell or name and its value',
+      : 'write a site like "O1 18e x=0.2568" or "O1 0.2568,0,1/4 occ=0.5"; put # before what is no part of the table',
   );
 }
 

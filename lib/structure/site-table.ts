@@ -9,7 +9,7 @@ export interface MeasuredNumber {
   readonly su: number | null;
 }
 
-/** A coordinate as a paper writes it, `0.2568(3)`, `1/4`, `x`, `x+1/2`, `-2x`: linear in the free parameters x, y, z. */
+/** A coordinate as a paper writes it, `0.2568(3)`, `1/4`, `x+1/2`, `-2x`: linear in the free parameters x, y, z. */
 export interface TableCoordinate {
   readonly coefficients: Vec3;
   readonly constant: number;

@@ -73,7 +73,7 @@ export function pointsOfPosition({ group }: AssignmentGroup, { form }: PositionI
   return [...found.values()];
 }
 
-/** The first triplet with numbers for its letters. @param free values of x, y, z; those it does not have are not used */
+/** The first triplet with numbers for its letters. @param free values of x, y, z; what it does not have is not used */
 export function pointOfForm({ M, t }: AffineForm, free: readonly [number, number, number]): [number, number, number] {
   const at = (i: number) => {
     const [x, y, z] = free;

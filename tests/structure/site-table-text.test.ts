@@ -122,6 +122,7 @@ describe("a table", () => {
     ["group 1\ngroup 2\ncell a=4\nCa 6b", "table-unreadable", 2, 7],
     ["cell a=4\nCa 6b", "group-missing", 2, 6],
     ["group 225\nCa 6b", "cell-missing", 2, 6],
+    ["# x\n data_salt\n_cell_length_a 5", "table-unreadable", 2, 1],
     [HEAD, "sites-missing", 3, 1],
     ["", "group-missing", 1, 1],
   ])("%j is refused: %s at %i:%i", (text, code, line, column) => {
