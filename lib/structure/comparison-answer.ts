@@ -83,6 +83,13 @@ export interface Comparison {
 /**
  * Whether two files hold the same structure, in whatever cell, setting and origin each is given. Atoms are alike by
  * element; occupancies are compared afterwards.
+ * @example
+ * ```ts
+ * const calcite = crystalFromBlock(requireClean(readCif(text)).blocks[0]!);
+ * const { answer } = compareStructures(calcite, symmetrisedCrystal(calcite, searchSymmetry(calcite), "conventional").crystal);
+ * [answer.verdict, answer.hand]; // ["same", "same"]
+ * answer.displacement!.largest < 1e-6; // true
+ * ```
  * @throws InputProblem `tolerance-impossible`, `atoms-missing`
  */
 export function compareStructures(first: Crystal, second: Crystal, options: ComparisonOptions = {}): Comparison {

@@ -92,6 +92,14 @@ export interface Resited {
 
 /**
  * A crystal in another setting. S.u. and displacement parameters go with the atoms; those of the cell are not known here.
+ * @example
+ * ```ts
+ * const calcite = crystalFromBlock(requireClean(readCif(text)).blocks[0]!);
+ * const { answer, crystal } = resited(calcite, { kind: "setting", text: ":R" });
+ * answer.P; // "2/3a+1/3b+1/3c,-1/3a+1/3b+1/3c,-1/3a-2/3b+1/3c"
+ * answer.sites.map((s) => `${s.label} ${s.multiplicity}${s.wyckoff}`); // ["Ca1 2b", "C1 2a", "O1 6e"]
+ * resited(crystal, { kind: "reference" }).answer.P; // "a-b,b-c,a+b+c"
+ * ```
  * @throws InputProblem `setting-unknown`, `hall-unreadable`, and as `changeOfCell`
  * @example
  * ```ts

@@ -8,6 +8,13 @@ import { type Resited, resiteAnswer } from "./resite-answer.ts";
 
 /**
  * A structure compared with another, and where the two agree, written on the axes and origin of the other.
+ * @example
+ * ```ts
+ * const calcite = crystalFromBlock(requireClean(readCif(text)).blocks[0]!);
+ * const other = resited(calcite, { kind: "setting", text: "a,b,c;0,0,1/4" }).crystal;
+ * const { answer } = resitedOnto(calcite, other);
+ * [answer.comparison!.verdict, answer.P, answer.p]; // ["same", "a,b,c", "0,0,1/4"]
+ * ```
  * @throws InputProblem as `compareStructures`
  * @example
  * ```ts
