@@ -1,4 +1,11 @@
-import type { DipoleAnswer, GeometryAnswer, PolariseAnswer, RamanTensorAnswer } from "../vibrations/index.ts";
+import type {
+  AngleLaw,
+  DipoleAnswer,
+  GeometryAnswer,
+  PolariseAnswer,
+  RamanTensorAnswer,
+  RotationLaw,
+} from "../vibrations/index.ts";
 import { formatNumber } from "./format-number.ts";
 import { type SpeciesWriter, speciesWriter } from "./species.ts";
 import { type Column, textTable, wrapText } from "./table.ts";
@@ -15,11 +22,18 @@ export function polariseText(answer: PolariseAnswer, write: SpeciesWriter = spec
   ];
   if (answer.geometries.length > 0) parts.push(`Geometries asked for:\n${geometryTable(answer.geometries, write)}`);
   parts.push(`Backscattering, light along z, x and y:\n${geometryTable(answer.faces, write)}`);
+  if (answer.naturalFaces.length > 0) {
+    const head = wrapText(`Backscattering from the natural faces of a monoclinic crystal; ${NATURAL}:`, WIDTH);
+    parts.push(`${head}\n${geometryTable(answer.naturalFaces, write)}`);
+  }
   parts.push(separatingText(answer, write));
   if (answer.rotation) parts.push(rotationText(answer.rotation, write));
   parts.push(wrapText(CAUTION, WIDTH));
   return parts.join("\n\n");
 }
+
+const NATURAL =
+  "(hkl) is the normal of a face, [uvw] a direction of the lattice of the file, tensor elements are in the frame above";
 
 const CAUTION =
   "These are rules for the ideal crystal inside the sample: a birefringent crystal turns polarisations that do not lie along its optical directions, and wide-aperture objectives mix geometries. Lasers blind and heat: keep to the laser rules of your laboratory, and start dark or toxic pigments at the lowest power.";
@@ -86,5 +100,44 @@ function rotationText(rotation: NonNullable<PolariseAnswer["rotation"]>, write: 
     ...shown.flatMap((c) => [formatNumber(c.parallel[i]!, 4), formatNumber(c.crossed[i]!, 4)]),
   ]);
   const head = `Intensity while the crystal turns about ${rotation.about}, polarisation at 0 degrees along ${rotation.zero}, with ${rotation.letters}:`;
-  return `${wrapText(head, WIDTH)}\n${textTable(columns, rows)}`;
+  const laws = rotation.laws.flatMap((law) => lawLines(law, write));
+  return `${wrapText(head, WIDTH)}\n${textTable(columns, rows)}\n\n${LAW}\n${laws.join("\n")}`;
+}
+
+const LAW =
+  "At the angle φ, right-handed about the light, in the letters of the tensors (intensities; partners are added):";
+
+function lawLines({ label, partners }: RotationLaw, write: SpeciesWriter): string[] {
+  const sum = (squares: readonly string[]) => squares.filter(Boolean).join(" + ") || "0";
+  const parallel = sum(partners.map((p) => square(...parallelTerms(p.parallel))));
+  const crossed = sum(partners.map((p) => square(p.crossed, ["cos2φ", "sin2φ"])));
+  const lines = [`${write.label(label)} parallel: ${parallel}`, `${write.label(label)} crossed: ${crossed}`];
+  return lines.map((line) => `  ${wrapText(line.replaceAll("sqrt", "√"), WIDTH - 2, "      ")}`);
+}
+
+/** Coefficients and functions, shorter where those of cos²φ and sin²φ are equal or opposite. */
+function parallelTerms([u, v, w]: AngleLaw["parallel"]): [string[], string[]] {
+  if (u !== "0" && u === w)
+    return [
+      [u, v],
+      ["", "sin2φ"],
+    ];
+  if (u !== "0" && (w === `-${u}` || u === `-${w}`))
+    return [
+      [u, v],
+      ["cos2φ", "sin2φ"],
+    ];
+  return [
+    [u, v, w],
+    ["cos²φ", "sin2φ", "sin²φ"],
+  ];
+}
+
+/** `(a cos²φ + (b-c) sin²φ)²`; empty where all is 0. */
+function square(coefficients: readonly string[], functions: readonly string[]): string {
+  const terms = coefficients.flatMap((c, i) => {
+    if (c === "0") return [];
+    return [`${/.[+-]/.test(c) ? `(${c})` : c} ${functions[i]}`.trim()];
+  });
+  return terms.length === 0 ? "" : `(${terms.join(" + ").replaceAll("+ -", "- ")})²`;
 }

@@ -70,6 +70,7 @@ export {
 export { type PrimitiveAtom, primitiveAtoms } from "./primitive-atoms.ts";
 export { intensityOf, type PolarPart, type SpeciesScattering, scatteringOf } from "./raman-scattering.ts";
 export { type RotationCurve, type RotationTable, rotationTable } from "./rotation-curve.ts";
+export type { AngleLaw, RotationLaw } from "./rotation-law.ts";
 export { type Scaffold, type Star, unitScaffold, unitStars } from "./scaffold.ts";
 export { type ScatteringGeometry, scatteringGeometry } from "./scattering-geometry.ts";
 export type { SpeciesCounts } from "./species-counts.ts";

@@ -3,6 +3,7 @@ import type { Crystal } from "../structure/index.ts";
 import { type CrystalTensors, crystalTensors, hyperRamanTensors } from "./crystal-tensors.ts";
 import { type FactorGroupModes, factorGroupModes } from "./factor-group.ts";
 import { parseDirection } from "./geometry-text.ts";
+import { naturalFaces } from "./natural-faces.ts";
 import type { PolarPart, SpeciesScattering } from "./raman-scattering.ts";
 import { type RotationTable, rotationTable } from "./rotation-curve.ts";
 import { rotationAbout } from "./scattering-geometry.ts";
@@ -60,6 +61,8 @@ export interface PolariseAnswer {
   readonly geometries: readonly GeometryAnswer[];
   /** Backscattering from the faces normal to x, y and z. */
   readonly faces: readonly GeometryAnswer[];
+  /** Backscattering from (100), (010) and (001) of monoclinic crystals, which are not all normal to axes; else empty. */
+  readonly naturalFaces: readonly GeometryAnswer[];
   /** A shortest set that tells all Raman species with modes apart; null where five geometries do not. */
   readonly separating: readonly GeometryAnswer[] | null;
   readonly rotation:
@@ -108,6 +111,7 @@ export function polariseAnswer(crystal: Crystal, options: PolariseOptions = {}):
     piezoelectric: tensors.dipoles.some((d) => tensors.raman.some((r) => r.irrep === d.irrep)),
     geometries: (options.geometries ?? []).map((text) => answer(geometryResult(tensors, text))),
     faces: BACKSCATTERING.map((text) => answer(geometryResult(tensors, text))),
+    naturalFaces: naturalFaces(crystal, tensors).map(answer),
     separating: separatingGeometries(tensors, present)?.map(answer) ?? null,
     rotation: options.rotation ? rotationAnswer(tensors, options.rotation) : null,
   };

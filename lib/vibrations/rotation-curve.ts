@@ -1,6 +1,7 @@
 import type { Vec3 } from "../structure/index.ts";
 import type { CrystalTensors } from "./crystal-tensors.ts";
 import { intensityOf, scatteringOf } from "./raman-scattering.ts";
+import { type RotationLaw, rotationLaws } from "./rotation-law.ts";
 import type { ScatteringGeometry } from "./scattering-geometry.ts";
 
 /** Intensities of one species while the crystal turns about the light; one value per angle. */
@@ -14,6 +15,8 @@ export interface RotationTable {
   /** Degrees, from the first polarisation towards the second. */
   readonly angles: readonly number[];
   readonly curves: readonly RotationCurve[];
+  /** The same in letters. */
+  readonly laws: readonly RotationLaw[];
 }
 
 /**
@@ -53,5 +56,5 @@ export function rotationTable(
         : 0;
     });
   const curves = tensors.raman.map(({ label }) => ({ label, parallel: shown(label, 0), crossed: shown(label, 90) }));
-  return { angles, curves };
+  return { angles, curves, laws: rotationLaws(tensors, k, zero, ninety) };
 }

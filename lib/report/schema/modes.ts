@@ -1,4 +1,5 @@
 import type {
+  AngleLaw,
   GeometryAnswer,
   HyperRamanAnswer,
   IrrepAnswer,
@@ -6,6 +7,7 @@ import type {
   PatternAnswer,
   PatternsAnswer,
   PolariseAnswer,
+  RotationLaw,
 } from "../../vibrations/index.ts";
 import { vector, xyz } from "./common.ts";
 import { letter } from "./group.ts";
@@ -19,9 +21,11 @@ import {
   number,
   object,
   orNull,
+  pair,
   type Shape,
   text,
   textLike,
+  triple,
   whole,
 } from "./shape.ts";
 import { type CrystalDocument, crystalHeading } from "./structure.ts";
@@ -142,6 +146,18 @@ export function polariseSchema(): Shape<CrystalDocument<PolariseAnswer>> {
         crossed: list(number()),
       }),
     ),
+    laws: list(
+      object<RotationLaw>({
+        label: text(),
+        partners: list(
+          object<AngleLaw>({
+            parallel: triple(text(), "amplitude: of cos^2 phi, sin 2 phi, sin^2 phi"),
+            crossed: pair(text(), "amplitude: of cos 2 phi, sin 2 phi"),
+          }),
+        ),
+      }),
+      "the same in letters; intensities are sums of squares over the partners",
+    ),
   });
   return object<CrystalDocument<PolariseAnswer>>({
     ...crystalHeading("polarise"),
@@ -168,6 +184,7 @@ export function polariseSchema(): Shape<CrystalDocument<PolariseAnswer>> {
     piezoelectric: flag(),
     geometries: list(geometry, "those asked for, or a standard set"),
     faces: list(geometry, "in backscattering from the faces"),
+    naturalFaces: list(geometry, "backscattering from (100), (010), (001) of a monoclinic crystal"),
     separating: orNull(list(geometry), "geometries that tell the species apart; null where none do"),
     rotation: orNull(rotation),
   });
