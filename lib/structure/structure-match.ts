@@ -34,7 +34,9 @@ export interface MatchLimits {
 }
 
 /** Cells of sublattices up to this index are compared. */
-const LARGEST_INDEX = 16;
+const LARGEST_INDEX = 200;
+/** Up to this index, how far the nearest lattice is apart is worth its search. */
+const LARGEST_NEAR_INDEX = 16;
 
 /**
  * Ways to lay the atoms of two structures onto each other, of either hand: primitive cells first (or a sublattice of one
@@ -141,10 +143,10 @@ export function keepsHand({ P }: Pick<StructureMatch, "P">): boolean {
   return determinant(P.n) > 0;
 }
 
-/** The strain of the nearest lattice, for telling how far two of them are apart; null where none is within reach. */
+/** The nearest lattice within a reach, for telling how far two of them are apart; null where none is. */
 export function nearestLattice(first: ComparedAtoms, second: ComparedAtoms, reach: number): LatticeMatch | null {
   const [a, b] = [first.folded.atoms.axes, second.folded.atoms.axes];
-  const swap = Math.abs(volumeOfAxes(b)) < Math.abs(volumeOfAxes(a));
-  const matches = swap ? latticeMatches(b, a, reach) : latticeMatches(a, b, reach);
-  return matches[0] ?? null;
+  const ratio = Math.abs(volumeOfAxes(b) / volumeOfAxes(a));
+  if (Math.max(ratio, 1 / ratio) > LARGEST_NEAR_INDEX) return null;
+  return (ratio < 1 ? latticeMatches(b, a, reach) : latticeMatches(a, b, reach))[0] ?? null;
 }
