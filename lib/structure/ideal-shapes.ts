@@ -70,7 +70,7 @@ function cappedOctahedron(): Vec3[] {
   let [low, high] = [70, 85];
   for (let halving = 0; halving < 60; halving++) {
     const middle = (low + high) / 2;
-    if (cosine(middle) > Math.cos(middle * DEGREE)) low = middle;
+    if (cosine(middle) < Math.cos(middle * DEGREE)) low = middle;
     else high = middle;
   }
   return [UP, ...ring(3, low), ...ring(3, farRing(low), 60)];
@@ -80,8 +80,8 @@ function cappedOctahedron(): Vec3[] {
 const caps = (n: number): Vec3[] => ring(3, 90, 60).slice(0, n);
 
 /** Cosine -1/4 between axial and basal corners, on the way from trigonal bipyramid to octahedron. */
-const PYRAMID_ANGLE = 104.4775;
-const TETRAHEDRAL = 109.4712206;
+const PYRAMID_ANGLE = Math.acos(-1 / 4) / DEGREE;
+const TETRAHEDRAL = Math.acos(-1 / 3) / DEGREE;
 
 function cuboctahedron(mirrored: boolean): Vec3[] {
   const theta = Math.atan2(1 / Math.sqrt(3), Math.sqrt(2 / 3)) / DEGREE;

@@ -1,6 +1,6 @@
 import type { Mat3, Vec3 } from "./cell.ts";
 
-/** Steps of Newton's method at most; a double root converges by halves. */
+/** Steps of Newton's method at most; a multiple root, as of a mirrored body, converges by halves, to five digits. */
 const MOST_STEPS = 200;
 
 /**
