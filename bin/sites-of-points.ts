@@ -1,3 +1,4 @@
+import { InputProblem } from "../lib/problem.ts";
 import { groupName, pointsText, wrapText } from "../lib/report/index.ts";
 import {
   checkedTolerance,
@@ -7,7 +8,7 @@ import {
   parseCellParameters,
   pointsAnswer,
 } from "../lib/structure/index.ts";
-import { type IdentifiedGroup, identifyGroup, namedGroup, parsePoint } from "../lib/symmetry/index.ts";
+import { type IdentifiedGroup, identifyGroup, type NamedGroup, namedGroup, parsePoint } from "../lib/symmetry/index.ts";
 import { type Arguments, type CommandSpec, parseArguments } from "./arguments.ts";
 import { deliver, type Heading, jsonDocument } from "./output.ts";
 import { UsageProblem } from "./problems.ts";
@@ -21,8 +22,7 @@ export async function answerPoints(words: readonly string[], spec: CommandSpec):
   if (args.operands.length > 0) throw new UsageProblem(`give either a file or --group, not both: ${args.operands[0]}`);
   const points = args.texts("at").map((text) => usage(() => parsePoint(text)));
   if (points.length === 0) throw new UsageProblem('--group needs a point: --at "0.1,1/4,0.3"');
-  const { identified, notes } = groupCalled(name);
-  const near = nearness(args, identified);
+  const { identified, near, notes } = groupCalled(name, args);
   const { sites, notes: missed } = usage(() => pointsAnswer({ identified, points, near, images: args.flag("orbit") }));
   const heading: Heading = {
     command: spec.name,
@@ -39,24 +39,43 @@ export async function answerPoints(words: readonly string[], spec: CommandSpec):
 const EXACT =
   "no cell is given, so there is no length: points are taken as written, and near ones are not one position";
 
-function groupCalled(name: string): { identified: IdentifiedGroup; notes: string[] } {
-  const { understoodAs, settings, ambiguity } = usage(() => namedGroup(name));
-  const open = ambiguity.length > 0 ? `; left open: ${ambiguity.join(", ")}, the most usual is taken` : "";
-  return { identified: identifyGroup(settings[0].group), notes: [`"${name}" read as ${understoodAs}${open}`] };
+interface CalledGroup {
+  readonly identified: IdentifiedGroup;
+  readonly near: { readonly metric: Metric; readonly tolerance: number } | null;
+  readonly notes: readonly string[];
 }
 
-function nearness(args: Arguments, { group, summary }: IdentifiedGroup): { metric: Metric; tolerance: number } | null {
+/** The group, in the most usual setting that the cell fits if one is given. */
+function groupCalled(name: string, args: Arguments): CalledGroup {
+  const { understoodAs, settings, ambiguity } = usage(() => namedGroup(name));
+  const { setting, near } = usage(() => settledBy(settings, args));
+  const open =
+    ambiguity.length > 0 ? `; left open: ${ambiguity.join(", ")}; ${setting.name} is taken, the most usual` : "";
+  const fitting = near && settings.length > 1 ? " that the cell fits" : "";
+  const notes = [`"${name}" read as ${understoodAs}${open}${open && fitting}`];
+  return { identified: identifyGroup(setting.group), near, notes };
+}
+
+/** @throws InputProblem that of the most usual setting, if the cell fits none */
+function settledBy(settings: NamedGroup["settings"], args: Arguments) {
   const written = args.text("cell");
   const tolerance = args.number("tolerance");
   if (written === null) {
     if (tolerance !== null) throw new UsageProblem("--tolerance is a length, which needs --cell here");
-    return null;
+    return { setting: settings[0], near: null };
   }
-  return usage(() => {
-    const { values, spans } = parseCellParameters(written);
-    const metric = completedCell(values, group, { groupName: summary.hermannMauguin, spans });
-    return { metric, tolerance: checkedTolerance(tolerance ?? POSITION_TOLERANCE) };
-  });
+  const { values, spans } = parseCellParameters(written);
+  let first: InputProblem | null = null;
+  for (const setting of settings) {
+    try {
+      const metric = completedCell(values, setting.group, { groupName: setting.name, spans });
+      return { setting, near: { metric, tolerance: checkedTolerance(tolerance ?? POSITION_TOLERANCE) } };
+    } catch (e) {
+      if (!(e instanceof InputProblem) || e.code === "tolerance-impossible") throw e;
+      first ??= e;
+    }
+  }
+  throw first;
 }
 
 function cellNote({ cell }: Metric): string {

@@ -38,14 +38,34 @@ export interface NamedGroup {
 export function namedGroup(text: string): NamedGroup {
   const asked = /^(\s*hall\b[\s:]*)(.*)$/is.exec(text);
   if (asked) return fromHall(text, asked[2]!, asked[1]!.length);
+  const { name, number } = splitNumber(text);
   try {
-    const { understoodAs, candidates, ambiguity } = readGroupName(text);
-    const [first, ...others] = candidates.map(settingOf);
-    return { understoodAs, settings: [first!, ...others], ambiguity };
+    const { understoodAs, candidates, ambiguity } = readGroupName(name);
+    const [first, ...others] = candidates.filter((c) => number === null || c.number === number).map(settingOf);
+    if (!first) throw numberUnlike(text, name, number!);
+    return { understoodAs, settings: [first, ...others], ambiguity };
   } catch (e) {
     if (!(e instanceof InputProblem)) throw e;
     return hallInstead(text, e);
   }
+}
+
+/** `P b n m (No. 62)`, `Pbnm, #62`, `R -3 c (167)`; 1 and 2 in brackets are origins. `No. 62` is a number alone. */
+function splitNumber(text: string): { readonly name: string; readonly number: number | null } {
+  const alone = /^\s*(?:no\.?|nr\.?|#)\s*(\d{1,3})\s*$/i.exec(text);
+  if (alone) return { name: alone[1]!, number: null };
+  const m = /^(.*[^\s,;(])[\s,;(]+(?:(?:no\.?|nr\.?|#)\s*(\d{1,3})\)?|(?<=\()([3-9]|\d{2,3})\))\s*$/i.exec(text);
+  return m ? { name: m[1]!, number: Number(m[2] ?? m[3]) } : { name: text, number: null };
+}
+
+function numberUnlike(text: string, name: string, number: number): InputProblem {
+  const start = text.lastIndexOf(String(number));
+  return new InputProblem(
+    "group-name-contradiction",
+    `${name.trim()} is not No. ${number}`,
+    { start, end: start + String(number).length },
+    "correct the symbol or the number, or leave one of them out",
+  );
 }
 
 function settingOf({ number, setting, transformation }: GroupNameCandidate): NamedSetting {

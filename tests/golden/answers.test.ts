@@ -26,7 +26,8 @@ const CASES: Readonly<Record<string, readonly string[]>> = {
     'sitefold sites --group "P 63/m m c" --at 0.333,0.667,1/4',
     'sitefold sites --group "P 63/m m c" --at 0.333,0.667,1/4 --cell "a=3.16 c=12.3" --json',
     'sitefold sites --group "R -3 c" --at 0.25,0',
-    'sitefold sites --group "R -3 c" --at 0,0,0 --cell "a=5 gamma=90"',
+    'sitefold sites --group "R -3 c" --at 1/4,1/4,1/4 --cell "a=6.37 alpha=46.1"',
+    'sitefold sites --group 194 --at 0,0,0 --cell "a=5 c=6 gamma=90"',
   ],
   positions: [
     "sitefold positions fixtures/halite.cif",

@@ -15,6 +15,11 @@ describe("a group called by name", () => {
     ["-P 2ac 2n", 62, "P n m a", "reference"],
     ["P 2yb", 4, "P 21", "reference"],
     ["Hall: P 2", 3, "P 1 1 2", "c"],
+    ["Pbnm (No. 62)", 62, "P b n m", "cab"],
+    ["P b n m, #62", 62, "P b n m", "cab"],
+    ["R-3c (167)", 167, "R -3 c", "reference"],
+    ["No. 62", 62, "P n m a", "reference"],
+    ["I 41/a (2)", 88, "I 41/a", "reference"],
     ["hall -P 2ybc", 14, "P 21/c", "reference"],
   ])("%s is No. %i, %s, setting %s", (text, number, symbol, setting) => {
     const { number: n, hermannMauguin, settingName } = summaryOf(text);
@@ -33,6 +38,7 @@ describe("a group called by name", () => {
     ["-Q 2", "hall-unreadable", 1],
     ["hall  -Q 2", "hall-unreadable", 7],
     ["231", "group-name-unknown", 0],
+    ["P 21/c (No. 62)", "group-name-contradiction", 12],
   ])("%j is refused: %s at character %i", (text, code, start) => {
     const problem = problemOf(() => namedGroup(text));
     expect([problem.code, problem.span!.start]).toEqual([code, start]);
