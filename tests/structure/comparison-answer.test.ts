@@ -12,9 +12,9 @@ import {
   metricOf,
   type Vec3,
 } from "../../lib/structure/index.ts";
-import { operationKey, parseTransformation, reduce, transformOperation } from "../../lib/symmetry/index.ts";
+import { operationKey, parseTransformation, reduce, spaceGroup, transformOperation } from "../../lib/symmetry/index.ts";
 import { CORPUS, CORPUS_FILES } from "../support/corpus.ts";
-import { fixture } from "../support/crystals.ts";
+import { atom, fixture } from "../support/crystals.ts";
 import { disguised, randomNumbers, randomStructure } from "../support/random-structures.ts";
 import { retold } from "../support/retold.ts";
 
@@ -154,6 +154,19 @@ describe("structures that are not the same", () => {
     const { answer } = compareStructures(rutile, withRows(rutile, moved));
     expect([answer.verdict, answer.disagreement]).toEqual(["different", "positions"]);
     expect(answer.nearest!.largest).toBeGreaterThan(0.3);
+  });
+
+  it("do not let two atoms share one partner", () => {
+    const metric = metricOf({ a: 5, b: 5, c: 5, alpha: 90, beta: 90, gamma: 90 });
+    const row = (...x: number[]) =>
+      crystalOf({
+        name: "",
+        metric,
+        group: spaceGroup([]),
+        sites: x.map((e, i) => atom(`O${i}`, "O", [e / 5, 0, 0])),
+      });
+    const { answer } = compareStructures(row(0.35, 3), row(0.2, 0.5));
+    expect([answer.verdict, answer.disagreement]).toEqual(["different", "positions"]);
   });
 
   it("are told apart by a strain beyond the limit, which is given", () => {

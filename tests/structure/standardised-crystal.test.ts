@@ -1,5 +1,6 @@
 import { describe, expect, it } from "vitest";
-import { type Crystal, standardisedCrystal } from "../../lib/structure/index.ts";
+import { IDENTITY } from "../../lib/algebra/index.ts";
+import { type Crystal, lengthOf, niggliReduction, standardisedCrystal } from "../../lib/structure/index.ts";
 import { randomNumbers, randomStructure } from "../support/random-structures.ts";
 import { retold } from "../support/retold.ts";
 
@@ -29,4 +30,63 @@ describe("the standard description", () => {
       }
     });
   }
+});
+
+describe("the standard cell", () => {
+  const standard = (number: number, seed: number) => {
+    const random = randomNumbers(seed);
+    return standardisedCrystal(retold(randomStructure(number, random), random)).crystal;
+  };
+
+  it("is the Niggli cell of a triclinic structure", () => {
+    for (let seed = 1; seed < 12; seed++) {
+      const { metric } = standard(1 + (seed % 2), seed);
+      expect(niggliReduction(metric.toCartesian)).toEqual(IDENTITY);
+    }
+  });
+
+  it("has a beta that is not acute and no shorter a or c in a monoclinic structure", () => {
+    for (const number of [3, 7, 9, 12, 14, 15]) {
+      for (let seed = 1; seed < 6; seed++) {
+        const { metric } = standard(number, seed);
+        const { a, b, c, beta } = metric.cell;
+        expect([number, beta >= 90, b > 0]).toEqual([number, true, true]);
+        // |a + 2c| and |c + 2a| keep every glide and centring
+        expect(lengthOf(metric, [1, 0, 2])).toBeGreaterThanOrEqual(a - 1e-9);
+        expect(lengthOf(metric, [2, 0, 1])).toBeGreaterThanOrEqual(c - 1e-9);
+      }
+    }
+  });
+
+  it("has ascending axes where the orthorhombic symbol permits all orders, and the shortest first where it permits three", () => {
+    for (let seed = 1; seed < 6; seed++) {
+      for (const number of [16, 19, 47, 71]) {
+        const { a, b, c } = standard(number, seed).metric.cell;
+        expect([number, a <= b, b <= c]).toEqual([number, true, true]);
+      }
+      const { a, b, c } = standard(61, seed).metric.cell;
+      expect(a).toBe(Math.min(a, b, c));
+    }
+  });
+});
+
+describe("the standard order", () => {
+  it("of sites runs down the letters, then up x, y, z, and numbers each element", () => {
+    for (const number of [12, 47, 62, 123, 166, 194, 216, 225]) {
+      const random = randomNumbers(number);
+      const { crystal, description } = standardisedCrystal(randomStructure(number, random));
+      const { sites } = description;
+      for (let k = 1; k < sites.length; k++) {
+        const [before, after] = [sites[k - 1]!, sites[k]!];
+        expect(before.letter >= after.letter || before.letter === "A").toBe(true);
+        if (before.letter === after.letter) expect(before.position[0]).toBeLessThanOrEqual(after.position[0] + 1e-6);
+      }
+      const counts = new Map<string, number>();
+      for (const { label, element } of crystal.sites) {
+        const next = (counts.get(element!) ?? 0) + 1;
+        counts.set(element!, next);
+        expect(label).toBe(`${element}${next}`);
+      }
+    }
+  });
 });
