@@ -42,7 +42,8 @@ export async function run(words: readonly string[]): Promise<number> {
   if (operand === "-" || existsSync(operand)) {
     const question = await askCrystal(words, spec);
     const identified = inSetting(question.crystal.identified, args);
-    return answerQuestion(question, groupAnswer(identified), () => groupText(groupAnswer(identified)));
+    const answer = groupAnswer(identified);
+    return answerQuestion(question, answer, () => groupText(answer, identified !== question.crystal.identified));
   }
   const { identified, notes } = groupCalled(operand);
   const answer = groupAnswer(inSetting(identified, args));

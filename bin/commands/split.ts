@@ -72,6 +72,7 @@ export async function run(words: readonly string[]): Promise<number> {
   const answer = usage(() => splitAnswer(crystal, readOptions(args)));
   const write = speciesWriter(args.flag("f") ? "F" : "T");
   if (args.flag("svg")) {
+    if (args.flag("json")) throw new UsageProblem("--svg and --json ask for two formats");
     await deliver(correlationSvg(answer.units, answer.factorGroup, write), args, file === "-" ? null : file);
     return 0;
   }

@@ -5,6 +5,7 @@ import { answerQuestion, type Question } from "../ask.ts";
 import { EXAMPLE } from "../examples/symmetrise.ts";
 import { blaming, chooseBlock, readSource } from "../input.ts";
 import { deliver } from "../output.ts";
+import { UsageProblem } from "../problems.ts";
 import { usage } from "../usage.ts";
 
 export const spec: CommandSpec = {
@@ -37,6 +38,7 @@ export async function run(words: readonly string[]): Promise<number> {
     }),
   );
   if (args.flag("cif")) {
+    if (args.flag("json")) throw new UsageProblem("--cif and --json ask for two formats");
     await deliver(symmetrisedCif(answer, crystal.name), args, file === "-" ? null : file);
     return 0;
   }

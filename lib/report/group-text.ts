@@ -4,15 +4,15 @@ import { textTable, wrapText } from "./table.ts";
 
 const WIDTH = 110;
 
-/** The whole answer of `group` for a person. */
-export function groupText(answer: GroupAnswer): string {
-  const parts = [subject(answer), operationTable(answer), conditionTable(answer), wyckoffTable(answer)];
+/** The whole answer of `group` for a person. @param named false where the heading has named the group already */
+export function groupText(answer: GroupAnswer, named = true): string {
+  const parts = [subject(answer, named), operationTable(answer), conditionTable(answer), wyckoffTable(answer)];
   if (answer.letterExchanges.length > 0) parts.push(exchangeText(answer));
   return parts.join("\n\n");
 }
 
-function subject({ spaceGroup: g }: GroupAnswer): string {
-  const lines = [`space group ${groupName({ ...g, operations: g.operations })}`];
+function subject({ spaceGroup: g }: GroupAnswer, named: boolean): string {
+  const lines = named ? [`space group ${groupName({ ...g, operations: g.operations })}`] : [];
   if (g.symbols)
     lines.push(`symbols: short ${g.symbols.short}; full ${g.symbols.full}; extended ${g.symbols.extended}`);
   lines.push(

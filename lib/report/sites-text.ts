@@ -1,7 +1,9 @@
 import type { SiteAnswer, SitesAnswer } from "../structure/index.ts";
 import { formatNumber } from "./format-number.ts";
 import { occupancyText } from "./positions-text.ts";
-import { type Column, textTable } from "./table.ts";
+import { type Column, textTable, wrapText } from "./table.ts";
+
+const WIDTH = 110;
 
 /** One line for each site. @param of points are no atoms: they have no element and no occupancy */
 export function sitesText(answer: SitesAnswer, of: "atoms" | "points" = "atoms"): string {
@@ -19,10 +21,23 @@ export function sitesText(answer: SitesAnswer, of: "atoms" | "points" = "atoms")
     { heading: "may move in" },
     { heading: tensorHeading(answer) },
   ];
-  return textTable(
+  const table = textTable(
     columns,
     answer.sites.map((site) => [site.label, ...(atoms ? atomCells(site) : []), ...siteCells(site)]),
   );
+  return [table, ...otherCell(answer)].join("\n\n");
+}
+
+/** Multiplicities of positions count in the reference cell; without a word, `1` beside `4a` looks like a fault. */
+function otherCell({ sites }: SitesAnswer): string[] {
+  const differing = sites.find((s) => s.multiplicity !== Number.parseInt(s.referencePosition, 10));
+  if (!differing) return [];
+  const { multiplicity, referencePosition } = differing;
+  const letter = referencePosition.replace(/^\d+/, "");
+  const text =
+    `"in cell" counts in the cell of the file, the multiplicity before the letter in the cell of the reference setting: ` +
+    `position ${referencePosition} has multiplicity ${multiplicity} here, under the letter ${letter} of that setting`;
+  return [wrapText(text, WIDTH, "  ")];
 }
 
 function tensorHeading({ sites }: SitesAnswer): string {

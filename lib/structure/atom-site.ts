@@ -73,6 +73,7 @@ class SiteReader {
   private readonly displacements: ReadonlyMap<number, DisplacementTensor>;
   private readonly labels = new Map<string, number>();
   private readonly left = { unknown: [] as string[], dummy: [] as string[] };
+  private readonly guessed = { elements: [] as string[], occupancies: [] as string[] };
   private readonly repeated: string[] = [];
   private readonly cartesian: boolean;
 
@@ -122,6 +123,7 @@ class SiteReader {
     if (dummy.length > 0) this.notes.push(`left out as dummy atoms: ${dummy.join(", ")}`);
     if (this.repeated.length > 0)
       this.notes.push(`labels used more than once: ${[...new Set(this.repeated)].join(", ")}`);
+    this.notes.push(...guesses(this.guessed));
     const nameless = this.sites.filter((s) => s.element === null).map((s) => s.label);
     if (nameless.length > 0) this.notes.push(`no element could be read for ${nameless.join(", ")}`);
     return { sites: this.sites, notes: this.notes };
@@ -160,11 +162,16 @@ class SiteReader {
 
   private species(typeSymbol: string | null, label: string): SpeciesReading | null {
     const fromType = typeSymbol ? readTypeSymbol(typeSymbol, this.expected) : null;
-    return fromType ?? readLabel(label, this.expected);
+    if (fromType) return fromType;
+    const guess = readLabel(label, this.expected);
+    const goesOn = guess !== null && /^[A-Za-z]/.test(label.slice(guess.element.length));
+    if (guess && goesOn && !this.expected.has(guess.element)) this.guessed.elements.push(`${label} (${guess.element})`);
+    return guess;
   }
 
   private occupancy(row: number, label: string): number {
     const value = cellOf(this.loop, row, "_atom_site.occupancy");
+    if (value?.kind === "unknown") this.guessed.occupancies.push(label);
     if (value === null || value.kind === "unknown" || value.kind === "inapplicable") return 1;
     const n = numbOf(value);
     if (!n) throw unreadable("_atom_site.occupancy", label, value);
@@ -178,6 +185,22 @@ class SiteReader {
     this.repeated.push(written);
     return `${written}#${count}`;
   }
+}
+
+/** Labels of one note at most. */
+const SHOWN_LABELS = 12;
+
+function guesses({ elements, occupancies }: Record<"elements" | "occupancies", readonly string[]>): string[] {
+  const list = (labels: readonly string[]) => {
+    const more = labels.length - SHOWN_LABELS;
+    return labels.slice(0, SHOWN_LABELS).join(", ") + (more > 0 ? ` and ${more} more` : "");
+  };
+  const notes: string[] = [];
+  if (elements.length > 0) {
+    notes.push(`elements guessed from labels that go on with letters, as no type symbol is given: ${list(elements)}`);
+  }
+  if (occupancies.length > 0) notes.push(`occupancy is ? and taken as 1: ${list(occupancies)}`);
+  return notes;
 }
 
 function coordinate(value: CifValue | null, name: string, label: string): Numb | null {

@@ -109,10 +109,18 @@ function sameSymbol(setting: Setting, parts: readonly SymbolPart[], open: boolea
     const letters = setting.planeLetters[at]!;
     const same = (own: SymbolPart) =>
       own.axis === w.axis &&
-      (own.plane === w.plane || (own.plane !== null && w.plane !== null && letters.includes(w.plane)));
+      (own.plane === w.plane ||
+        (own.plane !== null && w.plane !== null && (letters.includes(w.plane) || OLD_GLIDES[own.plane] === w.plane)));
     return forms.some(same) || oldThreefold(setting, at, w, forms);
   });
 }
+
+/**
+ * Glides normal to the diagonals of C-centred tetragonal cells as they were written before g1 and g2 came into use, by
+ * the glides b and n of the primitive cell: `C -4 2 b` for P -4 b 2, `C 4 c n` for P 4 n c.
+ * Source: International Tables for X-ray Crystallography I (1952), symbols of other settings (from memory).
+ */
+const OLD_GLIDES: Readonly<Partial<Record<string, string>>> = { g1: "b", g2: "n" };
 
 /** `R -3 m 1` and `R 3 2 1` for R -3 m and R 3 2. */
 function withoutClosingOne(setting: Setting, parts: readonly SymbolPart[]): readonly SymbolPart[] {

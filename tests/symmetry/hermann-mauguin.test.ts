@@ -246,3 +246,17 @@ describe("settleByCell", () => {
     expect(settled.ambiguity).toEqual(["the cell fits none of them"]);
   });
 });
+
+describe("old letters of glides in C-centred tetragonal cells", () => {
+  it.each([
+    ["C -4 2 b", 117],
+    ["C -4 2 n", 118],
+    ["C 4 c n", 104],
+    ["C 4 m b", 100],
+    ["C 4/m m b", 127],
+  ])("%s is No. %i", (name, number) => {
+    const { candidates } = readGroupName(name);
+    expect([...new Set(candidates.map((c) => c.number))]).toEqual([number]);
+    expect(candidates[0]!.setting.axes).toBe("C");
+  });
+});
