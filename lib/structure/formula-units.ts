@@ -1,7 +1,7 @@
 import { gcd } from "../algebra/index.ts";
 import { type CifBlock, findValue } from "../cif/index.ts";
 import { InputProblem } from "../problem.ts";
-import { bondClasses } from "./bond-class.ts";
+import { bondClasses, isHydrogen } from "./bond-class.ts";
 import { cellContents, contentsMisfit } from "./composition.ts";
 import type { Crystal } from "./crystal.ts";
 import { type Formula, formatFormula, parseFormula } from "./formula-text.ts";
@@ -60,7 +60,11 @@ function heavyAtoms(formula: Formula): number {
   return [...formula].reduce((sum, [e, n]) => (e === "H" || e === "D" ? sum : sum + n), 0);
 }
 
-/** As chemists write it where counts are whole: organic ones in Hill's order, others by the sequence of elements. */
+/**
+ * As chemists write it where counts are whole: organic ones in Hill's order; salts of oxo-acids, hydroxides and hydrates
+ * with hydrogen as the last of the electropositive constituents, `KH2PO4`, `MgH2O2`; others by the sequence of elements.
+ * Source: IUPAC, Nomenclature of Inorganic Chemistry (2005), IR-4.4.2.1 and IR-4.4.3.4 (from memory).
+ */
 function written(formula: Formula): string {
   const counts = [...formula];
   const total = counts.reduce((s, [, n]) => s + n, 0);
@@ -68,5 +72,10 @@ function written(formula: Formula): string {
   const elements = counts.flatMap(([e, n]) => new Array<string>(n).fill(e));
   const { nonMetal } = bondClasses();
   const isOrganic = formula.has("C") && formula.has("H") && counts.every(([e]) => nonMetal.has(e));
-  return isOrganic ? hillFormula(elements) : sequenceFormula(elements);
+  if (isOrganic) return hillFormula(elements);
+  const metals = elements.filter((e) => !nonMetal.has(e));
+  if (metals.length === 0 || !formula.has("O") || formula.has("C")) return sequenceFormula(elements);
+  const hydrogen = elements.filter(isHydrogen);
+  const others = elements.filter((e) => nonMetal.has(e) && !isHydrogen(e));
+  return [metals, hydrogen, others].map(sequenceFormula).join("");
 }
