@@ -165,7 +165,7 @@ describe("structures that are not the same", () => {
         group: spaceGroup([]),
         sites: x.map((e, i) => atom(`O${i}`, "O", [e / 5, 0, 0])),
       });
-    const { answer } = compareStructures(row(0.35, 3), row(0.2, 0.5));
+    const { answer } = compareStructures(row(0.2, 0.5), row(0.35, 3));
     expect([answer.verdict, answer.disagreement]).toEqual(["different", "positions"]);
   });
 
