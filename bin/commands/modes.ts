@@ -1,8 +1,8 @@
 import { modesText, speciesWriter } from "../../lib/report/index.ts";
 import { statedFormula } from "../../lib/structure/index.ts";
-import { modesAnswer, structureWarnings } from "../../lib/vibrations/index.ts";
+import { type ModesAnswer, modesAnswer, structureWarnings } from "../../lib/vibrations/index.ts";
 import { COMMON_OPTIONS, type CommandSpec, POLYHEDRON_OPTION, SPECIES_OPTIONS } from "../arguments.ts";
-import { answerQuestion, askCrystal, withNotes } from "../ask.ts";
+import { answerQuestion, askCrystal, type Question, withNotes } from "../ask.ts";
 import { EXAMPLE } from "../examples/modes.ts";
 
 export const spec: CommandSpec = {
@@ -28,10 +28,17 @@ export async function run(words: readonly string[]): Promise<number> {
   if (!args.flag("units") && args.texts("polyhedron").length === 0) {
     const more =
       "Molecules and ions, a line for each of internal modes, R and T: --units; stretches, bends: --polyhedron Ti";
-    return answerQuestion(question, answer, () => `${modesText(answer, write)}\n\n${more}`);
+    return answerQuestion(question, await forJson(question, answer), () => `${modesText(answer, write)}\n\n${more}`);
   }
   const { unitParts } = await import("./split.ts"); // half as much code again, loaded only if asked for
   const parts = unitParts(question, answer, write);
   const text = () => [modesText(answer, write), ...parts.text()].join("\n\n");
-  return answerQuestion(question, { ...answer, ...parts.answer }, text);
+  return answerQuestion(question, { ...(await forJson(question, answer)), ...parts.answer }, text);
+}
+
+/** Raman tensors are in the document, not in the text, and are loaded for it only. */
+async function forJson({ args, crystal }: Question, answer: ModesAnswer): Promise<ModesAnswer> {
+  if (!args.flag("json")) return answer;
+  const { modesWithTensors } = await import("./polarise.ts");
+  return modesWithTensors(crystal, answer);
 }

@@ -1,6 +1,11 @@
 import { polariseText, speciesWriter } from "../../lib/report/index.ts";
 import { statedFormula } from "../../lib/structure/index.ts";
-import { type PolariseOptions, polariseAnswer, structureWarnings } from "../../lib/vibrations/index.ts";
+import {
+  type PolariseOptions,
+  polariseAnswer,
+  structureWarnings,
+  withRamanTensors,
+} from "../../lib/vibrations/index.ts";
 import { type Arguments, COMMON_OPTIONS, type CommandSpec, SPECIES_OPTIONS } from "../arguments.ts";
 import { answerQuestion, askCrystal, withNotes } from "../ask.ts";
 import { EXAMPLE } from "../examples/polarise.ts";
@@ -75,3 +80,6 @@ function readLetters(text: string | null): Map<string, number> {
     });
   return new Map(entries);
 }
+
+/** What `modes --json` adds to its species; here, so that its text loads no tensors. */
+export const modesWithTensors = withRamanTensors;

@@ -37,6 +37,7 @@ export {
   type ModePatterns,
   modePatterns,
 } from "./mode-patterns.ts";
+export { type TensorIrrep, type TensorModes, withRamanTensors } from "./mode-tensors.ts";
 export { type IrrepAnswer, type ModesAnswer, modesAnswer, type SiteModesAnswer } from "./modes-answer.ts";
 export { opticPatterns } from "./optic-patterns.ts";
 export {

@@ -2,12 +2,13 @@ import type {
   AngleLaw,
   GeometryAnswer,
   HyperRamanAnswer,
-  IrrepAnswer,
   ModesAnswer,
   PatternAnswer,
   PatternsAnswer,
   PolariseAnswer,
   RotationLaw,
+  TensorIrrep,
+  TensorModes,
 } from "../../vibrations/index.ts";
 import { vector, xyz } from "./common.ts";
 import { letter } from "./group.ts";
@@ -39,8 +40,8 @@ import {
   type WithUnits,
 } from "./units.ts";
 
-export function modesSchema(): Shape<CrystalDocument<ModesAnswer & WithUnits & WithPolyhedra>> {
-  const irrep = object<IrrepAnswer>({
+export function modesSchema(): Shape<CrystalDocument<TensorModes & WithUnits & WithPolyhedra>> {
+  const irrep = object<TensorIrrep>({
     label: text(),
     dimension: count("", 1),
     total: count(),
@@ -60,6 +61,13 @@ export function modesSchema(): Shape<CrystalDocument<ModesAnswer & WithUnits & W
       },
     },
     sites: byName(count(), "modes that each site contributes"),
+    ramanTensor: orNull(
+      object<NonNullable<TensorIrrep["ramanTensor"]>>({
+        letters: list(text()),
+        tensor: list(list(list(text())), "partner, row, column; a dot is 0"),
+      }),
+      "null where the species has none",
+    ),
   });
   const site = object<ModesAnswer["sites"][number]>({
     label: text(),
@@ -74,9 +82,10 @@ export function modesSchema(): Shape<CrystalDocument<ModesAnswer & WithUnits & W
     infrared: flag(),
     raman: flag(),
   });
-  return object<CrystalDocument<ModesAnswer & WithUnits & WithPolyhedra>>({
+  return object<CrystalDocument<TensorModes & WithUnits & WithPolyhedra>>({
     ...crystalHeading("modes"),
     atomsInPrimitiveCell: count("places, partly occupied ones in full", 1),
+    tensorFrame: text("Cartesian axes of the Raman tensors"),
     atomsByOccupancy: amount("the same, each place by its occupancy"),
     primitiveCellsInCell: count("", 1),
     centrings: list(xyz(), "centring translations but 0,0,0"),
