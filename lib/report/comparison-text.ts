@@ -14,6 +14,7 @@ export function comparisonText(answer: ComparisonAnswer): string {
     `limits: ${formatNumber(answer.limits.displacement, 2)} Å for an atom, ${percent(answer.limits.strain)} for the lattice, ${formatNumber(answer.limits.occupancy, 2)} for an occupancy`,
     ...(answer.displacement ? matchLines(answer) : differenceLines(answer)),
     ...aloneLines(answer),
+    ...symmetryLines(answer),
   ];
   const text = lines.map((line) => wrapText(line, WIDTH, "  ")).join("\n");
   return [text, structureTable(answer), ...(answer.pairs.length > 0 ? [pairTable(answer.pairs)] : [])].join("\n\n");
@@ -26,9 +27,8 @@ function verdictText({ verdict, disagreement, hand, elements }: ComparisonAnswer
         ? "the two files hold the same structure, but of the other hand: the second is the mirror image of the first"
         : "the two files hold the same structure";
     case "isotypic": {
-      const named = (elements ?? []).map((e) => (e.first === e.second ? e.first : `${e.first} as ${e.second}`));
       const image = hand === "other" ? ", the second as the mirror image" : "";
-      return `the two structures are isotypic${image}; elements of the first and the second: ${named.join(", ")}`;
+      return `the two structures are isotypic${image}: ${elementText(elements ?? [])}`;
     }
     case "incomplete":
       return `the two files hold the same structure${hand === "other" ? " of the other hand" : ""} as far as both give atoms: one has atoms that the other lacks`;
@@ -37,10 +37,21 @@ function verdictText({ verdict, disagreement, hand, elements }: ComparisonAnswer
   }
 }
 
+/** `Mg in place of Ca; C, O in both`. */
+function elementText(elements: NonNullable<ComparisonAnswer["elements"]>): string {
+  const changed = elements.filter((e) => e.first !== e.second).map((e) => `${e.first} in place of ${e.second}`);
+  const kept = elements.filter((e) => e.first === e.second).map((e) => e.first);
+  return [
+    ...(changed.length > 0 ? [changed.join(", ")] : []),
+    ...(kept.length > 0 ? [`${kept.join(", ")} in both`] : []),
+  ].join("; ");
+}
+
 const REASONS: Readonly<Record<NonNullable<ComparisonAnswer["disagreement"]>, string>> = {
   composition: "they differ in composition",
   lattice: "their lattices differ",
   positions: "the lattices agree, but the atoms lie elsewhere",
+  elements: "the atoms lie in the same places, but the elements are distributed over them otherwise",
   occupancy: "the atoms agree, but not their occupancies",
   "space group": "the atoms agree within the limits, but the space groups are of different types",
 };
@@ -75,6 +86,12 @@ function differenceLines({ strain, nearest, disagreement }: ComparisonAnswer): s
   }
   if (disagreement === "composition") lines.push("structures of other elements can be compared with --isotypic");
   return lines;
+}
+
+function symmetryLines({ first, second, verdict }: ComparisonAnswer): string[] {
+  if (verdict === "different" || first.spaceGroup.number === second.spaceGroup.number) return [];
+  const [a, b] = [first, second].map((s) => s.spaceGroup.hermannMauguin);
+  return [`told in ${a} by the first file and in ${b} by the second; symmetrise finds what symmetry the atoms have`];
 }
 
 /** Sites without a partner that are named. */

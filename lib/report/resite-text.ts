@@ -15,7 +15,7 @@ export function resiteText(answer: ResiteAnswer): string {
   const { comparison, standardisation } = answer;
   const parts = [
     ...(comparison ? [comparisonText(comparison)] : []),
-    ...(standardisation ? [standardisationText(standardisation, answer.spaceGroup.sohncke)] : []),
+    ...(standardisation ? [standardisationText(standardisation, answer.spaceGroup)] : []),
     ...(comparison?.verdict === "different" ? [] : [writtenText(answer), siteTable(answer.sites)]),
   ];
   return parts.join("\n\n");
@@ -31,16 +31,19 @@ function writtenText({ spaceGroup, P, p, cell, volume }: ResiteAnswer): string {
   return lines.map((line) => wrapText(line, WIDTH, "  ")).join("\n");
 }
 
-function standardisationText(found: StandardisationAnswer, sohncke: boolean): string {
+function standardisationText(found: StandardisationAnswer, { sohncke, number }: ResiteAnswer["spaceGroup"]): string {
   const { gamma, centre, axes, shifts, origins, free, compared, tied } = found;
   const along =
     free.length > 0
       ? `; the origin is free along ${free.join(", ")}: ${origins} ${origins === 1 ? "place" : "places"} tried, each with an atom at 0`
       : "";
   const lines = [
-    `standardised: gamma = ${formatNumber(gamma, 5)}, the smallest of ${plural(compared, "description")}${tied > 1 ? `, found in ${tied}` : ""}; mean position ${formatNumber(centre, 4)} from the origin`,
+    `standardised: gamma = ${formatNumber(gamma, 5)}, ${compared === 1 ? "of the only description" : `the smallest of ${compared} descriptions`}${tied > 1 ? `, found in ${tied}` : ""}; mean position ${formatNumber(centre, 4)} from the origin`,
     `compared: ${plural(axes, "choice")} of axes for the standard cell, ${plural(shifts, "origin")} for each${along}`,
     ...(sohncke ? [handText(found)] : []),
+    ...(number === 1
+      ? ["in P 1, as the file tells; where the atoms have more symmetry, symmetrise the structure first"]
+      : []),
     "gamma is the sum of sqrt(x^2 + y^2 + z^2) over the sites (E. Parthe, L. M. Gelato, Acta Cryst. A40, 1984, 169)",
   ];
   return lines.map((line) => wrapText(line, WIDTH, "  ")).join("\n");

@@ -52,18 +52,20 @@ export { type ChangedCell, changeOfCell, metricIn, multiplesOf } from "./change-
 export { chosenComponent, type DecidedCrystal, orderedCrystal } from "./chosen-component.ts";
 export type { SymmetryDisagreement } from "./compare-statements.ts";
 export {
-  COMPARISON_DISPLACEMENT,
-  COMPARISON_STRAIN,
   type ComparedStructure,
   type Comparison,
   type ComparisonAnswer,
-  type ComparisonOptions,
   compareStructures,
   type Disagreement,
+} from "./comparison-answer.ts";
+export {
+  COMPARISON_DISPLACEMENT,
+  COMPARISON_STRAIN,
+  type ComparisonOptions,
   ISOTYPIC_DISPLACEMENT,
   ISOTYPIC_STRAIN,
   OCCUPANCY_DIFFERENCE,
-} from "./comparison-answer.ts";
+} from "./comparison-limits.ts";
 export { type CellOrigin, completedCell } from "./completed-cell.ts";
 export { type ComposeAnswer, type ComposeResult, composeAnswer, type HigherSymmetry } from "./compose-answer.ts";
 export { type ComposedContents, composedContents } from "./composed-contents.ts";

@@ -2,7 +2,8 @@ import { InputProblem } from "../problem.ts";
 import { IDENTITY_TRANSFORMATION, type Transformation } from "../symmetry/index.ts";
 import type { Vec3 } from "./cell.ts";
 import { changeOfCell } from "./change-of-cell.ts";
-import { type ComparisonOptions, compareStructures } from "./comparison-answer.ts";
+import { compareStructures } from "./comparison-answer.ts";
+import type { ComparisonOptions } from "./comparison-limits.ts";
 import { type Crystal, crystalOf } from "./crystal.ts";
 import { type Resited, resiteAnswer } from "./resite-answer.ts";
 
@@ -32,8 +33,10 @@ export function resitedOnto(crystal: Crystal, other: Crystal, options: Compariso
     notes: note,
   });
   if (!match || comparison.verdict === "different") return stay([]);
-  if (comparison.hand === "other") return stay(["written as it stands: axes of the other hand would turn it over"]);
-  if (!match.exact) return stay(["written as it stands: the operations of the two files do not agree about an origin"]);
+  if (comparison.hand === "other")
+    return stay(["not written on the axes of the second file: axes of the other hand would turn the structure over"]);
+  if (!match.exact)
+    return stay(["not written on the axes of the second file: the operations of the two do not agree about an origin"]);
   const { origin, shift } = match.exact;
   try {
     const change: Transformation = { P: match.P, p: origin };
@@ -52,7 +55,7 @@ export function resitedOnto(crystal: Crystal, other: Crystal, options: Compariso
     };
   } catch (e) {
     if (!(e instanceof InputProblem)) throw e;
-    return stay([`written as it stands, since on the axes of the second file ${e.message}`]);
+    return stay([`not written on the axes of the second file: ${e.message}`]);
   }
 }
 

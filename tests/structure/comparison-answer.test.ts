@@ -156,6 +156,19 @@ describe("structures that are not the same", () => {
     expect(answer.nearest!.largest).toBeGreaterThan(0.3);
   });
 
+  it("are told apart by elements on the same places", () => {
+    const metric = metricOf({ a: 4, b: 4, c: 8, alpha: 90, beta: 90, gamma: 90 });
+    const chain = (elements: string) =>
+      crystalOf({
+        name: "",
+        metric,
+        group: spaceGroup([]),
+        sites: [...elements].map((e, i) => atom(`${e}${i}`, e, [0, 0, i / 8])),
+      });
+    const { answer } = compareStructures(chain("CCCNNNOO"), chain("CNCNCNOO"));
+    expect([answer.verdict, answer.disagreement]).toEqual(["different", "elements"]);
+  });
+
   it("do not let two atoms share one partner", () => {
     const metric = metricOf({ a: 5, b: 5, c: 5, alpha: 90, beta: 90, gamma: 90 });
     const row = (...x: number[]) =>

@@ -110,7 +110,14 @@ function comparison(): Shape<ComparisonAnswer> {
   return object<ComparisonAnswer>({
     verdict: choice({ same: true, isotypic: true, incomplete: true, different: true }),
     disagreement: orNull(
-      choice({ composition: true, lattice: true, positions: true, occupancy: true, "space group": true }),
+      choice({
+        composition: true,
+        lattice: true,
+        positions: true,
+        elements: true,
+        occupancy: true,
+        "space group": true,
+      }),
       "null unless they are different",
     ),
     first: compared(),
