@@ -1,10 +1,10 @@
 import { type AbsencesOptions, absencesAnswer, absencesQuestion, type Quantity } from "../../lib/audit/index.ts";
 import { decodeCif } from "../../lib/cif/index.ts";
 import { absencesText, groupName, wrapText } from "../../lib/report/index.ts";
-import { LATTICE_TOLERANCE } from "../../lib/structure/index.ts";
 import { type Arguments, COMMON_OPTIONS, type CommandSpec, onlyOperand, parseArguments } from "../arguments.ts";
 import { EXAMPLE } from "../examples/absences.ts";
 import { blaming, bytesOf, chooseBlock, readSource } from "../input.ts";
+import { ANGLE_OPTION, latticeAngle } from "../lattice-angle.ts";
 import { deliver, jsonDocument } from "../output.ts";
 import { UsageProblem } from "../problems.ts";
 
@@ -27,11 +27,7 @@ export const spec: CommandSpec = {
     },
     group: { type: "string", value: "NAME", describe: "space group to test in place of the declared one" },
     values: { type: "string", value: "F|F2", describe: "what the values of the list are, where it does not say" },
-    angle: {
-      type: "number",
-      value: "DEGREES",
-      describe: `largest angle by which the lattice may miss its symmetry (default ${LATTICE_TOLERANCE})`,
-    },
+    ...ANGLE_OPTION,
     block,
     strict,
     json,
@@ -70,22 +66,14 @@ export async function run(words: readonly string[]): Promise<number> {
 }
 
 async function optionsOf(args: Arguments): Promise<AbsencesOptions> {
-  const [file, matrix, group, angle] = [
-    args.text("reflections"),
-    args.text("matrix"),
-    args.text("group"),
-    args.number("angle"),
-  ];
-  if (angle !== null && !(angle >= 0 && angle <= 10)) {
-    throw new UsageProblem(`--angle ${angle} is not between 0 and 10 degrees`);
-  }
+  const [file, matrix, group] = [args.text("reflections"), args.text("matrix"), args.text("group")];
   const quantity = quantityOf(args.text("values"));
   return {
     ...(file === null ? {} : { reflections: { name: file, text: decodeCif(await bytesOf(file)).text } }),
     ...(matrix === null ? {} : { matrix }),
     ...(group === null ? {} : { group }),
     ...(quantity === null ? {} : { quantity }),
-    ...(angle === null ? {} : { angleTolerance: angle }),
+    angleTolerance: latticeAngle(args),
   };
 }
 

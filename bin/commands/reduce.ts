@@ -3,7 +3,6 @@ import { reduceText } from "../../lib/report/index.ts";
 import {
   type BlockLattice,
   centringsByLetter,
-  LATTICE_TOLERANCE,
   latticeFromBlock,
   metricOf,
   reduceAnswer,
@@ -11,6 +10,7 @@ import {
 import { type Arguments, COMMON_OPTIONS, type CommandSpec, onlyOperand, parseArguments } from "../arguments.ts";
 import { EXAMPLE } from "../examples/reduce.ts";
 import { blaming, chooseBlock, readSource } from "../input.ts";
+import { ANGLE_OPTION, latticeAngle } from "../lattice-angle.ts";
 import { deliver, jsonDocument } from "../output.ts";
 import { UsageProblem } from "../problems.ts";
 
@@ -23,11 +23,7 @@ export const spec: CommandSpec = {
   options: {
     cell: { type: "string", value: "CELL", describe: 'a cell in place of a file, "a b c alpha beta gamma"' },
     centring: { type: "string", value: "LETTER", describe: "P, A, B, C, I, F, R or H, in place of what the file says" },
-    angle: {
-      type: "number",
-      value: "DEGREES",
-      describe: `largest angle by which the lattice may miss its symmetry (default ${LATTICE_TOLERANCE})`,
-    },
+    ...ANGLE_OPTION,
     block,
     strict,
     json,
@@ -40,9 +36,7 @@ export async function run(words: readonly string[]): Promise<number> {
   const args = parseArguments(words, spec);
   const typed = args.text("cell");
   const { lattice, source, file } = typed === null ? await fromFile(args) : fromOption(args, typed);
-  const angle = args.number("angle") ?? LATTICE_TOLERANCE;
-  if (!(angle >= 0 && angle <= 10)) throw new UsageProblem(`--angle ${angle} is not between 0 and 10 degrees`);
-  const answer = reduceAnswer(lattice.metric, lattice.centrings, angle);
+  const answer = reduceAnswer(lattice.metric, lattice.centrings, latticeAngle(args));
   const heading = { command: spec.name, source, notes: lattice.notes, tolerance: { position: 0 } };
   await deliver(args.flag("json") ? jsonDocument(heading, answer) : reduceText(answer, heading), args, file);
   return 0;

@@ -1,8 +1,8 @@
 import type { IntMat3 } from "../algebra/index.ts";
 import type { Metric } from "../structure/index.ts";
-import { formatOperation } from "../symmetry/index.ts";
+import { formatOperation, TENSOR_COMPONENTS } from "../symmetry/index.ts";
 import type { AuditInput } from "./audit-input.ts";
-import { COMPONENTS, columnsOf, rotatedTensor, type TensorRow, tensorRows } from "./displacement-tensors.ts";
+import { columnsOf, rotatedTensor, type TensorRow, tensorRows } from "./displacement-tensors.ts";
 import { type Criterion, type Finding, finding, some } from "./finding.ts";
 
 /** Standard uncertainties that a component may be off. */
@@ -39,7 +39,7 @@ export function check(input: AuditInput): Finding[] {
   const worst = broken.reduce<Broken | null>((m, b) => (m && excess(m) >= excess(b) ? m : b), null);
   if (!worst) return [];
   const { row, xyz, component, image, difference, tolerance } = worst;
-  const name = `U${COMPONENTS[component]}`;
+  const name = `U${TENSOR_COMPONENTS[component]}`;
   const others = broken.filter((b) => b !== worst).map((b) => b.row.atom.label);
   const stated = row.stated[component]!;
   const message = `the displacement tensor of ${row.atom.label} is changed by ${xyz}, which fixes the site: ${name} ${row.u[component]!.toFixed(4)} becomes ${image.toFixed(4)} Å^2${others.length > 0 ? `; likewise ${some(others)}` : ""}`;

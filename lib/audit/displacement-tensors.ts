@@ -8,11 +8,10 @@ import {
   multiply3,
   symmetricEigen,
 } from "../structure/index.ts";
+import { TENSOR_COMPONENTS } from "../symmetry/index.ts";
 import { type AuditInput, parameterRounding, rowNumber, rowText, type StatedNumber } from "./audit-input.ts";
 
-/** Components in the order used throughout. */
-export const COMPONENTS = ["11", "22", "33", "12", "13", "23"] as const;
-/** Row and column of each. */
+/** Row and column of each component, in the order of TENSOR_COMPONENTS. */
 const PAIRS = [
   [0, 0],
   [1, 1],
@@ -57,7 +56,7 @@ export function tensorRows(input: AuditInput): TensorRow[] {
 }
 
 function readTensor(loop: CifLoop, row: number, letter: string, divisor: number) {
-  const stated = COMPONENTS.map((c) => rowNumber(loop, row, `_atom_site_aniso.${letter}_${c}`));
+  const stated = TENSOR_COMPONENTS.map((c) => rowNumber(loop, row, `_atom_site_aniso.${letter}_${c}`));
   if (stated.some((n) => n === null)) return null;
   const all = stated as StatedNumber[];
   return {
@@ -118,5 +117,5 @@ export function equivalentSquare(metric: Metric, u: Six): number {
 
 /** Matrix of a linear function of the six components: its values on the six unit tensors, column by column. */
 export function columnsOf(of: (u: Six) => Six): Six[] {
-  return COMPONENTS.map((_, k) => of(COMPONENTS.map((_c, i) => (i === k ? 1 : 0))));
+  return TENSOR_COMPONENTS.map((_, k) => of(TENSOR_COMPONENTS.map((_c, i) => (i === k ? 1 : 0))));
 }

@@ -1,9 +1,7 @@
 import { type WritableBlock, type WritableItem, writeCif } from "../cif/index.ts";
 import type { SymmetriseAnswer } from "../structure/index.ts";
+import { blockName } from "./block-name.ts";
 import { formatNumber } from "./format-number.ts";
-
-/** Longest name of a block in CIF 1.1 is 75 characters with its ending. */
-const LONGEST_NAME = 60;
 
 /**
  * The symmetrised structure as a CIF 1.1: cell, symmetry with all operations, sites. S.u. and displacement parameters
@@ -31,7 +29,7 @@ export function symmetrisedCif(answer: SymmetriseAnswer, name: string): string {
     },
     siteLoop(sites),
   ];
-  const block: WritableBlock = { name: blockName(name), items };
+  const block: WritableBlock = { name: blockName(name, "_symmetrised"), items };
   return writeCif([block], "1.1");
 }
 
@@ -54,9 +52,4 @@ function siteLoop(sites: SymmetriseAnswer["sites"]): WritableItem {
 
 function item(name: string, value: string): WritableItem {
   return { kind: "item", name, value };
-}
-
-function blockName(name: string): string {
-  const plain = name.replace(/[^\x21-\x7e]+/g, "_").slice(0, LONGEST_NAME);
-  return `${plain || "structure"}_symmetrised`;
 }

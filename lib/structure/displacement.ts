@@ -1,4 +1,5 @@
 import { type CifBlock, type CifLoop, cellOf, findLoop, numbOf } from "../cif/index.ts";
+import { TENSOR_COMPONENTS } from "../symmetry/index.ts";
 
 /**
  * Displacement parameters of a site, square angstrom. `u`: U11 U22 U33 U12 U13 U23 on the reciprocal axes scaled by
@@ -12,7 +13,6 @@ export type DisplacementTensor =
       readonly su: readonly (number | null)[];
     };
 
-const COMPONENTS = ["11", "22", "33", "12", "13", "23"] as const;
 /** U = B / 8 pi^2. */
 const EIGHT_PI_SQUARED = 8 * Math.PI * Math.PI;
 
@@ -54,7 +54,7 @@ function anisotropic(block: CifBlock): Map<string, DisplacementTensor> {
 }
 
 function tensorOf(loop: CifLoop, row: number, letter: "U" | "B", divisor: number): DisplacementTensor | null {
-  const read = COMPONENTS.map((c) => numbOf(cellOf(loop, row, `_atom_site_aniso.${letter}_${c}`)));
+  const read = TENSOR_COMPONENTS.map((c) => numbOf(cellOf(loop, row, `_atom_site_aniso.${letter}_${c}`)));
   if (read.some((n) => n === null)) return null;
   return {
     kind: "anisotropic",

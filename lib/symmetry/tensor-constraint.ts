@@ -1,6 +1,6 @@
 import { gcd, hermiteRows, type IntMat3, lcm } from "../algebra/index.ts";
 
-/** Components of a symmetric tensor in the order used throughout: 11 22 33 12 13 23. */
+/** Row and column of each component, in the order of TENSOR_COMPONENTS. */
 const PAIRS = [
   [0, 0],
   [1, 1],
@@ -9,7 +9,9 @@ const PAIRS = [
   [0, 2],
   [1, 2],
 ] as const;
-const NAMES = ["11", "22", "33", "12", "13", "23"] as const;
+
+/** Names of the components of a symmetric tensor in the order used throughout. */
+export const TENSOR_COMPONENTS = ["11", "22", "33", "12", "13", "23"] as const;
 
 /** What a site group allows of a symmetric contravariant tensor, such as a displacement tensor. */
 export interface TensorConstraint {
@@ -42,7 +44,7 @@ export function tensorConstraint(rotations: readonly IntMat3[]): TensorConstrain
     for (let i = 0; i < 6; i++) n[6 * i + column] = row[i]! * (d / row[column]!) + 0;
   });
   return {
-    text: NAMES.map((_, i) => expression(n.slice(6 * i, 6 * i + 6), d)).join(),
+    text: TENSOR_COMPONENTS.map((_, i) => expression(n.slice(6 * i, 6 * i + 6), d)).join(),
     free,
     matrix: { n, d },
     projection: { n: sum, d: rotations.length },
@@ -84,7 +86,7 @@ function expression(row: readonly number[], d: number): string {
     const g = gcd(n, d);
     const size = Math.abs(n) / g;
     const sign = n < 0 ? "-" : text ? "+" : "";
-    text += `${sign}${size === 1 ? "" : size}u${NAMES[j]}${d === g ? "" : `/${d / g}`}`;
+    text += `${sign}${size === 1 ? "" : size}u${TENSOR_COMPONENTS[j]}${d === g ? "" : `/${d / g}`}`;
   });
   return text || "0";
 }

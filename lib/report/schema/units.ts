@@ -1,4 +1,3 @@
-import type { BondChoice } from "../../structure/index.ts";
 import type {
   ExtendedAnswer,
   InternalMode,
@@ -16,6 +15,7 @@ import type {
   UnitSummaries,
   UnitSummary,
 } from "../../vibrations/index.ts";
+import { bondChoice } from "./bonds.ts";
 import {
   amount,
   byName,
@@ -28,7 +28,6 @@ import {
   object,
   optional,
   orNull,
-  pair,
   type Shape,
   text,
 } from "./shape.ts";
@@ -73,32 +72,6 @@ function contentFields(): Fields<UnitContent> {
       }),
     ),
   };
-}
-
-function bonds(): Shape<BondChoice> {
-  const elements = pair(text());
-  const range = { count: count("in the cell", 1), shortest: amount("angstrom"), longest: amount("angstrom") };
-  return object<BondChoice>({
-    radii: text("source of the radii"),
-    tolerance: amount("above the sum of the radii, angstrom"),
-    bonded: list(object<BondChoice["bonded"][number]>({ elements, rule: { schema: text().schema }, ...range })),
-    leftOut: list(
-      object<BondChoice["leftOut"][number]>({
-        elements,
-        why: choice({ water: true, asked: true, ions: true }),
-        bondedBelow: orNull(amount("angstrom"), "null where length does not decide"),
-        ...range,
-      }),
-    ),
-    nearLimit: list(
-      object<BondChoice["nearLimit"][number]>({
-        labels: pair(text()),
-        distance: amount("angstrom"),
-        limit: amount("angstrom"),
-        bonded: flag(),
-      }),
-    ),
-  });
 }
 
 function unit(): Shape<UnitAnswer> {
@@ -236,7 +209,7 @@ export function splitSchema(): Shape<CrystalDocument<SplitAnswer & WithPolyhedra
     factorGroup: factorGroup(),
     labelAxes: labelAxes(),
     activity: list(object<SplitAnswer["activity"][number]>({ label: text(), infrared: flag(), raman: flag() })),
-    bonds: bonds(),
+    bonds: bondChoice(),
     units: list(unit()),
     loneAtoms: loneAtoms(),
     extended: extended(),
