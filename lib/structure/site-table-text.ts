@@ -61,7 +61,7 @@ export function parseSiteTable(text: string): SiteTable {
     else if (keyword[1] === "group") read.group = { text: requireOnce(rest, read.group, "group"), span: spanOf(rest) };
     else {
       requireOnce(rest, read.cell, "cell");
-      read.cell = shifted(rest, () => parseCellParameters(rest.text));
+      read.cell = readCell(rest);
     }
   }
   const { name, group, cell } = read;
@@ -96,11 +96,17 @@ function requireOnce(line: Line, before: unknown, what: string): string {
 }
 
 function readSite(line: Line): TableSite {
-  const result = siteLine().parse(line.text);
+  const result = placedIn(line, () => siteLine().parse(line.text));
   if (!result.status) throw unreadable(line, result.index.offset, result.expected);
   const { spans, ...site } = result.value;
   const moved = Object.entries(spans).map(([part, span]) => [part, movedBy(line.start, span)]);
   return { ...site, spans: Object.fromEntries(moved) as TableSite["spans"] };
+}
+
+function readCell(line: Line): WrittenCell {
+  const { values, spans } = placedIn(line, () => parseCellParameters(line.text));
+  const moved = Object.entries(spans).map(([p, span]) => [p, movedBy(line.start, span)]);
+  return { values, spans: Object.fromEntries(moved) };
 }
 
 function movedBy(by: number, { start, end }: Span): Span {
@@ -121,11 +127,10 @@ function unreadable({ text, start }: Line, at: number, expected: readonly string
   );
 }
 
-function shifted<T>({ start }: Line, read: () => T & WrittenCell): WrittenCell {
+/** Faults found in a piece of text are placed in the whole. */
+function placedIn<T>({ start }: Line, read: () => T): T {
   try {
-    const { values, spans } = read();
-    const moved = Object.entries(spans).map(([p, span]) => [p, movedBy(start, span)]);
-    return { values, spans: Object.fromEntries(moved) };
+    return read();
   } catch (e) {
     if (!(e instanceof InputProblem) || !e.span) throw e;
     throw new InputProblem(e.code, e.message, movedBy(start, e.span), e.hint);

@@ -1,6 +1,6 @@
 import P from "parsimmon";
 import { parseNumb } from "../cif/index.ts";
-import type { Span } from "../problem.ts";
+import { InputProblem, type Span } from "../problem.ts";
 import type { DisplacementTensor } from "./displacement.ts";
 import { type MeasuredNumber, PARAMETERS, type TableCoordinate, type TableSite } from "./site-table.ts";
 import { type CoordinateTerm, coordinateOf, formatCoordinate, formatMeasured } from "./table-coordinate.ts";
@@ -140,8 +140,10 @@ function parameterSpan(fields: readonly Field[]): Span | null {
   return fields.find((f) => PARAMETERS.some((p) => p === f.key))?.span ?? null;
 }
 
+/** @throws InputProblem `table-unreadable` for a name given twice, two kinds of displacement, or part of a tensor */
 function valuesOf(fields: readonly Field[]): Pick<TableSite, "parameters" | "occupancy" | "displacement"> {
-  const of = (key: string) => fields.findLast((f) => f.key === key)?.number ?? null;
+  requireClear(fields);
+  const of = (key: string) => fields.find((f) => f.key === key)?.number ?? null;
   const named = PARAMETERS.flatMap((p) => {
     const number = of(p);
     return number ? [[p, number]] : [];
@@ -151,6 +153,24 @@ function valuesOf(fields: readonly Field[]): Pick<TableSite, "parameters" | "occ
     occupancy: of("occ")?.value ?? 1,
     displacement: displacementOf(of),
   };
+}
+
+function requireClear(fields: readonly Field[]): void {
+  const twice = fields.find((f, i) => fields.findIndex((g) => g.key === f.key) < i);
+  if (twice) throw unclear(`${twice.key} is given twice`, twice.span, "give each value once");
+  const isotropic = fields.filter((f) => f.key === "U" || f.key === "B");
+  const tensor = fields.filter((f) => /^U\d/.test(f.key));
+  const last = [...isotropic, ...tensor].at(-1);
+  if (isotropic.length > 1 || (isotropic.length > 0 && tensor.length > 0)) {
+    throw unclear("the displacement is given in two ways", last!.span, "give one of U=, B= and U11= to U23=");
+  }
+  const missing = TENSOR.filter((name) => tensor.every((f) => f.key !== name));
+  if (tensor.length === 0 || missing.length === 0) return;
+  throw unclear(`${missing.join(", ")} of the displacement tensor are missing`, last!.span, "give all six, or U=");
+}
+
+function unclear(message: string, span: Span, hint: string): InputProblem {
+  return new InputProblem("table-unreadable", message, span, hint);
 }
 
 function displacementOf(of: (key: string) => MeasuredNumber | null): DisplacementTensor | null {

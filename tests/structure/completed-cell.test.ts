@@ -117,6 +117,7 @@ describe("a cell of which the free parameters are given", () => {
     ["a=5", "P 4", "c"],
     ["a=5 b=6 c=7", "P 21/c", "beta"],
     ["beta=100", "P 1", "a, b, c, alpha, gamma"],
+    ["a=5 c=7 gamma=45", "P 2 2 2 (a,a+b,c)", "b"], // it would follow, but not by linear equations
   ])("%s is not enough for %s: %s is missing", (text, name, missing) => {
     const { code, message } = problemOf(() => complete(text, name));
     expect([code, message.includes(`lacks ${missing}:`)]).toEqual(["cell-incomplete", true]);

@@ -119,6 +119,13 @@ describe("what a name leaves open", () => {
     }
   });
 
+  it("is no question of distances where axes are open", () => {
+    const random = randomStructure(60, randomNumbers(3060));
+    const crystal = composed(tableOf(random, "parameters", "60")); // only in other axes all distances would be long
+    expect(crystal.identified.summary.settingName).toBe("reference");
+    expect(composeAnswer(crystal).notes[0]).toContain("nearer than atoms come");
+  });
+
   it("is settled by the cell", () => {
     const monoclinic = (cell: string) => composed(`group P 21/c\ncell ${cell}\nXe 2a`).identified.summary.settingName;
     expect(monoclinic("a=5 b=6 c=7 beta=100")).toBe("reference");
@@ -137,6 +144,7 @@ describe("a table is refused", () => {
   it.each([
     [`${CALCITE}O 18e 0.2568,0,0.1`, "position-unlike", "O 18e 0.2568,0,0.1", 6],
     [`${CALCITE}O 36f x=0.25 y=0 z=1/4`, "position-unlike", "x=0.25", 0],
+    [`${CALCITE}O 36f 0.2568,0,0.25`, "position-unlike", "0.2568", 0],
     [`${CALCITE}O 18e`, "parameter-missing", "18e", 0],
     [`${CALCITE}O 18e x=0.2568 y=0`, "parameter-idle", "x=0.2568", 0],
     [`${CALCITE}O 18e x,0,1/4`, "parameter-missing", "x,0,1/4", 0],
