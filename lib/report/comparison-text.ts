@@ -64,8 +64,17 @@ function matchLines(answer: ComparisonAnswer): string[] {
     `largest displacement ${formatNumber(largest, 4)} Å, root mean square ${formatNumber(rootMeanSquare, 4)} Å over ${atoms} atoms${largestOccupancyDifference > 0 ? occupancy : ""}`,
     `lattice strained by ${strain!.principal.map(percent).join(", ")} along its principal directions, volume ratio ${formatNumber(strain!.volumeRatio, 4)}; displacements leave that strain out`,
     ...(scale === 1 ? [] : [`the axes of the second were multiplied by ${formatNumber(scale, 4)} first`]),
+    ...sizeLines(answer),
     `from the first to the second: axes ${transformation!.P}, origin ${transformation!.p}; (a,b,c) second = (a,b,c) first P, x(first) = P x(second) + p`,
   ];
+}
+
+/** Told where one cell is larger, strain apart. */
+function sizeLines({ first, second, strain, scale }: ComparisonAnswer): string[] {
+  const ratio = (second.volume * scale ** 3) / (first.volume * strain!.volumeRatio);
+  if (Math.abs(ratio - 1) < 1e-6) return [];
+  const [larger, smaller, n] = ratio > 1 ? ["second", "first", ratio] : ["first", "second", 1 / ratio];
+  return [`the cell of the ${larger} file is ${Number(formatNumber(n, 3))} times as large as that of the ${smaller}`];
 }
 
 function differenceLines({ strain, nearest, disagreement }: ComparisonAnswer): string[] {

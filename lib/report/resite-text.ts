@@ -39,6 +39,7 @@ function standardisationText(found: StandardisationAnswer, { sohncke, number }: 
       : "";
   const lines = [
     `standardised: gamma = ${formatNumber(gamma, 5)}, ${compared === 1 ? "of the only description" : `the smallest of ${compared} descriptions`}${tied > 1 ? `, found in ${tied}` : ""}; mean position ${formatNumber(centre, 4)} from the origin`,
+    `Pearson symbol ${found.pearsonSymbol}, Wyckoff sequence ${number}: ${found.wyckoffSequence}`,
     `compared: ${plural(axes, "choice")} of axes for the standard cell, ${plural(shifts, "origin")} for each${along}`,
     ...(sohncke ? [handText(found)] : []),
     ...(number === 1

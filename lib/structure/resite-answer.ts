@@ -3,6 +3,7 @@ import {
   chain,
   formatBasis,
   formatVector,
+  groupProperties,
   type RequestedSetting,
   requestedHall,
   requestedSetting,
@@ -19,6 +20,7 @@ import { niggliReduction } from "./niggli-reduction.ts";
 import { inCell, preferredReference } from "./preferred-reference.ts";
 import { type CellNumbers, cellNumbers } from "./reduce-answer.ts";
 import { type SiteAnswer, sitesAnswer } from "./sites-answer.ts";
+import type { StandardDescription } from "./standard-description.ts";
 import { type StandardisedCrystal, standardisedCrystal } from "./standardised-crystal.ts";
 
 /** The setting wanted: that of International Tables, one by name or change of axes, by Hall symbol, the standard one. */
@@ -49,6 +51,10 @@ export interface StandardisationAnswer {
   readonly gamma: number;
   /** Distance of the mean position from the origin, in fractions of the axes. */
   readonly centre: number;
+  /** Bravais type and atoms of the conventional cell, occupancies counted: `oP28`. */
+  readonly pearsonSymbol: string;
+  /** Letters of the occupied positions from the last, with their numbers: `d c4 a`. */
+  readonly wyckoffSequence: string;
   /** Choices of axes with the standard cell, origins for each that the group fixes, and origins along free directions. */
   readonly axes: number;
   readonly shifts: number;
@@ -128,8 +134,22 @@ export function resited(crystal: Crystal, request: ResiteRequest): Resited {
       `the new cell holds ${rotations.after} of the ${rotations.before} rotation parts of the space group; the others do not keep its shape`,
     );
   }
-  const labels = changed.sites.map((s) => s.label);
+  const labels = labelsOf(crystal, changed);
+  notes.push(...uncertaintyNotes(crystal, transformation));
   return { crystal: changed, answer: resiteAnswer(crystal, changed, transformation, [0, 0, 0], labels), notes };
+}
+
+/** For each site of a changed cell the label in the file; parts of an orbit that fell apart have one with a number added. */
+export function labelsOf(given: Crystal, changed: Crystal): string[] {
+  const own = new Set(given.sites.map((s) => s.label));
+  return changed.sites.map(({ label }) => (own.has(label) ? label : label.replace(/_\d+$/, "")));
+}
+
+/** Told where the new axes are sums of old ones, so that s.u. of several coordinates enter one. */
+export function uncertaintyNotes({ sites }: Crystal, { P }: Transformation): string[] {
+  const mixes = [0, 1, 2].some((j) => [0, 3, 6].filter((i) => P.n[i + j] !== 0).length > 1);
+  if (!mixes || !sites.some((s) => s.su.some((e) => e !== null))) return [];
+  return ["s.u. of coordinates that the change of axes mixes are combined as those of independent numbers"];
 }
 
 function wanted(crystal: Crystal, request: Exclude<ResiteRequest, { kind: "standardised" }>): RequestedSetting {
@@ -156,15 +176,19 @@ function standardised(crystal: Crystal, eitherHand: boolean): Resited {
   const result = standardisedCrystal(crystal, { eitherHand });
   const answer = resiteAnswer(crystal, result.crystal, result.transformation, result.shift, result.origins);
   const standardisation = standardisationOf(result, eitherHand);
-  return { crystal: result.crystal, answer: { ...answer, standardisation }, notes: [] };
+  const notes = uncertaintyNotes(crystal, result.transformation);
+  return { crystal: result.crystal, answer: { ...answer, standardisation }, notes };
 }
 
-function standardisationOf({ description, mirrored }: StandardisedCrystal, eitherHand: boolean): StandardisationAnswer {
+function standardisationOf(result: StandardisedCrystal, eitherHand: boolean): StandardisationAnswer {
+  const { crystal, description, mirrored } = result;
   const { gamma, centre, tied, candidates } = description;
   const { axes, shifts, origins, free, list } = candidates;
   return {
     gamma,
     centre,
+    pearsonSymbol: pearsonSymbol(crystal),
+    wyckoffSequence: wyckoffSequence(description),
     axes: axes.length,
     shifts: shifts.length,
     origins: origins.length,
@@ -174,6 +198,19 @@ function standardisationOf({ description, mirrored }: StandardisedCrystal, eithe
     hand: eitherHand ? "either" : "kept",
     mirrored,
   };
+}
+
+/** After W. B. Pearson, A Handbook of Lattice Spacings and Structures of Metals and Alloys, vol. 2 (1967). */
+function pearsonSymbol({ identified, sites }: Crystal): string {
+  const atoms = sites.reduce((s, { images, occupancy }) => s + images.length * occupancy, 0);
+  return `${groupProperties(identified.number).bravaisType}${Number(atoms.toFixed(2))}`;
+}
+
+/** Sites that share a position count once. */
+function wyckoffSequence({ sites, counted }: StandardDescription): string {
+  const counts = new Map<string, number>();
+  for (const { letter, site } of sites) if (counted[site]) counts.set(letter, (counts.get(letter) ?? 0) + 1);
+  return [...counts].map(([letter, n]) => (n === 1 ? letter : `${letter}${n}`)).join(" ");
 }
 
 /** A crystal as it is told of in its new setting; `labels` are those of the file, site by site. */

@@ -5,7 +5,7 @@ import { changeOfCell } from "./change-of-cell.ts";
 import { compareStructures } from "./comparison-answer.ts";
 import type { ComparisonOptions } from "./comparison-limits.ts";
 import { type Crystal, crystalOf } from "./crystal.ts";
-import { type Resited, resiteAnswer } from "./resite-answer.ts";
+import { labelsOf, type Resited, resiteAnswer, uncertaintyNotes } from "./resite-answer.ts";
 
 /**
  * A structure compared with another, and where the two agree, written on the axes and origin of the other.
@@ -41,13 +41,14 @@ export function resitedOnto(crystal: Crystal, other: Crystal, options: Compariso
   try {
     const change: Transformation = { P: match.P, p: origin };
     const { crystal: changed, rotations } = changeOfCell(shifted(crystal, shift), change);
-    const labels = changed.sites.map((s) => s.label);
+    const labels = labelsOf(crystal, changed);
     const notes =
       rotations.after < rotations.before
         ? [
             `on the axes of the second file ${rotations.after} of the ${rotations.before} rotation parts of its space group are left`,
           ]
         : [];
+    notes.push(...uncertaintyNotes(crystal, change));
     return {
       crystal: changed,
       answer: { ...resiteAnswer(crystal, changed, change, shift, labels), comparison },

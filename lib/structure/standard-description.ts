@@ -31,6 +31,8 @@ export interface StandardDescription extends Description {
   readonly candidates: Candidates;
   /** Descriptions whose parameter is as small. */
   readonly tied: number;
+  /** For each site of the crystal whether it counts: not where an earlier one is at the same position. */
+  readonly counted: readonly boolean[];
 }
 
 /** Parameters and coordinates that differ by less are equal: rounding of doubles; dimensionless. */
@@ -69,13 +71,12 @@ export function standardDescription(crystal: Crystal): StandardDescription {
   }
   const described = tied.map(({ candidate, shift }) => describe(crystal, candidate, shift, counted));
   const first = described.reduce((a, b) => (compare(crystal, b, a) < 0 ? b : a));
-  return { ...first, candidates, tied: tied.length };
+  return { ...first, candidates, tied: tied.length, counted };
 }
 
 /** Atoms that share a position lie nearer than this; angstrom. */
 const SHARED = 0.01;
 
-/** For each site whether it counts: not where an earlier one is at the same position. */
 function countedSites({ sites, metric }: Crystal): boolean[] {
   return sites.map(({ sharesPositionOf, symmetry }) => {
     if (sharesPositionOf === null) return true;

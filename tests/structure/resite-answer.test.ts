@@ -103,6 +103,16 @@ describe("a structure in another setting", () => {
     expect(() => resited(fixture("gypsum"), { kind: "hall", text: "-P 2ac 2n" })).toThrow("No. 62");
   });
 
+  it("tells where s.u. are combined, and which rows an orbit that falls apart came from", () => {
+    const calcite = fixture("calcite");
+    const R = resited(calcite, { kind: "setting", text: ":R" });
+    const hasSu = calcite.sites.some((s) => s.su.some((e) => e !== null));
+    expect(R.notes.some((n) => n.startsWith("s.u. of coordinates"))).toBe(hasSu);
+    const skew = resited(fixture("halite"), { kind: "setting", text: "a,b,2c" });
+    expect(skew.notes[0]).toMatch(/^the new cell holds 16 of the 48 rotation parts/);
+    expect(new Set(skew.answer.sites.map((s) => s.from))).toEqual(new Set(fixture("halite").sites.map((s) => s.label)));
+  });
+
   it("carries uncertainties and displacement parameters with the axes", () => {
     const crystal = crystalOfText(`data_x
 _cell_length_a 4
@@ -176,6 +186,17 @@ describe("a standardised structure", () => {
       const asGiven = points(crystal).reduce((s, x) => s + Math.hypot(...x.map((e) => e - Math.floor(e))), 0);
       expect(description.gamma).toBeLessThanOrEqual(asGiven + 1e-9);
     }
+  });
+
+  it("is summed up by its Pearson symbol and Wyckoff sequence", () => {
+    const summed = (name: string) => {
+      const { standardisation } = resited(fixture(name), { kind: "standardised" }).answer;
+      return `${standardisation!.pearsonSymbol} ${standardisation!.wyckoffSequence}`;
+    };
+    expect(summed("forsterite-pbnm")).toBe("oP28 d c4 a");
+    expect(summed("corundum")).toBe("hR30 e c");
+    expect(summed("rutile")).toBe("tP6 f a");
+    expect(summed("halite")).toBe("cF8 b a");
   });
 
   it("keeps its hand unless that is left open", () => {

@@ -86,6 +86,8 @@ function standardisation(): Shape<StandardisationAnswer> {
   return object<StandardisationAnswer>({
     gamma: amount("standardisation parameter"),
     centre: amount("distance of the mean position from the origin, in fractions of the axes"),
+    pearsonSymbol: textLike(/^[a-z][A-Z]\d+(\.\d+)?$/, "Bravais type and atoms of the conventional cell"),
+    wyckoffSequence: text("letters of the occupied positions from the last, with their numbers"),
     axes: count("choices of axes with the standard cell", 1),
     shifts: count("origins that the group fixes, for each", 1),
     origins: count("origins tried along free directions", 1),
