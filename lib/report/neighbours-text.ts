@@ -22,12 +22,12 @@ export function neighboursText(answer: NeighboursAnswer, { all }: NeighboursView
   const listed = all || heavy.length === 0 ? answer.sites : heavy;
   const detailed = all || listed.length <= MOST_DETAILS ? listed : someMetals(listed);
   const parts = [
-    methodText(answer),
     summaryTable(listed, answer.sites.length - listed.length, all),
     ...detailed.map((site) => siteDetails(site, all)),
     detailed.length < listed.length ? moreText(detailed) : "",
     hydrogenBondTable(answer, all ? Infinity : MOST_LINES),
     torsionTable(answer, all ? Infinity : MOST_LINES),
+    methodText(answer, listed),
   ];
   return parts.filter(Boolean).join("\n\n");
 }
@@ -46,7 +46,9 @@ function moreText(detailed: readonly SiteNeighbours[]): string {
   );
 }
 
-function methodText({ choice, numbering, operations, uncertainties }: NeighboursAnswer): string {
+/** How the answer was obtained, and what its columns mean. */
+function methodText(answer: NeighboursAnswer, listed: readonly SiteNeighbours[]): string {
+  const { choice, numbering, operations, uncertainties } = answer;
   const codes =
     numbering === "file"
       ? "number of the operation in the file's list"
@@ -55,6 +57,7 @@ function methodText({ choice, numbering, operations, uncertainties }: Neighbours
     `neighbours: ${choiceText(choice)}`,
     `s.u.: ${uncertaintyText(uncertainties)}`,
     `symmetry codes: ${codes}, then 5 plus the whole cells along a, b, c`,
+    ...legend(listed),
   ]
     .map((line) => wrapText(line, WIDTH, "  "))
     .join("\n");
@@ -87,11 +90,13 @@ function choiceText(choice: NeighboursAnswer["choice"]): string {
 }
 
 function uncertaintyText({ cell, coordinates }: NeighboursAnswer["uncertainties"]): string {
-  const rule = "no correlations, which a CIF does not hold; written by the rule of 19";
-  if (cell && coordinates) return `from coordinates and cell, what symmetry ties moving together; ${rule}`;
-  if (coordinates) return `from coordinates alone, as the file gives none of the cell; ${rule}`;
+  const errors =
+    "the error of an atom equal in all directions (Templeton 1959), no other correlations, which a CIF does not hold";
+  const rule = "written by the rule of 19";
+  if (cell && coordinates) return `from coordinates and cell, what symmetry ties moving together; ${errors}; ${rule}`;
+  if (coordinates) return `from coordinates alone, as the file gives none of the cell; ${errors}; ${rule}`;
   if (cell)
-    return `from the cell alone, where symmetry fixes both atoms, as the file gives none of coordinates; ${rule}`;
+    return `from the cell alone, where symmetry fixes the atoms, as the file gives none of coordinates; ${rule}`;
   return "the file gives none";
 }
 
@@ -126,19 +131,19 @@ function summaryTable(sites: readonly SiteNeighbours[], left: number, all: boole
   const notes = [
     sites.length > shown.length ? `and ${sites.length - shown.length} more sites: --all` : "",
     left > 0 ? `${left} hydrogen site${left === 1 ? "" : "s"} left out: --site H` : "",
-    legend(hasShapes, valenceLegend(shown)),
   ];
   return ["Coordination", textTable(columns, rows), ...notes.filter(Boolean)].join("\n");
 }
 
-function legend(hasShapes: boolean, valences: string): string {
-  const words = [
-    "CN, neighbours listed; ECoN, effective number of Hoppe (1979); by Ω, sum of solid angles of the atom's domain over the " +
+function legend(sites: readonly SiteNeighbours[]): string[] {
+  if (sites.length === 0) return [];
+  const valences = valenceLegend(sites);
+  return [
+    "CN: neighbours listed; ECoN: effective number of Hoppe (1979); by Ω: sum of solid angles of the atom's domain over the " +
       "largest (O'Keeffe 1979), all atoms counted",
     ...(valences ? [valences] : []),
-    ...(hasShapes ? ["shape, continuous shape measure of Pinsky and Avnir (1998), 0 ideal, up to 100"] : []),
+    ...(sites.some(isPolyhedron) ? ["shape: continuous shape measure (Pinsky, Avnir 1998), 0 ideal, up to 100"] : []),
   ];
-  return wrapText(words.join("; "), WIDTH, "  ");
 }
 
 /** Where valences come from, and the oxidation states they are for; empty where there are none. */
@@ -152,7 +157,7 @@ function valenceLegend(sites: readonly SiteNeighbours[]): string {
     ...(chosen ? [`${stated ? "others" : "oxidation states"} those whose sums come nearest`] : []),
   ].join(", ");
   const source = "exp((R0 - d)/0.37 Å) with R0 of Brese and O'Keeffe (1991) from memory, hydrogen not counted";
-  return `valence sum, ${source}${states ? `; ${states}` : ""}`;
+  return `valence sum: ${source}${states ? `; ${states}` : ""}`;
 }
 
 function occupancyOf({ occupancy }: SiteNeighbours): string {

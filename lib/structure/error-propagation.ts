@@ -21,7 +21,8 @@ const FIXED = 1e-8;
 /**
  * Propagates the uncertainties of coordinates and cell to quantities of a crystal. Images of one site move together, each
  * turned by its operation; special positions keep to their fixed points; cell parameters that symmetry ties move
- * together. Correlations between different parameters are not in a CIF and are taken as none.
+ * together. The error of one atom is taken as equal in all directions that are free; other correlations are not in a CIF and
+ * are taken as none.
  */
 export class ErrorPropagation {
   private readonly crystal: Crystal;

@@ -4,7 +4,7 @@ const ROUNDING = 1e-9;
 /**
  * Directions in which parameters may move, each scaled by its standard uncertainty: the covariance matrix of all
  * parameters is the sum of their outer products. Parameters that symmetry ties move together, by the uncertainty of the
- * first of them that has one; correlations among the others are not known and are taken as none.
+ * first of them that has one; correlations among the others are left to the caller.
  */
 export interface ScaledDirections {
   readonly directions: readonly (readonly number[])[];

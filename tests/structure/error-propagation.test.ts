@@ -1,4 +1,5 @@
 import fc from "fast-check";
+import { inverse, Matrix } from "ml-matrix";
 import { describe, expect, it, test } from "vitest";
 import { readCif } from "../../lib/cif/index.ts";
 import { requireClean } from "../../lib/problem.ts";
@@ -8,6 +9,7 @@ import {
   apply3,
   crystalFromBlock,
   distance,
+  type Metric,
   metricOf,
   neighboursAnswer,
   torsion,
@@ -96,6 +98,8 @@ interface Model {
   readonly parameters: readonly (readonly [value: number, su: number])[];
   readonly cell: (p: readonly number[]) => readonly number[];
   readonly sites: (p: readonly number[]) => readonly (readonly [label: string, element: string, position: Vec3])[];
+  /** Of each site the parameters that place it, and the directions in which they move it. */
+  readonly freedom: readonly (readonly (readonly [parameter: number, direction: Vec3])[])[];
   /** Independent parameter of each written number, null for one without uncertainty: cell, then sites. */
   readonly written: readonly (number | null)[];
 }
@@ -123,6 +127,11 @@ const MODELS: readonly Model[] = [
       ["Ca1", "Ca", [p[6]!, p[7]!, p[8]!]],
       ["O1", "O", [p[9]!, p[10]!, p[11]!]],
     ],
+    freedom: [6, 9].map((k) => [
+      [k, [1, 0, 0]],
+      [k + 1, [0, 1, 0]],
+      [k + 2, [0, 0, 1]],
+    ]),
     written: [0, 1, 2, 3, 4, 5, 6, 7, 8, 9, 10, 11],
   },
   {
@@ -140,6 +149,13 @@ const MODELS: readonly Model[] = [
       ["Zn1", "Zn", [1 / 3, 2 / 3, p[3]!]],
       ["O1", "O", [p[2]!, 2 * p[2]!, p[4]!]],
     ],
+    freedom: [
+      [[3, [0, 0, 1]]],
+      [
+        [2, [1, 2, 0]],
+        [4, [0, 0, 1]],
+      ],
+    ],
     written: [0, 0, 1, null, null, null, null, null, 3, 2, 2, 4],
   },
   {
@@ -155,6 +171,7 @@ const MODELS: readonly Model[] = [
       ["Ca1", "Ca", [0, 0, 0]],
       ["O1", "O", [p[2]! - 0.5, 1 - p[2]!, 0.25]],
     ],
+    freedom: [[], [[2, [1, -1, 0]]]],
     written: [0, 0, 0, 1, 1, 1, null, null, null, 2, 2, null],
   },
   {
@@ -169,6 +186,7 @@ const MODELS: readonly Model[] = [
       ["Fe1", "Fe", [0, 0, 0]],
       ["S1", "S", [p[1]!, p[1]!, p[1]!]],
     ],
+    freedom: [[], [[1, [1, 1, 1]]]],
     written: [0, 0, 0, null, null, null, null, null, null, 1, 1, 1],
   },
 ];
@@ -219,6 +237,23 @@ function image(operation: string, x: Vec3): Vec3 {
 
 const DRAWS = 2000;
 
+/** Parameters of the cell drawn one by one; those of an atom from an error that is equal in all its free directions. */
+function drawn(model: Model, metric: Metric, random: () => number): number[][] {
+  const draws = Array.from({ length: DRAWS }, () => model.parameters.map(([value, su]) => value + su * normal(random)));
+  for (const freedom of model.freedom) {
+    if (freedom.length === 0) continue;
+    const directions = new Matrix(freedom.map(([, d]) => apply3(metric.toCartesian, d))).transpose();
+    const share = inverse(directions.transpose().mmul(directions)).mmul(directions.transpose());
+    const errors = draws.map(() => share.mmul(Matrix.columnVector([0, 1, 2].map(() => normal(random)))).to1DArray());
+    for (const [i, [k]] of freedom.entries()) {
+      const scale = Math.sqrt(errors.reduce((s, e) => s + e[i]! ** 2, 0) / DRAWS);
+      const [value, su] = model.parameters[k]!;
+      for (const [j, p] of draws.entries()) p[k] = value + (su * errors[j]![i]!) / scale;
+    }
+  }
+  return draws;
+}
+
 describe("propagated uncertainties", () => {
   it.each(MODELS.map((m) => [m.name, m] as const))("are the scatter of drawn parameters: %s", (_, model) => {
     const block = requireClean(readCif(cifOf(model))).blocks[0]!;
@@ -226,9 +261,7 @@ describe("propagated uncertainties", () => {
     const answer = neighboursAnswer(crystal, { block, choice: { kind: "nearest", count: 4 }, angles: true });
     const places = new Map(model.sites(model.parameters.map(([v]) => v)).map(([label], i) => [label, i]));
     const random = randomNumbers(7);
-    const draws = Array.from({ length: DRAWS }, () =>
-      model.parameters.map(([value, su]) => value + su * normal(random)),
-    );
+    const draws = drawn(model, crystal.metric, random);
     const settings = draws.map((p) => {
       const [a, b, c, alpha, beta, gamma] = model.cell(p) as [number, number, number, number, number, number];
       return { metric: metricOf({ a, b, c, alpha, beta, gamma }), sites: model.sites(p).map(([, , x]) => x) };
