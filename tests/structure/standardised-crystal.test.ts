@@ -1,6 +1,15 @@
 import { describe, expect, it } from "vitest";
 import { IDENTITY } from "../../lib/algebra/index.ts";
-import { type Crystal, lengthOf, niggliReduction, standardisedCrystal } from "../../lib/structure/index.ts";
+import {
+  type Crystal,
+  crystalOf,
+  lengthOf,
+  metricOf,
+  niggliReduction,
+  standardisedCrystal,
+} from "../../lib/structure/index.ts";
+import { settingOperations, settingsOf, spaceGroup } from "../../lib/symmetry/index.ts";
+import { atom } from "../support/crystals.ts";
 import { randomNumbers, randomStructure } from "../support/random-structures.ts";
 import { retold } from "../support/retold.ts";
 
@@ -30,6 +39,26 @@ describe("the standard description", () => {
       }
     });
   }
+});
+
+describe("a cell of a shape that its group does not ask for", () => {
+  const cube = { a: 8, b: 8, c: 8, alpha: 90, beta: 90, gamma: 90 };
+  const shapes = [
+    { name: "a cube", cell: cube, from: 1, to: 74 },
+    { name: "a square prism", cell: { ...cube, b: 9 }, from: 1, to: 74 },
+    { name: "a rhombohedron", cell: { ...cube, alpha: 80, beta: 80, gamma: 80 }, from: 1, to: 2 },
+    { name: "a hexagonal prism", cell: { ...cube, b: 9, beta: 120 }, from: 3, to: 15 },
+  ];
+
+  it.each(shapes)("as $name leads to one description nevertheless", { timeout: 60_000 }, ({ cell, from, to }) => {
+    for (let number = from; number <= to; number++) {
+      const random = randomNumbers(number * 53);
+      const group = spaceGroup(settingOperations(settingsOf(number)[0]!));
+      const sites = ["Fe", "Cu", "O"].map((e) => atom(`${e}1`, e, [random(), random(), random()]));
+      const crystal = crystalOf({ name: "", metric: metricOf(cell), group, sites, tolerance: 0.01 });
+      expect(told(retold(crystal, random)), `type ${number}`).toEqual(told(crystal));
+    }
+  });
 });
 
 describe("the standard cell", () => {
