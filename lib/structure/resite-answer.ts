@@ -98,6 +98,7 @@ export interface Resited {
 
 /**
  * A crystal in another setting. S.u. and displacement parameters go with the atoms; those of the cell are not known here.
+ * @throws InputProblem `setting-unknown`, `hall-unreadable`, and as `changeOfCell`
  * @example
  * ```ts
  * const calcite = crystalFromBlock(requireClean(readCif(text)).blocks[0]!);
@@ -105,23 +106,6 @@ export interface Resited {
  * answer.P; // "2/3a+1/3b+1/3c,-1/3a+1/3b+1/3c,-1/3a-2/3b+1/3c"
  * answer.sites.map((s) => `${s.label} ${s.multiplicity}${s.wyckoff}`); // ["Ca1 2b", "C1 2a", "O1 6e"]
  * resited(crystal, { kind: "reference" }).answer.P; // "a-b,b-c,a+b+c"
- * ```
- * @throws InputProblem `setting-unknown`, `hall-unreadable`, and as `changeOfCell`
- * @example
- * ```ts
- * const forsterite = composedCrystal(
- *   parseSiteTable(`group P n m a
- *     cell a=10.2 b=5.98 c=4.76
- *     Mg1 4a
- *     Mg2 4c x=0.277 z=0.991
- *     Si  4c x=0.094 z=0.426
- *     O1  4c x=0.092 z=0.766
- *     O2  4c x=0.447 z=0.221
- *     O3  8d 0.163 0.033 0.277`),
- * );
- * const { crystal, answer } = resited(forsterite, { kind: "setting", text: "cab" });
- * crystal.identified.summary.hermannMauguin; // "P b n m"
- * answer.P; // "c,a,b"
  * ```
  */
 export function resited(crystal: Crystal, request: ResiteRequest): Resited {

@@ -17,13 +17,6 @@ import { labelsOf, type Resited, resiteAnswer, uncertaintyNotes } from "./resite
  * [answer.comparison!.verdict, answer.P, answer.p]; // ["same", "a,b,c", "0,0,1/4"]
  * ```
  * @throws InputProblem as `compareStructures`
- * @example
- * ```ts
- * const rutile = composedCrystal(parseSiteTable("group 136\ncell a=4.59 c=2.96\nTi 2a\nO 4f x=0.305"));
- * const other = changeOfCell(rutile, parseTransformation("b,c,a;1/2,1/2,1/2")).crystal;
- * const { answer } = resitedOnto(rutile, other);
- * answer.P; // "b,c,a"
- * ```
  */
 export function resitedOnto(crystal: Crystal, other: Crystal, options: ComparisonOptions = {}): Resited {
   const { answer: comparison, match } = compareStructures(crystal, other, options);
