@@ -41,6 +41,7 @@ function requestOf(args: Arguments): ResiteRequest {
   const [setting, hall, to] = [args.text("setting"), args.text("hall"), args.text("to")];
   const asked = [setting !== null, hall !== null, args.flag("standardised"), to !== null].filter(Boolean).length;
   if (asked > 1) throw new UsageProblem("give one of --setting, --hall, --standardised and --to");
+  if (to === "-" && args.operands[0] === "-") throw new UsageProblem("only one of the two files can be standard input");
   requireWith(args, "either-hand", args.flag("standardised"), "--standardised");
   for (const name of ["to-block", "displacement", "strain", "isotypic"]) requireWith(args, name, to !== null, "--to");
   if (args.flag("standardised")) return { kind: "standardised", eitherHand: args.flag("either-hand") };

@@ -15,29 +15,30 @@ const TIE = 1e-6;
  * The cell is settled by these rules: triclinic, the Niggli cell; monoclinic (axis b, cell choice 1, so that the symbol
  * is that of the reference setting), a and c such that a^2 + c^2 is smallest, beta not acute, then a not above c;
  * orthorhombic, of the orders of axes that leave the symbol as it is the one with a, then b, smallest (so a, b, c ascend
- * where all orders are allowed); otherwise symmetry leaves no choice of shape.
+ * where all orders are allowed); otherwise symmetry leaves no choice of shape. Which cells E. Parthe and L. M. Gelato,
+ * Acta Cryst. A40 (1984) 169, call standard is taken from memory; the measure a^2 + c^2 and the order in which axes are
+ * compared are ours.
  * @param metric of the cell of the reference setting
  */
 export function standardAxes(metric: Metric, group: SpaceGroup, number: number): IntMat3[] {
   const { crystalFamily } = groupProperties(number);
   const exact = invariantMetric(metric, group);
   const fits = (P: IntMat3) => normalisingShift(number, P) !== null;
-  const classes = new Classes(group);
   if (crystalFamily !== "monoclinic" && crystalFamily !== "orthorhombic") {
     const start = crystalFamily === "triclinic" ? niggliReduction(exact.toCartesian) : IDENTITY;
-    return automorphisms(gramIn(exact.g, start))
-      .map((W) => multiply(start, W))
-      .filter((P) => fits(P) && classes.isNew(P));
+    const alike = automorphisms(gramIn(exact.g, start)).map((W) => multiply(start, W));
+    return onePerClass(alike.filter(fits), group);
   }
   const changes = crystalFamily === "monoclinic" ? planeChanges(exact.g) : smallMatrices().filter(isMonomial);
   const ranked = changes
     .map((P) => ({ P, rank: rankOf(gramIn(exact.g, P), crystalFamily) }))
     .sort((a, b) => compareRanks(a.rank, b.rank));
   const best = ranked.find(({ P }) => fits(P))!; // the identity fits
-  return ranked
-    .filter(({ P, rank }) => compareRanks(rank, best.rank) === 0 && fits(P))
-    .map(({ P }) => P)
-    .filter((P) => classes.isNew(P));
+  const alike = ranked.filter(({ P, rank }) => compareRanks(rank, best.rank) === 0 && fits(P));
+  return onePerClass(
+    alike.map(({ P }) => P),
+    group,
+  );
 }
 
 function gramIn(g: Mat3, P: IntMat3): Mat3 {
@@ -106,20 +107,24 @@ function reducedNet(g: Mat3): IntMat3 {
   return [u[0], 0, v[0], 0, sense, 0, u[1], 0, v[1]];
 }
 
-/** Changes of axes up to the rotations of the group. */
-class Classes {
-  private readonly rotations: readonly IntMat3[];
-  private readonly seen = new Set<string>();
-
-  constructor(group: SpaceGroup) {
-    this.rotations = group.representatives.map((a) => a.W).filter((W) => determinant(W) === 1);
-  }
-
-  isNew(P: IntMat3): boolean {
-    if (this.seen.has(P.join())) return false;
-    for (const W of this.rotations) this.seen.add(multiply(W, P).join());
-    return true;
-  }
+/** Of changes of axes that a rotation of the group makes one, that with the fewest negative entries and the least change. */
+function onePerClass(changes: readonly IntMat3[], group: SpaceGroup): IntMat3[] {
+  const rotations = group.representatives.map((a) => a.W).filter((W) => determinant(W) === 1);
+  const seen = new Set<string>();
+  const nearness = (P: IntMat3) => [
+    P.filter((e) => e < 0).length,
+    P.reduce<number>((s, e, i) => s + Math.abs(e - IDENTITY[i]!), 0),
+  ];
+  const ordered = changes
+    .map((P) => ({ P, near: nearness(P) }))
+    .sort((x, y) => x.near[0]! - y.near[0]! || x.near[1]! - y.near[1]!);
+  return ordered
+    .map(({ P }) => P)
+    .filter((P) => {
+      if (seen.has(P.join())) return false;
+      for (const W of rotations) seen.add(multiply(W, P).join());
+      return true;
+    });
 }
 
 /** Coordinates, 0 to 2, along which a group of a reference setting leaves the origin free: those that it keeps. */
