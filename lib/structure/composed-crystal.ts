@@ -38,13 +38,18 @@ export function composedCrystal(table: SiteTable, options: CrystalOptions = {}):
   const named = groupOf(table);
   const tried = named.settings.map((setting) => ({ setting, ...composedOrNot(setting, table, tolerance) }));
   const fitting = tried.flatMap(({ setting, crystal }) => (crystal ? [{ setting, crystal }] : []));
-  if (fitting.length === 0) throw tried[0]!.problem;
+  if (fitting.length === 0) throw telling(tried.map((t) => t.problem!));
   const origins = fitting.filter((f) => f.setting.axes === fitting[0]!.setting.axes);
   const roomy = origins.length > 1 ? origins.filter((f) => shortDistances(f.crystal).tooNear.length === 0) : origins;
   const { setting, crystal } = roomy[0] ?? fitting[0]!;
   const byDistance = roomy.length > 0 && roomy.length < origins.length;
   const note = groupNote(table.group.text, named, setting, { fitting: fitting.length, byDistance });
   return { ...crystal, notes: [note, ...crystal.notes] };
+}
+
+/** Of the faults in all settings that of the most usual one whose axes the cell fits. */
+function telling(problems: readonly InputProblem[]): InputProblem {
+  return problems.find((p) => !p.code.startsWith("cell-")) ?? problems[0]!;
 }
 
 function composedOrNot(setting: NamedSetting, table: SiteTable, tolerance: number) {

@@ -26,6 +26,8 @@ const CASES: Readonly<Record<string, readonly string[]>> = {
     'sitefold sites --group "P 63/m m c" --at 0.333,0.667,1/4',
     'sitefold sites --group "P 63/m m c" --at 0.333,0.667,1/4 --cell "a=3.16 c=12.3" --json',
     'sitefold sites --group "R -3 c" --at 0.25,0',
+    "sitefold sites fixtures/calcite.cif --at 0,0,0",
+    "sitefold sites fixtures/calcite.cif --group 167 --at 0,0,0",
     'sitefold sites --group "R -3 c" --at 1/4,1/4,1/4 --cell "a=6.37 alpha=46.1"',
     'sitefold sites --group 194 --at 0,0,0 --cell "a=5 c=6 gamma=90"',
   ],
@@ -46,6 +48,8 @@ const CASES: Readonly<Record<string, readonly string[]>> = {
     'sitefold compose --group "P 42/m n m" --cell "a=4.59" --site "Ti 2a"',
     'sitefold compose --group "P m -3 m" --cell a=3.905 --site "Sr 1a 0 0 0 1.0"',
     'sitefold compose --group "P m -3 m" --cell a=4.12 --site "Cs 1a" --site "Rb 1a occ=0.2"',
+    'sitefold compose fixtures/tables/dolomite.txt --site "Ca 3a"',
+    "sitefold compose fixtures/calcite.cif",
     "sitefold compose",
   ],
   modes: [

@@ -175,6 +175,15 @@ describe("a table is refused", () => {
     );
   });
 
+  it("tells what is wrong in the axes that the cell fits", () => {
+    expect(problemOf(() => composed("group R -3 c\ncell a=6.37 alpha=46.1\nO 18e x=0.25")).message).toContain(
+      "in the cell of the reference setting, but 6 points in this cell, not 18",
+    );
+    expect(problemOf(() => composed("group R -3 c\ncell a=6.37 gamma=91 alpha=90\nO 6e x=0.25")).code).toBe(
+      "cell-contradiction",
+    );
+  });
+
   it("tells the multiplicity of another cell", () => {
     const { message } = problemOf(() => composed("group R -3 c:R\ncell a=6.37 alpha=46.1\nCa 6b"));
     expect(message).toContain("has in the cell of the reference setting, but 2 points in this cell, not 6");

@@ -3,7 +3,7 @@ import { mkdtempSync, readdirSync, readFileSync, rmSync, writeFileSync } from "n
 import { createRequire } from "node:module";
 import { tmpdir } from "node:os";
 import { dirname, join } from "node:path";
-import { fileURLToPath } from "node:url";
+import { fileURLToPath, pathToFileURL } from "node:url";
 import { build } from "esbuild";
 
 const ROOT = fileURLToPath(new URL("../..", import.meta.url));
@@ -144,7 +144,10 @@ export async function compiled(examples: readonly Example[]): Promise<CompiledEx
       outfile: bundle,
       nodePaths: [join(ROOT, "node_modules")],
     });
-    const module = (await import(bundle)) as Record<string, { run: CompiledExamples["run"][number] }>;
+    const module = (await import(pathToFileURL(bundle).href)) as Record<
+      string,
+      { run: CompiledExamples["run"][number] }
+    >;
     return { faults: typeFaults(folder), run: examples.map((_, i) => module[`e${i}`]!.run) };
   } finally {
     rmSync(folder, { recursive: true, force: true });
