@@ -151,7 +151,10 @@ class SiteReader {
 
   private coordinates(row: number, label: string): [Numb, Numb, Numb] | null {
     const stem = this.cartesian ? "_atom_site.Cartn_" : "_atom_site.fract_";
-    const read = COORDINATES.map((c) => coordinate(cellOf(this.loop, row, stem + c), stem + c, label));
+    const read = COORDINATES.map((c) => {
+      const n = coordinate(cellOf(this.loop, row, stem + c), stem + c, label);
+      return n && { ...n, su: n.su ?? numbOf(cellOf(this.loop, row, `${stem}${c}_su`))?.value ?? null };
+    });
     return read.every((n) => n !== null) ? (read as [Numb, Numb, Numb]) : null;
   }
 

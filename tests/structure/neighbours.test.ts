@@ -79,7 +79,10 @@ describe("lists of neighbours", () => {
       for (const site of answer.sites) {
         for (const n of site.neighbours) {
           const there = image(n.operation, points.get(n.label)!);
-          const [a, b] = [site.position, there].map((x) => apply3(crystal.metric.toCartesian, x)) as unknown as [Vec3, Vec3];
+          const [a, b] = [site.position, there].map((x) => apply3(crystal.metric.toCartesian, x)) as unknown as [
+            Vec3,
+            Vec3,
+          ];
           expect(Math.hypot(b[0] - a[0], b[1] - a[1], b[2] - a[2])).toBeCloseTo(n.distance, 6);
           const [, number, ...digits] = /^(\d+)_(\d)(\d)(\d)$/.exec(n.code!)!;
           const coded = image(numbers.get(number!)!, points.get(n.label)!).map((e, i) => e + Number(digits[i]) - 5);
@@ -309,6 +312,17 @@ describe("uncertainties", () => {
   });
 
   it("are unknown for an atom that is free to move and has none", () => expect(su("0.40")).toBeNull());
+
+  it("may stand in columns of their own", () => {
+    const apart = text("0.40")
+      .replace("_atom_site_fract_z", "_atom_site_fract_z\n_atom_site_fract_y_su")
+      .replace("Ca1 0 0 0", "Ca1 0 0 0 .")
+      .replace("O1 0 0.40 0", "O1 0 0.40 0 0.02")
+      .replace("_cell_length_b 5.0(1)", "_cell_length_b 5.0\n_cell_length_b_su 0.1");
+    const block = blockOf(apart);
+    const { sites } = neighboursAnswer(crystalFromBlock(block), { block, choice: { kind: "nearest", count: 2 } });
+    expect(sites[0]!.neighbours[0]!.su).toBeCloseTo(Math.hypot(5 * 0.02, 0.4 * 0.1), 9);
+  });
 
   it("are those of the cell between atoms that symmetry fixes, and unknown without it", () => {
     expect(su("0.5")).toBeCloseTo(0.05, 9);
