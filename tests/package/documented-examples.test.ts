@@ -19,18 +19,8 @@ const SHOWN = [
   ...["countConfigurations", "orderedConfigurations", "configurationsAnswer", "coordinateList", "listedStructure"],
   ...["structureCif", "xyzText", "extendedXyz", "pdbText", "mmcifText", "positionsCsv", "parseSiteTable"],
   ...["formatSiteTable", "composedCrystal", "composeAnswer", "composedCif", "pointsAnswer", "namedGroup"],
-  ...[
-    "completedCell",
-    "neighboursAnswer",
-    "resited",
-    "resitedOnto",
-    "vetAnswer",
-    "modesAnswer",
-    "splitAnswer",
-    "symmetriseAnswer",
-    "groupAnswer",
-    "readCif",
-  ],
+  ...["completedCell", "neighboursAnswer", "resited", "resitedOnto", "compareStructures", "symmetriseAnswer"],
+  ...["vetAnswer", "modesAnswer", "splitAnswer", "groupAnswer", "readCif"],
 ];
 
 describe("the examples in docstrings and in the README", () => {
