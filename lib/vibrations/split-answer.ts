@@ -11,7 +11,7 @@ import { assignWyckoff } from "../symmetry/index.ts";
 import { activities } from "./activity.ts";
 import { factorGroupModes } from "./factor-group.ts";
 import { countsOf, type SpeciesCounts } from "./species-counts.ts";
-import { addAll, type SplitSums, siteContribution, sumUp } from "./split-sums.ts";
+import { addAll, type SplitSums, siteContributions, sumUp } from "./split-sums.ts";
 import { type UnitAnswer, unitAnswer } from "./unit-answer.ts";
 import { correlateUnit } from "./unit-correlation.ts";
 import { placeOccupancies } from "./vibrating-sites.ts";
@@ -77,6 +77,7 @@ export function splitAnswer(crystal: Crystal, options: SplitOptions = {}): Split
     return { unit, symmetry, correlation: correlateUnit(unit, symmetry, modes.group, frame) };
   });
   const occupancies = placeOccupancies(crystal);
+  const ofSite = siteContributions(crystal, modes);
   const { sums, notes } = sumUp(crystal, modes, analysis, correlated);
   const named = (numbers: readonly number[]) => countsOf(modes.group.irreps, numbers);
   const activity = activities(modes.group);
@@ -99,7 +100,7 @@ export function splitAnswer(crystal: Crystal, options: SplitOptions = {}): Split
       element: atom.element,
       count: atom.count,
       siteSymmetry: siteSymbol(crystal, atom.site),
-      factorGroup: named(siteContribution(crystal, modes, atom.site)),
+      factorGroup: named(ofSite(atom.site)),
     })),
     extended: analysis.extended.map((e) => ({
       kind: e.kind,
@@ -107,12 +108,7 @@ export function splitAnswer(crystal: Crystal, options: SplitOptions = {}): Split
       count: e.count,
       labels: e.labels,
       direction: directionText(e),
-      factorGroup: named(
-        addAll(
-          modes,
-          e.sites.map((s) => siteContribution(crystal, modes, s)),
-        ),
-      ),
+      factorGroup: named(addAll(modes, e.sites.map(ofSite))),
     })),
     sums,
     unitNotes: [...analysis.notes, ...notes],

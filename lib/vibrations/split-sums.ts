@@ -20,10 +20,10 @@ function rootSite(crystal: Crystal, site: number): number {
   return crystal.sites[site]!.sharesPositionOf ?? site;
 }
 
-/** Species of the factor group that the atoms of a site give. */
-export function siteContribution(crystal: Crystal, modes: FactorGroupModes, site: number): readonly number[] {
-  const root = crystal.sites[rootSite(crystal, site)]!;
-  return modes.sites.find((m) => m.site === root)!.contributions;
+/** Species of the factor group that the atoms of a site give, by its index in the crystal. */
+export function siteContributions(crystal: Crystal, modes: FactorGroupModes): (site: number) => readonly number[] {
+  const bySite = new Map(modes.sites.map((m) => [m.site, m.contributions]));
+  return (site) => bySite.get(crystal.sites[rootSite(crystal, site)]!)!;
 }
 
 /** Sum of lists of numbers, species by species. */
@@ -41,10 +41,11 @@ export function sumUp(
   analysis: UnitAnalysis,
   correlated: readonly CorrelatedUnit[],
 ): { sums: SplitSums; notes: string[] } {
-  const lone = analysis.loneAtoms.map((a) => siteContribution(crystal, modes, a.site));
+  const ofSite = siteContributions(crystal, modes);
+  const lone = analysis.loneAtoms.map((a) => ofSite(a.site));
   const extended = addAll(
     modes,
-    analysis.extended.flatMap((e) => e.sites.map((s) => siteContribution(crystal, modes, s))),
+    analysis.extended.flatMap((e) => e.sites.map((s) => ofSite(s))),
   );
   const internal = addAll(
     modes,
@@ -56,7 +57,7 @@ export function sumUp(
   );
   const translations = addAll(modes, [...correlated.map((c) => c.correlation.translations.factorGroup), ...lone]);
   const total = addAll(modes, [internal, librations, translations, extended]);
-  const notes = compareWithAtoms(crystal, modes, analysis, total);
+  const notes = compareWithAtoms(crystal, modes, analysis, total, ofSite);
   const counts = (numbers: readonly number[]) => countsOf(modes.group.irreps, numbers);
   return {
     sums: {
@@ -78,16 +79,14 @@ function compareWithAtoms(
   modes: FactorGroupModes,
   analysis: UnitAnalysis,
   total: readonly number[],
+  ofSite: (site: number) => readonly number[],
 ): string[] {
   const used = new Set<number>();
   const use = (site: number) => used.add(rootSite(crystal, site));
   for (const u of analysis.units) for (const a of u.atoms) use(a.site);
   for (const e of analysis.extended) for (const s of e.sites) use(s);
   for (const a of analysis.loneAtoms) use(a.site);
-  const expected = addAll(
-    modes,
-    [...used].map((site) => siteContribution(crystal, modes, site)),
-  );
+  const expected = addAll(modes, [...used].map(ofSite));
   const left = crystal.sites.filter((_, i) => rootSite(crystal, i) === i && !used.has(i));
   const notes =
     left.length > 0 ? [`not counted, as alternatives to others: ${left.map((s) => s.label).join(", ")}`] : [];
