@@ -44,10 +44,8 @@ export function siteNeighbours(context: SiteContext, site: number, around: SiteS
   const representative = source.sharing[site]![0]!;
   const listed = source.listed(representative);
   const permutations = neighbourPermutations(source, representative, around.chosen);
-  const singles = around.chosen.map((_, i) => [i]);
-  const orbits = orbitsOf(singles, permutations, String);
-  const orbitOf = new Map(orbits.flatMap((members, k) => members.map((i) => [i, k] as const)));
-  const neighbours = around.chosen.map((n, i) => neighbourOf(context, site, listed, n, orbitOf.get(i)!, around.shares));
+  const orbits = classesOf(around.chosen.length, permutations);
+  const neighbours = around.chosen.map((n, i) => neighbourOf(context, site, listed, n, orbits[i]!, around.shares));
   const alternatives = around.chosen.some((a, i) => around.chosen.slice(0, i).some((b) => source.excludes(a, b)));
   const places = around.chosen.map((n) => measures.between(listed, n));
   const shapes = alternatives ? [] : shapeMeasures(places);
@@ -80,6 +78,16 @@ export function siteNeighbours(context: SiteContext, site: number, around: SiteS
     neighbours,
     angles: context.withAngles || neighbours.length === 2 ? anglesOf(context, listed, around.chosen, permutations) : [],
   };
+}
+
+/** Number of the class of each neighbour under the site symmetry. */
+function classesOf(count: number, permutations: readonly (readonly number[])[]): number[] {
+  const singles = Array.from({ length: count }, (_, i) => [i]);
+  const classes = new Array<number>(count).fill(0);
+  orbitsOf(singles, permutations, String).forEach((members, k) => {
+    for (const i of members) classes[i] = k;
+  });
+  return classes;
 }
 
 function formulaOf(centre: string, neighbours: readonly Neighbour[]): string {

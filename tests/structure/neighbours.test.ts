@@ -250,6 +250,30 @@ describe("disorder", () => {
   });
 });
 
+describe("torsion angles", () => {
+  const box = ["length_a", "length_b", "length_c"].map((k) => `_cell_${k} 10`).join("\n");
+  const torsionsOf = (group: string, rows: readonly string[]) => {
+    const head = `data_x\n${box}\n_cell_angle_alpha 90\n_cell_angle_beta 90\n_cell_angle_gamma 90\n_symmetry_space_group_name_H-M '${group}'`;
+    const loop =
+      "loop_\n_atom_site_label\n_atom_site_type_symbol\n_atom_site_fract_x\n_atom_site_fract_y\n_atom_site_fract_z";
+    return neighboursAnswer(crystalOfText([head, loop, ...rows].join("\n")), { torsions: true }).torsions;
+  };
+  const peroxide = ["O1 O 0.5 0.5 0.5", "H1 H 0.5 0.59 0.5", "O2 O 0.645 0.5 0.5"];
+
+  it("are positive where the far bond is turned clockwise, and stand once for both senses of the chain", () => {
+    const right = torsionsOf("P 1", [...peroxide, "H2 H 0.645 0.5 0.59"]);
+    expect(right.map((t) => [t.atoms.map((a) => a.label).join(), Math.round(t.angle)])).toEqual([["H1,O1,O2,H2", 90]]);
+    expect(torsionsOf("P 1", [...peroxide, "H2 H 0.645 0.5 0.41"]).map((t) => Math.round(t.angle))).toEqual([-90]);
+    expect(torsionsOf("P 1", [...peroxide, "H2 H 0.645 0.41 0.5"]).map((t) => Math.round(t.angle))).toEqual([180]);
+  });
+
+  it("stand once for images under the space group", () => {
+    const half = ["O1 O 0.0725 0 0", "H1 H 0.0725 0.09 0.02"];
+    const [torsion, ...others] = torsionsOf("P 1 2 1", half);
+    expect([torsion!.atoms.map((a) => a.code), others]).toEqual([["1_555", "1_555", "2_555", "2_555"], []]);
+  });
+});
+
 describe("symmetry codes", () => {
   const head =
     "data_x\n_cell_length_a 6\n_cell_length_b 7\n_cell_length_c 8\n_cell_angle_alpha 90\n_cell_angle_beta 100\n_cell_angle_gamma 90";
