@@ -31,12 +31,12 @@ export const RESITE: CommandSpec = {
     displacement: {
       type: "number",
       value: "ANGSTROM",
-      describe: "largest displacement of an atom between the two (default 0.3; 0.7 with --isotypic)",
+      describe: "largest displacement of an atom (default 0.3; with --isotypic 0.7)",
     },
     strain: {
       type: "number",
       value: "SHARE",
-      describe: "largest strain between the two lattices (default 0.03; 0.1 with --isotypic)",
+      describe: "largest strain of the lattice (default 0.03; with --isotypic 0.1)",
     },
     isotypic: { type: "boolean", describe: "let elements stand for others, and scale to one volume" },
     format: { type: "string", value: "FORMAT", describe: `one of ${RESITE_FORMATS.join(", ")} (default text)` },

@@ -190,7 +190,6 @@ export {
   type ResitedSite,
   type ResiteRequest,
   resited,
-  type StandardisationAnswer,
 } from "./resite-answer.ts";
 export { resitedOnto } from "./resited-onto.ts";
 export { cross3, dot3, length3, minus3, unit3 } from "./rotation-fit.ts";
@@ -203,6 +202,7 @@ export type { MeasuredNumber, PositionParameters, SiteTable, TableCoordinate, Ta
 export { formatSiteTable, parseSiteTable } from "./site-table-text.ts";
 export { type SiteAnswer, type SiteImage, type SitesAnswer, sitesAnswer } from "./sites-answer.ts";
 export { type DescribedSite, type StandardDescription, standardDescription } from "./standard-description.ts";
+export type { StandardisationAnswer } from "./standardisation-answer.ts";
 export { type StandardisedCrystal, standardisedCrystal } from "./standardised-crystal.ts";
 export { type EigenSystem, symmetricEigen } from "./symmetric-eigen.ts";
 export {
