@@ -20,7 +20,7 @@ export function comparisonText(answer: ComparisonAnswer): string {
   return [text, structureTable(answer), ...(answer.pairs.length > 0 ? [pairTable(answer.pairs)] : [])].join("\n\n");
 }
 
-function verdictText({ verdict, disagreement, hand, elements }: ComparisonAnswer): string {
+function verdictText({ asked, verdict, disagreement, hand, elements }: ComparisonAnswer): string {
   switch (verdict) {
     case "same":
       return hand === "other"
@@ -33,7 +33,7 @@ function verdictText({ verdict, disagreement, hand, elements }: ComparisonAnswer
     case "incomplete":
       return `the two files hold the same structure${hand === "other" ? " of the other hand" : ""} as far as both give atoms: one has atoms that the other lacks`;
     default:
-      return `the two files do not hold the same structure: ${REASONS[disagreement ?? "positions"]}`;
+      return `${asked === "isotypic" ? "the two structures are not isotypic" : "the two files do not hold the same structure"}: ${REASONS[disagreement ?? "positions"]}`;
   }
 }
 
@@ -77,7 +77,7 @@ function sizeLines({ first, second, strain, scale }: ComparisonAnswer): string[]
   return [`the cell of the ${larger} file is ${Number(formatNumber(n, 3))} times as large as that of the ${smaller}`];
 }
 
-function differenceLines({ strain, nearest, disagreement }: ComparisonAnswer): string[] {
+function differenceLines({ asked, strain, nearest, disagreement }: ComparisonAnswer): string[] {
   const lines: string[] = [];
   if (disagreement === "lattice") {
     lines.push(
@@ -93,7 +93,8 @@ function differenceLines({ strain, nearest, disagreement }: ComparisonAnswer): s
         : "no way to lay one on the other was found even with larger displacements, up to 1 Å",
     );
   }
-  if (disagreement === "composition") lines.push("structures of other elements can be compared with --isotypic");
+  if (disagreement === "composition" && asked === "same")
+    lines.push("structures of other elements can be compared with --isotypic");
   return lines;
 }
 

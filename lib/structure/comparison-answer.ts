@@ -30,6 +30,8 @@ export interface ComparedStructure {
 export type Disagreement = Mismatch["disagreement"] | "occupancy" | "space group";
 
 export interface ComparisonAnswer {
+  /** Whether elements may stand for others. */
+  readonly asked: "same" | "isotypic";
   /** `incomplete`: all atoms of one have partners, the other has more. */
   readonly verdict: "same" | "isotypic" | "incomplete" | "different";
   /** Null unless they are different. */
@@ -159,8 +161,9 @@ function disagreementOf(context: Context, { alone, largest }: PairedSites, occup
   return occupancy > OCCUPANCY_DIFFERENCE ? "occupancy" : null;
 }
 
-function skeleton({ first, second, a, b, scale, limits }: Context): Omit<ComparisonAnswer, "verdict"> {
+function skeleton({ first, second, a, b, isotypic, scale, limits }: Context): Omit<ComparisonAnswer, "verdict"> {
   return {
+    asked: isotypic ? "isotypic" : "same",
     disagreement: null,
     first: compared(first, a),
     second: compared(second, b),

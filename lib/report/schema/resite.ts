@@ -110,6 +110,7 @@ function comparison(): Shape<ComparisonAnswer> {
     });
   const alone = () => list(object<SiteAlone>({ site: comparedSite(), atoms: count("", 1) }));
   return object<ComparisonAnswer>({
+    asked: choice({ same: true, isotypic: true }, "whether elements may stand for others"),
     verdict: choice({ same: true, isotypic: true, incomplete: true, different: true }),
     disagreement: orNull(
       choice({
