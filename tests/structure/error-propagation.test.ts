@@ -1,8 +1,10 @@
 import fc from "fast-check";
 import { inverse, Matrix } from "ml-matrix";
 import { describe, expect, it, test } from "vitest";
+import { multiplyRatMat, ratMat3, ratVec3 } from "../../lib/algebra/index.ts";
 import { readCif } from "../../lib/cif/index.ts";
 import { requireClean } from "../../lib/problem.ts";
+import { cellStrains } from "../../lib/structure/cell-uncertainty.ts";
 import { scaledDirections } from "../../lib/structure/free-parameters.ts";
 import {
   angle,
@@ -11,12 +13,15 @@ import {
   distance,
   type Metric,
   metricOf,
+  multiply3,
   neighboursAnswer,
   torsion,
   type Vec3,
 } from "../../lib/structure/index.ts";
 import { angleOf, distanceOf, torsionOf } from "../../lib/structure/measure.ts";
+import { conjugate3, difference3 } from "../../lib/structure/rotation-fit.ts";
 import { parseTriplet } from "../../lib/symmetry/index.ts";
+import { fixture, inSetting, unimodular } from "../support/crystals.ts";
 import { randomNumbers } from "../support/random-structures.ts";
 
 const coordinate = fc.double({ min: -3, max: 3, noNaN: true });
@@ -88,6 +93,38 @@ describe("tied parameters", () => {
       unknown: [[0, 0, 1]],
     });
     expect(scaledDirections([[0, 0, 0]], [0.03, null, null])).toEqual({ directions: [], unknown: [] });
+  });
+});
+
+describe("strains of the cell", () => {
+  it.each([
+    ["albite", 6],
+    ["gypsum", 4],
+    ["anhydrite", 3],
+    ["rutile", 2],
+    ["calcite", 2],
+    ["zircon", 2],
+    ["halite", 1],
+  ])("keep the symmetry of %s, in any cell: %i are free", (name, free) => {
+    fc.assert(
+      fc.property(unimodular, fc.boolean(), (U, isPrimitive) => {
+        const start = fixture(name);
+        const P = isPrimitive ? multiplyRatMat(start.group.primitive, ratMat3(U)) : ratMat3(U);
+        const { metric, group } = inSetting(start, { P, p: ratVec3([0, 0, 0]) })!;
+        const strains = cellStrains(metric, group, [1, 1, 1, 1, 1, 1]);
+        expect(strains).toHaveLength(free);
+        for (const strain of strains) {
+          const size = Math.hypot(...strain);
+          expect(size).toBeGreaterThan(1e-4);
+          for (const { W } of group.representatives) {
+            const R = multiply3(metric.toCartesian, multiply3(W, metric.toFractional));
+            const moved = conjugate3(R, strain);
+            expect(difference3(moved, strain)).toBeLessThan(1e-7 * size);
+          }
+        }
+      }),
+      { numRuns: 15 },
+    );
   });
 });
 

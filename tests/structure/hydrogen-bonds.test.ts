@@ -52,6 +52,11 @@ describe("hydrogen bonds", () => {
     expect([named(plane), plane.map((h) => h.count)]).toEqual([["O1 H1 O2"], [2]]);
   });
 
+  it("of hydrogen on a mirror plane reach both images of an acceptor, and are one class", () => {
+    const bonds = bondsOf(["O1 O 5 0 5", "H1 H 5.96 0 5", "O2 O 7.5 1.4 5"], { group: "P 1 m 1" });
+    expect([named(bonds), bonds.map((h) => h.count)]).toEqual([["O1 H1 O2"], [2]]);
+  });
+
   it("end beyond the sum of the van der Waals radii and below 110 degrees", () => {
     expect(bondsOf([...water, "O2 O 8.75 5 5"])).toEqual([]); // H...O 2.79
     expect(bondsOf([...water, "O2 O 6 2.8 5"])).toEqual([]); // 91 degrees

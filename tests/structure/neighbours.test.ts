@@ -191,6 +191,56 @@ describe("lists of neighbours", () => {
   });
 });
 
+describe("first shells", () => {
+  const metal = (group: string, a: number, rows: readonly string[]) => {
+    const cell = ["length_a", "length_b", "length_c"].map((k) => `_cell_${k} ${a}`);
+    const angles = ["alpha", "beta", "gamma"].map((k) => `_cell_angle_${k} 90`);
+    const loop = ["loop_", "_atom_site_label", ...["x", "y", "z"].map((c) => `_atom_site_fract_${c}`)];
+    const name = `_symmetry_space_group_name_H-M '${group}'`;
+    return neighboursAnswer(crystalOfText(["data_x", ...cell, ...angles, name, ...loop, ...rows].join("\n"))).sites;
+  };
+
+  it("of metals end at the widest gap, whatever is bonded to what", () => {
+    expect(metal("F m -3 m", 3.615, ["Cu1 0 0 0"])[0]!.coordination).toBe(12);
+    const [iron] = metal("I m -3 m", 2.866, ["Fe1 0 0 0"]);
+    expect([iron!.coordination, iron!.gap!.count]).toEqual([14, 14]);
+    expect(iron!.gap!.last).toBeCloseTo(2.866, 6);
+    expect(iron!.gap!.next!.distance).toBeCloseTo(2.866 * Math.SQRT2, 6);
+  });
+
+  it("of metals leave out what stands behind a ligand", () => {
+    const { neighbours, next } = siteOf(answerOf("calcite"), "Ca1");
+    expect(new Set(neighbours.map((n) => n.element))).toEqual(new Set(["O"]));
+    expect([next!.label, next!.distance < 3.3]).toEqual(["C1", true]);
+  });
+});
+
+describe("bond valence sums", () => {
+  it("count hydrogen apart, and are for the state that fits best", () => {
+    const answer = answerOf("gypsum");
+    expect(siteOf(answer, "OW").valence).toMatchObject({ hydrogens: 2, charge: null });
+    expect(siteOf(answer, "S").valence).toMatchObject({ charge: 6, stated: false, hydrogens: 0 });
+    const { neighbours, valence } = siteOf(answer, "Ca");
+    expect(neighbours.reduce((s, n) => s + n.valence!, 0)).toBeCloseTo(valence!.value, 9);
+  });
+
+  it("take the state that the file states", () => {
+    const text = fixtureText("calcite").replace(
+      /^loop_$/m,
+      "loop_\n_atom_type_symbol\n_atom_type_oxidation_number\nCa 2\nC 4\nO -2\n\nloop_",
+    );
+    const block = blockOf(text);
+    const answer = neighboursAnswer(crystalFromBlock(block), { block });
+    expect(siteOf(answer, "Ca1").valence).toMatchObject({ charge: 2, stated: true });
+  });
+
+  it("are null where a neighbour has no parameters with the site", () => {
+    const answer = answerOf("urea");
+    expect(["C", "N"].map((label) => siteOf(answer, label).valence)).toEqual([null, null]);
+    expect(siteOf(answer, "C").neighbours.map((n) => n.valence === null)).toContain(true);
+  });
+});
+
 /** A structure in P 1 with disorder, one row per atom: label, element, x, y, z, occupancy, assembly, group. */
 function disordered(rows: readonly string[]): Crystal {
   const names = [
@@ -213,7 +263,7 @@ describe("disorder", () => {
   const crystal = disordered([
     "C1 C 0.50 0.50 0.50 1 . .",
     "O1A O 0.64 0.50 0.50 0.6 A 1",
-    "O1B O 0.62 0.56 0.50 0.4 A 2",
+    "O1B O 0.58 0.62 0.50 0.4 A 2",
     "O2 O 0.40 0.60 0.50 1 . .",
     "O3 O 0.40 0.40 0.50 1 . .",
   ]);
