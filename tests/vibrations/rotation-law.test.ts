@@ -1,7 +1,8 @@
 import { describe, expect, test } from "vitest";
 import { polariseText } from "../../lib/report/index.ts";
+import { parseTransformation } from "../../lib/symmetry/index.ts";
 import { polariseAnswer } from "../../lib/vibrations/index.ts";
-import { fixture } from "../support/crystals.ts";
+import { fixture, inSetting } from "../support/crystals.ts";
 
 /** Value of a sum of letters such as `-a/2+d/2`, `0.5 b`, `sqrt3/2 c`. */
 function numberOf(sum: string, letters: ReadonlyMap<string, number>): number {
@@ -78,6 +79,12 @@ describe("natural faces of a monoclinic crystal", () => {
     expect(bands(1)).toEqual(["Bg"]);
     for (const i of [0, 2, 3, 4, 5]) expect(bands(i)).toEqual(["Ag"]);
     expect(polariseText(polariseAnswer(fixture("gypsum")))).toContain("natural faces of a monoclinic crystal");
+  });
+
+  test("are not listed where the cell is skew, and its indices are not those of the faces", () => {
+    const gypsum = fixture("gypsum");
+    const primitive = inSetting(gypsum, parseTransformation("1/2a+1/2b+1/2c,b,c;0,0,0"))!;
+    expect(polariseAnswer(primitive).naturalFaces).toEqual([]);
   });
 
   test("are not listed for other crystals", () => {
