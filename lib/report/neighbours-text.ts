@@ -8,7 +8,7 @@ import { textTable, wrapText } from "./table.ts";
 const WIDTH = 110;
 const right = { align: "right" } as const;
 /** Sites described one by one, lines of the summary and of torsions without `all`. */
-const MOST_DETAILS = 12;
+const MOST_DETAILS = 16;
 const MOST_LINES = 60;
 
 export interface NeighboursView {

@@ -34,18 +34,20 @@ export class BondValences {
     this.states = source.crystal.sites.map((site, i) => this.stateOf(site, i));
   }
 
-  /** Valence of the bond of a site to an atom of the cell, weighted by the occupancy there; null without parameters. */
+  /** Valence of the bond of a site to an atom of the cell, weighted by how often it is there; null without parameters. */
   valence(site: number, atom: number, distance: number): number | null {
     const centre = this.source.crystal.sites[site]!;
     let sum = 0;
     let known = false;
-    for (const i of this.source.sharing[this.source.atoms[atom]!.site]!) {
+    const neighbour = this.source.atoms[atom]!.site;
+    const weight = this.source.presence(site, neighbour) / this.source.occupancyAt(neighbour);
+    for (const i of this.source.sharing[neighbour]!) {
       const other = this.source.crystal.sites[i]!;
       if (isHydrogen(centre.element) || isHydrogen(other.element)) continue;
       const r0 = this.parameter(site, other.element) ?? this.parameter(i, centre.element);
       if (r0 === null) continue;
       known = true;
-      sum += bondValence(r0, distance) * other.occupancy;
+      sum += bondValence(r0, distance) * weight * other.occupancy;
     }
     return known ? sum : null;
   }

@@ -46,8 +46,8 @@ export function coordinationShell(
 }
 
 /**
- * What may belong to the first shell of an atom, nearest first in sums of covalent radii: non-metals only, if the nearest
- * is one, and none that is bonded to a nearer non-metal.
+ * What may belong to the first shell of an atom, nearest first in sums of covalent radii: none that is bonded to a nearer
+ * non-metal, and non-metals only, if the nearest of the others is one.
  * @param near all atoms around it within SHELL_REACH
  */
 export function shellCandidates(
@@ -68,7 +68,8 @@ export function shellCandidates(
     .sort((a, b) => a.share - b.share);
   const { nonMetal } = bondClasses();
   const isNonMetal = (c: ShellCandidate) => c.element !== null && nonMetal.has(c.element);
-  return withoutThoseBehind(around[0] && isNonMetal(around[0]) ? around.filter(isNonMetal) : around);
+  const direct = withoutThoseBehind(around);
+  return direct[0] && isNonMetal(direct[0]) ? direct.filter(isNonMetal) : direct;
 }
 
 function neighboursOf(centre: number, contacts: readonly Contact[]): ShellAtom[] {

@@ -56,6 +56,19 @@ export class NeighbourAtoms {
     return excludeEachOther(p, q, contact.distance) || !this.together(contact);
   }
 
+  /** How often something is at the position of a neighbour when the centre is there: always, in one disorder group. */
+  presence(centre: number, neighbour: number): number {
+    const { sites } = this.crystal;
+    const [p, q] = [sites[centre]!, sites[neighbour]!];
+    if (isNamed(p.disorderGroup) && p.disorderGroup === q.disorderGroup && p.assembly === q.assembly) return 1;
+    return this.occupancyAt(neighbour);
+  }
+
+  /** Sum of the occupancies of all sites at the position of one. */
+  occupancyAt(site: number): number {
+    return this.sharing[site]!.reduce((s, i) => s + this.crystal.sites[i]!.occupancy, 0);
+  }
+
   /** Whether two atoms of the lattice are alternatives. */
   excludes(a: LatticeAtom, b: LatticeAtom): boolean {
     const shift = a.shift.map((e, i) => b.shift[i]! - e) as unknown as IntVec3;

@@ -1,4 +1,4 @@
-import { bondClasses } from "./bond-class.ts";
+import { bondClasses, isHydrogen } from "./bond-class.ts";
 import type { LatticeAtom } from "./cell-atoms.ts";
 import { type BondRule, radiusSum } from "./contact-table.ts";
 import { endOfShell, SHELL_REACH, type ShellCandidate, shellCandidates } from "./coordination-shell.ts";
@@ -41,6 +41,8 @@ export interface ShellEnd {
 const EQUAL_DISTANCE = 1e-3;
 /** As in the search, so that equivalent distances agree exactly; angstrom. */
 const ROUNDING = 1e-9;
+/** Hydrogen of hydroxide, water, ammonium or an organic group does not coordinate; that of hydrides and boranates does. */
+const CARRIERS = new Set(["C", "N", "O", "F", "P", "S", "Cl", "Se", "Br", "I"]);
 /** Farthest that nearest atoms are looked for; angstrom. */
 const FARTHEST = 24;
 
@@ -92,18 +94,21 @@ export class NeighbourLists {
     return new Map(
       this.centres.map((site) => {
         const listed = source.listed(site);
-        const candidates = shellCandidates(
-          source.crystal,
-          source.crystal.metric,
-          source.atoms,
-          listed.atom,
-          near(site),
-        );
+        const isMetal = !bondClasses().nonMetal.has(source.crystal.sites[site]!.element ?? "?");
+        const around = isMetal ? near(site).filter((n) => !this.isCarried(n.atom)) : near(site);
+        const candidates = shellCandidates(source.crystal, source.crystal.metric, source.atoms, listed.atom, around);
         const count = endOfShell(candidates);
         if (count === 0) return [site, null];
         return [site, { count, last: candidates[count - 1]!, next: candidates[count] ?? null, candidates }];
       }),
     );
+  }
+
+  /** Whether an atom is hydrogen bonded to one of CARRIERS: it is no ligand of its own. */
+  private isCarried(atom: number): boolean {
+    if (!isHydrogen(this.source.elementOf(atom))) return false;
+    const bonds = this.rules.get(this.source.atoms[atom]!.site)!;
+    return [...bonds.keys()].some((key) => CARRIERS.has(this.source.elementOf(atomOfKey(key).atom) ?? ""));
   }
 
   /** All atoms around the centres that may be there together with them, nearest first. */

@@ -81,7 +81,7 @@ export interface SiteNeighbours {
   readonly alsoHere: readonly string[];
   /** Number of the neighbours listed. */
   readonly coordination: number;
-  /** Sum of their occupancies. */
+  /** How many of them are there on average when the site is occupied. */
   readonly occupied: number;
   /** Centre and neighbours: `CaO6`, `C(C2H)` where both have an element in common. */
   readonly formula: string;

@@ -59,7 +59,7 @@ export function siteNeighbours(context: SiteContext, site: number, around: SiteS
     position: symmetry.point,
     alsoHere: source.sharing[site]!.filter((i) => i !== site).map((i) => crystal.sites[i]!.label),
     coordination: neighbours.length,
-    occupied: neighbours.reduce((s, n) => s + n.occupancy, 0),
+    occupied: around.chosen.reduce((s, n) => s + source.presence(site, source.atoms[n.atom]!.site), 0),
     formula: formulaOf(element ?? "?", neighbours),
     numbers: {
       bonds: around.bonds,
@@ -112,7 +112,7 @@ function neighbourOf(
   return {
     label,
     element,
-    occupancy: source.sharing[other]!.reduce((s, i) => s + sites[i]!.occupancy, 0),
+    occupancy: source.occupancyAt(other),
     alsoThere: source.sharing[other]!.filter((i) => i !== other).map((i) => sites[i]!.label),
     code: codes.code(operation, cells),
     operation: formatOperation(there),

@@ -208,6 +208,19 @@ describe("first shells", () => {
     expect(iron!.gap!.next!.distance).toBeCloseTo(2.866 * Math.SQRT2, 6);
   });
 
+  it("of metals leave out hydrogen of their ligands, even where it is nearer", () => {
+    const { neighbours, next } = siteOf(answerOf("jarosite"), "K");
+    expect([neighbours.length, new Set(neighbours.map((n) => n.element))]).toEqual([12, new Set(["O"])]);
+    expect(next!.label).toBe("H");
+    expect(next!.distance).toBeLessThan(neighbours[0]!.distance);
+  });
+
+  it("of metals in oxides hold no metals, however small the cell", () => {
+    expect(siteOf(answerOf("strontium-titanate"), "Sr").neighbours.map((n) => n.element)).toEqual(Array(12).fill("O"));
+    const cubic = metal("P m -3 m", 4.0984, ["Pb1 0.5 0.5 0.5", "Zr1 0 0 0", "O1 0.5 0 0"]);
+    expect(cubic.map((s) => s.formula)).toEqual(["PbO12", "ZrO6", "OZr2Pb4"]);
+  });
+
   it("of metals leave out what stands behind a ligand", () => {
     const { neighbours, next } = siteOf(answerOf("calcite"), "Ca1");
     expect(new Set(neighbours.map((n) => n.element))).toEqual(new Set(["O"]));
@@ -288,6 +301,18 @@ describe("disorder", () => {
     );
     expect(pairs).toHaveLength(5);
     expect(pairs).not.toContain("O1A,O1B");
+  });
+
+  it("lets atoms of one disorder group meet as if they were always there", () => {
+    const nitro = disordered([
+      "N1 N 0.5 0.5 0.5 0.5 A 1",
+      "O1 O 0.622 0.5 0.5 0.5 A 1",
+      "Li1 Li 0.70 0.67 0.5 0.8 . .",
+    ]);
+    const answer = neighboursAnswer(nitro);
+    const [o, n] = [siteOf(answer, "O1"), siteOf(answer, "N1")];
+    expect([n.occupied, n.valence!.value.toFixed(2)]).toEqual([1, Math.exp((1.361 - 1.22) / 0.37).toFixed(2)]);
+    expect(o.occupied).toBeCloseTo(1.8, 9); // lithium is there four times in five
   });
 
   it("counts atoms that share a position once, as all of them", () => {

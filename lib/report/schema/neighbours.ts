@@ -61,7 +61,7 @@ const site = () =>
     position: vector("fractional"),
     alsoHere: list(text(), "labels of further sites at the position"),
     coordination: count("number of the neighbours listed"),
-    occupied: amount("sum of their occupancies"),
+    occupied: amount("how many of them are there on average when the site is occupied"),
     formula: text(),
     numbers: object<SiteNeighbours["numbers"]>(
       {
