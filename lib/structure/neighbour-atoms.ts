@@ -23,6 +23,8 @@ export class NeighbourAtoms {
   /** Sites at the position of each, itself included, that are occupied at random. */
   readonly sharing: readonly (readonly number[])[];
   private readonly wraps: readonly IntVec3[];
+  /** Per site, whether it is fully occupied and in no disorder group. */
+  private readonly isWhole: readonly boolean[];
   private readonly together: (contact: Contact) => boolean;
 
   constructor(given: Crystal) {
@@ -42,6 +44,7 @@ export class NeighbourAtoms {
     this.firstImage = first;
     this.action = new AtomAction(crystal, this.atoms);
     this.wraps = this.atoms.map((a) => wrapOf(crystal, a));
+    this.isWhole = crystal.sites.map((s) => s.occupancy >= 1 && !isNamed(s.disorderGroup));
     this.together = withinOneCopy(crystal, this.atoms);
   }
 
@@ -50,6 +53,7 @@ export class NeighbourAtoms {
     const [a, b] = [this.atoms[contact.first]!.site, this.atoms[contact.second]!.site];
     const [p, q] = [this.crystal.sites[a]!, this.crystal.sites[b]!];
     if (contact.distance <= this.crystal.tolerance) return true;
+    if (this.isWhole[a] && this.isWhole[b]) return false;
     if (isNamed(p.disorderGroup) && isNamed(q.disorderGroup) && p.assembly === q.assembly) {
       if (p.disorderGroup !== q.disorderGroup) return true;
     }
