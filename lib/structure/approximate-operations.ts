@@ -117,13 +117,12 @@ function settle(body: Body, start: Mat3, determinant: 1 | -1, limit: number): Ap
   for (let round = 0; round < MOST_ROUNDS; round++) {
     const next = match(body, matrix, limit + ROUGH_MATCH);
     if (!next) return null;
-    const settled = permutation?.every((e, k) => e === next[k]) ?? false;
+    if (permutation?.every((e, k) => e === next[k])) break; // the matrix is fitted to it already
     permutation = next;
     matrix = nearestOrthogonal(
       correlationMatrix(points, (k) => points[next[k]!]!),
       determinant,
     );
-    if (settled) break;
   }
   const misfit = points.reduce(
     (worst, x, k) => Math.max(worst, length3(minus3(apply3(matrix, x), points[permutation![k]!]!))),

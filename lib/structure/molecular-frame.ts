@@ -40,14 +40,21 @@ const SAME_MATRIX = 1e-6;
 /** Two places of an idealised molecule nearer than this are one; angstrom. */
 const SAME_PLACE = 1e-4;
 
-const standards = new Map<string, MolecularGroup>();
+/** A group in standard orientation, and the rotations among which those into its other standard orientations are. */
+interface Standard {
+  readonly group: MolecularGroup;
+  readonly turns: readonly Mat3[];
+}
 
-function standardGroup(name: string): MolecularGroup {
+const standards = new Map<string, Standard>();
+
+function standardGroup(name: string): Standard {
   const known = standards.get(name);
   if (known) return known;
   const group = molecularGroup(name);
-  standards.set(name, group);
-  return group;
+  const standard = { group, turns: turnsOf(group) };
+  standards.set(name, standard);
+  return standard;
 }
 
 /**
@@ -64,12 +71,10 @@ export function fitToStandard(
   known: KnownMatrices,
 ): FittedGroup {
   const own = orthogonalGroup(matrices);
-  const group = standardGroup(own.schoenflies);
+  const { group, turns } = standardGroup(own.schoenflies);
   const { x, y, z } = own.axes;
   const first: Mat3 = [...x, ...y, ...z] as unknown as Mat3;
-  const frames = turnsOf(group)
-    .map((turn) => multiply3(turn, first))
-    .filter((F) => matches(group, matrices, F) !== null);
+  const frames = turns.map((turn) => multiply3(turn, first)).filter((F) => matches(group, matrices, F) !== null);
   const score = frames.map((F) => preference(group.schoenflies, skeleton, F));
   const best = frames.reduce((b, F, i) => {
     const d = compare(score[i]!, score[b]!);
