@@ -9,8 +9,7 @@ import { usage } from "../usage.ts";
 export const spec: CommandSpec = {
   name: "neighbours",
   operands: "FILE",
-  summary:
-    "Neighbours of every site with symmetry codes, distances, angles, coordination, shapes, bond valences, hydrogen bonds.",
+  summary: "Distances, angles and hydrogen bonds with symmetry codes and s.u.; coordination, shapes, bond valences.",
   options: {
     ...COMMON_OPTIONS,
     site: { type: "string", many: true, value: "NAME", describe: "only this element or label; may be repeated" },

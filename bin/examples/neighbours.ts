@@ -30,8 +30,8 @@ s.u.: from the cell alone, where symmetry fixes the atoms, as the file gives non
 symmetry codes: number of the operation in the file's list, then 5 plus the whole cells along a, b, c
 CN: neighbours listed; ECoN: effective number of Hoppe (1979); by Ω: sum of solid angles of the atom's domain
   over the largest (O'Keeffe 1979), all atoms counted
-valence sum: exp((R0 - d)/0.37 Å) with R0 of Brese and O'Keeffe (1991) from memory, hydrogen not counted;
-  oxidation states those whose sums come nearest
+valence sum, of bonds and first shell: exp((R0 - d)/0.37 Å) with R0 of Brese and O'Keeffe (1991) from memory,
+  hydrogen not counted; oxidation states those whose sums come nearest
 shape: continuous shape measure (Pinsky, Avnir 1998), 0 ideal, up to 100
 `,
 };

@@ -142,8 +142,14 @@ function legend(sites: readonly SiteNeighbours[]): string[] {
     "CN: neighbours listed; ECoN: effective number of Hoppe (1979); by Ω: sum of solid angles of the atom's domain over the " +
       "largest (O'Keeffe 1979), all atoms counted",
     ...(valences ? [valences] : []),
-    ...(sites.some(isPolyhedron) ? ["shape: continuous shape measure (Pinsky, Avnir 1998), 0 ideal, up to 100"] : []),
+    ...(sites.some(isPolyhedron) ? [shapeLegend(sites)] : []),
   ];
+}
+
+function shapeLegend(sites: readonly SiteNeighbours[]): string {
+  const partly = sites.some((s) => isPolyhedron(s) && s.shapeSearch === "turns");
+  const search = partly ? "; beyond 6 neighbours by a search that does not try every assignment" : "";
+  return `shape: continuous shape measure (Pinsky, Avnir 1998), 0 ideal, up to 100${search}`;
 }
 
 /** Where valences come from, and the oxidation states they are for; empty where there are none. */
@@ -157,7 +163,7 @@ function valenceLegend(sites: readonly SiteNeighbours[]): string {
     ...(chosen ? [`${stated ? "others" : "oxidation states"} those whose sums come nearest`] : []),
   ].join(", ");
   const source = "exp((R0 - d)/0.37 Å) with R0 of Brese and O'Keeffe (1991) from memory, hydrogen not counted";
-  return `valence sum: ${source}${states ? `; ${states}` : ""}`;
+  return `valence sum, of bonds and first shell: ${source}${states ? `; ${states}` : ""}`;
 }
 
 function occupancyOf({ occupancy }: SiteNeighbours): string {

@@ -84,7 +84,7 @@ function neighbourTable({ neighbours }: SiteNeighbours, all: boolean): string {
 }
 
 function shapeLine(site: SiteNeighbours): string {
-  const { kind, shapes, distortion, shapeSearch } = site;
+  const { kind, shapes, distortion } = site;
   if (!distortion || !isPolyhedron(site)) return "";
   const alike = areAlike(site);
   const named = shapes
@@ -92,7 +92,7 @@ function shapeLine(site: SiteNeighbours): string {
     .map((s) => `${s.name}${s.symbol ? ` (${s.symbol})` : ""} ${formatNumber(s.measure, 3)}`);
   const { volume, lengthDistortion, quadraticElongation, angleVariance, tau4, tau5 } = distortion;
   const words = [
-    `shape: ${named.join(", ")}${shapeSearch === "turns" ? " (not every assignment tried)" : ""}`,
+    `shape: ${named.join(", ")}`,
     ...(volume === null ? [] : [`volume ${formatNumber(volume, 3)} Å³`]),
     ...(alike ? [`length distortion (Baur) ${formatNumber(lengthDistortion, 4)}`] : []),
     ...(quadraticElongation === null || !alike
