@@ -38,7 +38,9 @@ function someMetals(sites: readonly SiteNeighbours[]): readonly SiteNeighbours[]
 
 function moreText(detailed: readonly SiteNeighbours[]): string {
   const shown =
-    detailed.length > 0 ? `distances are shown for ${detailed.length} metal sites only` : "no distances shown";
+    detailed.length > 0
+      ? `distances are shown for ${detailed.length} metal site${detailed.length === 1 ? "" : "s"} only`
+      : "no distances shown";
   return wrapText(
     `${shown}, since there are many sites; --site NAME shows those of an element or label, --all everything`,
     WIDTH,
