@@ -16,6 +16,8 @@ export {
   crystalFromBlock,
   crystalOf,
   molecularUnits,
+  type NeighboursAnswer,
+  neighboursAnswer,
   POSITION_TOLERANCE,
   type PositionsAnswer,
   parseSiteTable,
