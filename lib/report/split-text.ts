@@ -8,10 +8,13 @@ import { type Column, textTable, wrapText } from "./table.ts";
 
 const WIDTH = 110;
 
+/** More kinds of one unit are counted, not named; JSON names all. */
+const MOST_KINDS = 24;
+
 /** The whole answer of `split` for a person, below the heading. */
 export function splitText(answer: SplitAnswer, diagrams = false, species: SpeciesWriter = speciesWriter()): string {
   const write = activeWriter(answer, species);
-  const parts = [subject(answer), ...answer.units.map((u) => unitText(u, answer, write))];
+  const parts = [subject(answer), ...unitTexts(answer, write)];
   if (diagrams) parts.push(...answer.units.map((u) => correlationDiagram(u, answer.factorGroup, species)));
   if (answer.loneAtoms.length > 0) parts.push(loneText(answer, write));
   if (answer.extended.length > 0) parts.push(extendedText(answer, write));
@@ -35,12 +38,45 @@ function axesText({ freeAxes, siteAxes }: UnitAnswer): string[] {
   return parts.length > 0 ? [`axes of the labels: ${parts.join("; ")}`] : [];
 }
 
-function unitText(unit: UnitAnswer, answer: SplitAnswer, write: ActiveWriter): string {
-  const name = unit.freeName ? ` (${unit.freeName})` : "";
-  const head = `${unit.formula}${name}${averageText(unit)}, ${unit.count} in the primitive cell: ${unit.labels.join(" ")}`;
-  const fit = `atoms at most ${formatNumber(unit.deviation.largest, 3)} Å from it, ${formatNumber(unit.shapeTolerance, 2)} Å allowed`;
+/** Units that differ in nothing but their atoms stand together: the waters of a hydrate are many. */
+function unitTexts(answer: SplitAnswer, write: ActiveWriter): string[] {
+  const alike = new Map<string, UnitAnswer[]>();
+  for (const unit of answer.units) {
+    const key = [unitName(unit), String(unit.count), siteText(unit, answer), unitBody(unit, write)].join("\n");
+    const kinds = alike.get(key);
+    if (kinds) kinds.push(unit);
+    else alike.set(key, [unit]);
+  }
+  return [...alike.values()].map((kinds) => unitText(kinds, answer, write));
+}
+
+function unitText(kinds: readonly UnitAnswer[], answer: SplitAnswer, write: ActiveWriter): string {
+  const [unit] = kinds as readonly [UnitAnswer];
+  const count = kinds.length === 1 ? `${unit.count}` : `${kinds.length} kinds, ${unit.count} of each`;
+  const more = kinds.length > MOST_KINDS ? `; and ${kinds.length - MOST_KINDS} more` : "";
+  const labels =
+    kinds
+      .slice(0, MOST_KINDS)
+      .map((k) => k.labels.join(" "))
+      .join("; ") + more;
+  const rows = kinds.length === 1 ? "" : "; the rows are for one kind";
+  const head = `${unitName(unit)}, ${count} in the primitive cell${rows}: ${labels}`;
+  const largest = Math.max(...kinds.map((k) => k.deviation.largest));
+  const fit = `atoms at most ${formatNumber(largest, 3)} Å from it, ${formatNumber(unit.shapeTolerance, 2)} Å allowed`;
+  const shape = wrapText(`free unit ${unit.pointGroup} (${fit}); ${siteText(unit, answer)}`, WIDTH - 2, "    ");
+  return [wrapText(head, WIDTH, "    "), `  ${shape}`, unitBody(unit, write)].join("\n");
+}
+
+function unitName(unit: UnitAnswer): string {
+  return `${unit.formula}${unit.freeName ? ` (${unit.freeName})` : ""}${averageText(unit)}`;
+}
+
+function siteText({ siteSymmetry, schoenflies }: UnitAnswer, { factorGroup }: SplitAnswer): string {
+  return `site ${siteSymmetry} (${schoenflies}); factor group ${factorGroup.schoenflies}`;
+}
+
+function unitBody(unit: UnitAnswer, write: ActiveWriter): string {
   const lines = [
-    `free unit ${unit.pointGroup} (${fit}); site ${unit.siteSymmetry} (${unit.schoenflies}); factor group ${answer.factorGroup.schoenflies}`,
     ...axesText(unit),
     ...(unit.kinds.length > 0 ? [unitContentText(unit, write)] : []),
     ...(unit.freeSource ? [`wavenumbers of the free unit: ${unit.freeSource}`] : []),
@@ -60,8 +96,8 @@ function unitText(unit: UnitAnswer, answer: SplitAnswer, write: ActiveWriter): s
     ...librationRows(unit, write),
     motionRow("translations", write.sum(unit.translations.free), unit.translations, write),
   ];
-  const under = lines.map((l) => `  ${wrapText(l, WIDTH - 2, "    ")}`);
-  return [wrapText(head, WIDTH, "    "), ...under, textTable(columns, rows)].join("\n");
+  const above = lines.map((l) => `  ${wrapText(l, WIDTH - 2, "    ")}`);
+  return [...above, textTable(columns, rows)].join("\n");
 }
 
 /** A shape that no unit has at a time must not pass for one. */
