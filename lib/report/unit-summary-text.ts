@@ -15,17 +15,20 @@ export function unitSummaryText(summaries: UnitSummaries, write: SpeciesWriter =
     { heading: "motion" },
     { heading: "in the factor group" },
   ];
-  const rows = alike(units).flatMap(({ unit: u, kinds }) => {
-    const count = kinds === 1 ? String(u.count) : `${kinds} x ${u.count}`;
-    const first = [u.formula, count, u.pointGroup, `${u.siteSymmetry} (${u.schoenflies})`];
+  const groups = alike(units);
+  const rows = groups.flatMap((group) => {
+    const u = group.unit;
+    const first = [u.formula, countText(group), u.pointGroup, `${u.siteSymmetry} (${u.schoenflies})`];
     const motions = motionsOf(u);
     return motions.map(([name, counts], k) => [...(k === 0 ? first : ["", "", "", ""]), name, write.sum(counts)]);
   });
   const single = loneAtoms.map((a) => [a.label, String(a.count), "", a.siteSymmetry, "T", write.sum(a.factorGroup)]);
   const endless = extended.map((e) => [e.formula, String(e.count), e.kind, "", "all", write.sum(e.factorGroup)]);
-  const several = rows.find(([, count]) => count!.includes("x"))?.[1]!.split(" x ");
+  const several = groups.find(({ kinds }) => kinds > 1);
   const repeated = several
-    ? [`count ${several.join(" x ")}: ${several[0]} kinds, ${several[1]} of each; the sums are those of one kind`]
+    ? [
+        `count ${countText(several)}: ${several.kinds} kinds, ${several.unit.count} of each; the sums are those of one kind`,
+      ]
     : [];
   const notes = [...repeated, ...unitNotes].map((n) => wrapText(`- ${n}`, WIDTH, "  "));
   return [
@@ -37,6 +40,16 @@ export function unitSummaryText(summaries: UnitSummaries, write: SpeciesWriter =
 
 type UnitSummary = UnitSummaries["units"][number];
 
+/** A unit, and the number of its kinds that differ in nothing but their atoms. */
+interface AlikeUnits {
+  readonly unit: UnitSummary;
+  readonly kinds: number;
+}
+
+function countText({ unit, kinds }: AlikeUnits): string {
+  return kinds === 1 ? String(unit.count) : `${kinds} x ${unit.count}`;
+}
+
 function motionsOf(u: UnitSummary): readonly (readonly [string, SpeciesCounts])[] {
   return [
     ["internal", u.internal],
@@ -46,13 +59,12 @@ function motionsOf(u: UnitSummary): readonly (readonly [string, SpeciesCounts])[
 }
 
 /** Units of one formula, site and splitting, with the number of such kinds. */
-function alike(units: readonly UnitSummary[]): { unit: UnitSummary; kinds: number }[] {
-  const found = new Map<string, { unit: UnitSummary; kinds: number }>();
+function alike(units: readonly UnitSummary[]): AlikeUnits[] {
+  const found = new Map<string, AlikeUnits>();
   for (const unit of units) {
     const key = JSON.stringify([unit.formula, unit.count, unit.pointGroup, unit.siteSymmetry, motionsOf(unit)]);
     const known = found.get(key);
-    if (known) known.kinds++;
-    else found.set(key, { unit, kinds: 1 });
+    found.set(key, { unit: known?.unit ?? unit, kinds: (known?.kinds ?? 0) + 1 });
   }
   return [...found.values()];
 }

@@ -1,6 +1,6 @@
 import { describe, expect, it } from "vitest";
-import { splitText } from "../../lib/report/index.ts";
-import { splitAnswer } from "../../lib/vibrations/index.ts";
+import { splitText, unitSummaryText } from "../../lib/report/index.ts";
+import { splitAnswer, unitSummaries } from "../../lib/vibrations/index.ts";
 import { fixture } from "../support/crystals.ts";
 
 describe("units that differ in nothing but their atoms", () => {
@@ -19,5 +19,13 @@ describe("units that differ in nothing but their atoms", () => {
     const heads = splitText(answer).match(/^\w+ .*in the primitive cell.*$/gm)!;
     expect(answer.units.length).toBeGreaterThan(1);
     expect(heads).toHaveLength(kinds.size);
+  });
+});
+
+describe("the summary of units with the modes", () => {
+  it("counts kinds that are alike", () => {
+    const text = unitSummaryText(unitSummaries(splitAnswer(fixture("epsomite"))));
+    expect(text).toMatch(/^H2O +7 x 4 +C2v/m);
+    expect(text).toContain("- count 7 x 4: 7 kinds, 4 of each; the sums are those of one kind");
   });
 });
