@@ -65,27 +65,25 @@ export function measureOf(
 const knownOrders = new WeakMap<IdealShape, readonly (readonly number[])[]>();
 const knownRotations = new WeakMap<IdealShape, readonly (readonly number[])[]>();
 
-/** One permutation of the corners of each class that the rotations of the ideal shape make. */
+/** One permutation of the corners of each class that the rotations of the ideal shape make: the first by order. */
 function allOrders(shape: IdealShape): readonly (readonly number[])[] {
   const known = knownOrders.get(shape);
   if (known) return known;
-  const rotations = rotationsOf(shape);
-  const seen = new Set<string>();
   const orders: number[][] = [];
-  for (const order of permutations(shape.corners.length)) {
-    if (seen.has(order.join())) continue;
-    orders.push(order);
-    for (const r of rotations) seen.add(order.map((k) => r[k]!).join());
-  }
+  const order: number[] = [];
+  // rotations that keep the corners chosen so far tell which of the others are equivalent
+  const extend = (keeping: readonly (readonly number[])[]) => {
+    if (order.length === shape.corners.length) orders.push([...order]);
+    for (let k = 0; k < shape.corners.length; k++) {
+      if (order.includes(k) || keeping.some((r) => r[k]! < k)) continue;
+      order.push(k);
+      extend(keeping.length > 1 ? keeping.filter((r) => r[k] === k) : keeping);
+      order.pop();
+    }
+  };
+  extend(rotationsOf(shape));
   knownOrders.set(shape, orders);
   return orders;
-}
-
-function permutations(n: number): number[][] {
-  if (n === 0) return [[]];
-  return permutations(n - 1).flatMap((rest) =>
-    Array.from({ length: n }, (_, at) => [...rest.slice(0, at), n - 1, ...rest.slice(at)]),
-  );
 }
 
 /** Rotations of an ideal shape onto itself, as permutations of its corners. */
