@@ -1,6 +1,6 @@
 import type { IntMat3, IntVec3 } from "../algebra/index.ts";
 import { type CifBlock, cellOf, findLoop } from "../cif/index.ts";
-import { formatOperation, operationKey, parseTriplet, reduce } from "../symmetry/index.ts";
+import { formatOperation, operationKey, reduce, writtenTranslation } from "../symmetry/index.ts";
 import type { Vec3 } from "./cell.ts";
 import type { Crystal } from "./crystal.ts";
 import { type DeclaredOperation, declaredSymmetry } from "./declared-symmetry.ts";
@@ -32,7 +32,8 @@ export function writtenOperations(
 }
 
 function constantsOf(text: string): Vec3 {
-  return parseTriplet(text, "xyz").map(({ constant: { n, d } }) => n / d) as unknown as Vec3;
+  const { n, d } = writtenTranslation(text);
+  return [n[0] / d, n[1] / d, n[2] / d];
 }
 
 /** What the numbers in symmetry codes mean. */

@@ -41,7 +41,7 @@ export {
   sameOperation,
   transformPoint,
 } from "./operation.ts";
-export { formatOperation, parseOperation } from "./operation-text.ts";
+export { formatOperation, parseOperation, writtenTranslation } from "./operation-text.ts";
 export {
   formatPoint,
   parsePoint,

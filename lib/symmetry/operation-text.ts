@@ -1,8 +1,8 @@
-import { component, determinant, type IntMat3, modOne, vectorOf } from "../algebra/index.ts";
+import { component, determinant, type IntMat3, modOne, type RatVec3, vectorOf } from "../algebra/index.ts";
 import { InputProblem } from "../problem.ts";
 import { type AffineExpression, formatExpression, keepExact, parseTriplet } from "./affine-text.ts";
 import type { Operation } from "./operation.ts";
-import { plainOperation } from "./plain-operation.ts";
+import { plainOperation, plainTriplet } from "./plain-operation.ts";
 
 /**
  * Reads a symmetry operation in Jones-faithful notation, however written: `-X, 1/2+Y, z-0.5`, `x-y`, `.3333+z`.
@@ -22,6 +22,14 @@ export function parseOperation(text: string): Operation {
   if (Math.abs(det) !== 1) throw impossible(text, `its rotation part has determinant ${det}, not 1 or -1`);
   const constants = rows.map((row) => row.constant);
   return { W, w: keepExact(text, () => modOne(vectorOf(constants[0]!, constants[1]!, constants[2]!))) };
+}
+
+/** The translation of an operation as its text has it, not reduced. @throws InputProblem `triplet-unreadable` */
+export function writtenTranslation(text: string): RatVec3 {
+  const plain = plainTriplet(text);
+  if (plain) return plain.w;
+  const [x, y, z] = parseTriplet(text, "xyz");
+  return vectorOf(x.constant, y.constant, z.constant);
 }
 
 function impossible(text: string, why: string): InputProblem {
