@@ -1,6 +1,6 @@
 import { modesText, speciesWriter } from "../../lib/report/index.ts";
-import { statedFormula } from "../../lib/structure/index.ts";
-import { type ModesAnswer, modesAnswer, structureWarnings } from "../../lib/vibrations/index.ts";
+import { type Crystal, type Formula, statedFormula } from "../../lib/structure/index.ts";
+import { isOrdered, type ModesAnswer, modesAnswer, orderedWarnings } from "../../lib/vibrations/index.ts";
 import { COMMON_OPTIONS, type CommandSpec, POLYHEDRON_OPTION, SPECIES_OPTIONS } from "../arguments.ts";
 import { answerQuestion, askCrystal, type Question, withNotes } from "../ask.ts";
 import { EXAMPLE } from "../examples/modes.ts";
@@ -23,7 +23,7 @@ export async function run(words: readonly string[]): Promise<number> {
   const { args, crystal, block } = asked;
   const formula = statedFormula(block);
   const answer = modesAnswer(crystal, formula);
-  const question = withNotes(asked, structureWarnings(crystal, formula));
+  const question = withNotes(asked, await warnings(crystal, formula));
   const write = speciesWriter(args.flag("f") ? "F" : "T");
   if (!args.flag("units") && args.texts("polyhedron").length === 0) {
     const more =
@@ -34,6 +34,13 @@ export async function run(words: readonly string[]): Promise<number> {
   const parts = unitParts(question, answer, write);
   const text = () => [modesText(answer, write), ...parts.text()].join("\n\n");
   return answerQuestion(question, { ...(await forJson(question, answer)), ...parts.answer }, text);
+}
+
+/** Alternatives and missed symmetry are searched for where there may be any; the search is loaded for that only. */
+async function warnings(crystal: Crystal, formula: Formula | null): Promise<string[]> {
+  if (isOrdered(crystal)) return orderedWarnings(crystal, formula);
+  const { structureWarnings } = await import("./split.ts");
+  return structureWarnings(crystal, formula);
 }
 
 /** Raman tensors are in the document, not in the text, and are loaded for it only. */

@@ -22,6 +22,9 @@ import { askedPolyhedra } from "../polyhedra.ts";
 import { UsageProblem } from "../problems.ts";
 import { usage } from "../usage.ts";
 
+/** For `modes`, which loads it where it is needed. */
+export { structureWarnings };
+
 export const spec: CommandSpec = {
   name: "split",
   operands: "FILE",

@@ -40,6 +40,7 @@ export {
 export { type TensorIrrep, type TensorModes, withRamanTensors } from "./mode-tensors.ts";
 export { type IrrepAnswer, type ModesAnswer, modesAnswer, type SiteModesAnswer } from "./modes-answer.ts";
 export { opticPatterns } from "./optic-patterns.ts";
+export { isOrdered, orderedWarnings } from "./ordered-warnings.ts";
 export {
   type AcousticAnswer,
   type PatternAnswer,
