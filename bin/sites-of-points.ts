@@ -1,6 +1,7 @@
 import { InputProblem } from "../lib/problem.ts";
 import { groupName, pointsText, wrapText } from "../lib/report/index.ts";
 import {
+  cellInOrder,
   checkedTolerance,
   completedCell,
   type Metric,
@@ -64,10 +65,11 @@ function settledBy(settings: NamedGroup["settings"], args: Arguments) {
     if (tolerance !== null) throw new UsageProblem("--tolerance is a length, which needs --cell here");
     return { setting: settings[0], near: null };
   }
-  const { values, spans } = parseCellParameters(written);
+  const read = parseCellParameters(written);
   let first: InputProblem | null = null;
   for (const setting of settings) {
     try {
+      const { values, spans } = cellInOrder(read, setting.group, setting.name);
       const metric = completedCell(values, setting.group, { groupName: setting.name, spans });
       return { setting, near: { metric, tolerance: checkedTolerance(tolerance ?? POSITION_TOLERANCE) } };
     } catch (e) {

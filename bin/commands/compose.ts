@@ -29,7 +29,12 @@ export const spec: CommandSpec = {
   summary: "A structure from the table of a paper: space group, cell, Wyckoff sites; written as CIF.",
   options: {
     group: { type: "string", value: "GROUP", describe: "in place of a file: number, Hermann-Mauguin or Hall symbol" },
-    cell: { type: "string", value: "CELL", describe: 'the parameters that symmetry leaves free, "a=4.99 c=17.06"' },
+    cell: {
+      type: "string",
+      value: "CELL",
+      describe:
+        'the parameters that symmetry leaves free, "a=4.99 c=17.06", or "4.99 17.06" in the order a b c alpha beta gamma',
+    },
     site: {
       type: "string",
       many: true,

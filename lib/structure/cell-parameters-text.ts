@@ -13,6 +13,14 @@ export type CellParameters = Readonly<Partial<Record<CellParameter, number>>>;
 export interface WrittenCell {
   readonly values: CellParameters;
   readonly spans: Readonly<Partial<Record<CellParameter, Span>>>;
+  /** Fewer than six numbers without names: `cellInOrder` names them once the group is known. */
+  readonly inOrder?: readonly PlainNumber[];
+}
+
+/** A number without a name, with its place in the text. */
+export interface PlainNumber {
+  readonly value: number;
+  readonly span: Span;
 }
 
 interface Entry {
@@ -36,9 +44,9 @@ const NAMES: Readonly<Record<string, CellParameter>> = {
   "\u03b3": "gamma",
 };
 
-let built: P.Parser<Entry[]> | null = null;
+let built: P.Parser<Entry[] | PlainNumber[]> | null = null;
 
-function grammar(): P.Parser<Entry[]> {
+function grammar(): P.Parser<Entry[] | PlainNumber[]> {
   if (built) return built;
   const blank = P.regexp(/\s*/);
   const separator = P.regexp(/\s*[,;]\s*|\s*/);
@@ -67,27 +75,31 @@ function grammar(): P.Parser<Entry[]> {
     span: { start: from.offset, end: to.offset },
   }))
     .skip(separator)
-    .times(6)
-    .map((list) => list.map((e, i) => ({ ...e, name: CELL_PARAMETERS[i]! })));
-  built = blank.then(P.alt(entry.skip(separator).atLeast(1), plain)).skip(P.eof);
+    .times(1, 6)
+    .map((list) => (list.length < 6 ? list : list.map((e, i) => ({ ...e, name: CELL_PARAMETERS[i]! }))));
+  const entries: P.Parser<Entry[] | PlainNumber[]> = entry.skip(separator).atLeast(1);
+  built = blank.then(entries.or(plain)).skip(P.eof);
   return built;
 }
 
 /**
  * Reads the parameters of a cell: `a=4.99 c=17.06` with those that symmetry leaves free, or all six numbers in the order
- * a b c alpha beta gamma. S.u. are read over.
+ * a b c alpha beta gamma; fewer numbers wait for the group (`cellInOrder`). S.u. are read over.
  * @throws InputProblem `cell-unreadable` with the span of the first character that does not fit, or of a name given twice
  */
 export function parseCellParameters(text: string): WrittenCell {
   const result = grammar().parse(text);
   if (!result.status) throw unreadable(text, result.index.offset);
-  const twice = result.value.find((e, i) => result.value.findIndex((f) => f.name === e.name) < i);
+  const read: readonly (Entry | PlainNumber)[] = result.value;
+  const entries = read.filter((e): e is Entry => "name" in e);
+  if (entries.length === 0) return { values: {}, spans: {}, inOrder: read };
+  const twice = entries.find((e, i) => entries.findIndex((f) => f.name === e.name) < i);
   if (twice) {
     throw new InputProblem("cell-unreadable", `${twice.name} is given twice`, twice.span, "give each parameter once");
   }
   return {
-    values: Object.fromEntries(result.value.map((e) => [e.name, e.value])),
-    spans: Object.fromEntries(result.value.map((e) => [e.name, e.span])),
+    values: Object.fromEntries(entries.map((e) => [e.name, e.value])),
+    spans: Object.fromEntries(entries.map((e) => [e.name, e.span])),
   };
 }
 

@@ -7,7 +7,7 @@ import {
   WRITTEN_METRIC_TOLERANCE,
 } from "../symmetry/index.ts";
 import { type Cell, type Metric, metricOf } from "./cell.ts";
-import { CELL_PARAMETERS, type CellParameter, type CellParameters } from "./cell-parameters-text.ts";
+import { CELL_PARAMETERS, type CellParameter, type CellParameters, type WrittenCell } from "./cell-parameters-text.ts";
 import { LinearFacts } from "./linear-facts.ts";
 
 /** What problems with a cell point at. */
@@ -55,6 +55,28 @@ export function completedCell(given: CellParameters, group: SpaceGroup, origin: 
   const missing = facts.missing().filter((p) => given[p] === undefined);
   if (missing.length > 0) throw incomplete(missing, given, origin);
   return metricOf(Object.fromEntries(CELL_PARAMETERS.map((p) => [p, facts.known(p)!])) as unknown as Cell);
+}
+
+/**
+ * Numbers without names are the parameters that the group leaves free, in the order a b c alpha beta gamma.
+ * @throws InputProblem `cell-incomplete` where they are not as many as those
+ */
+export function cellInOrder(written: WrittenCell, group: SpaceGroup, groupName: string): WrittenCell {
+  const { inOrder } = written;
+  if (!inOrder) return written;
+  const free = new MetricFacts(group).missing();
+  if (free.length !== inOrder.length) {
+    throw new InputProblem(
+      "cell-incomplete",
+      `${inOrder.length} of the numbers of a cell, but ${groupName} leaves ${free.length} free: ${free.join(", ")}`,
+      { start: inOrder[0]!.span.start, end: inOrder.at(-1)!.span.end },
+      `give ${free.map((p) => `${p}=...`).join(" ")}, or six numbers a b c alpha beta gamma`,
+    );
+  }
+  return {
+    values: Object.fromEntries(free.map((p, i) => [p, inOrder[i]!.value])),
+    spans: Object.fromEntries(free.map((p, i) => [p, inOrder[i]!.span])),
+  };
 }
 
 /** What is known of a metric tensor that the rotations of a group keep. */

@@ -1,7 +1,7 @@
 import { InputProblem } from "../problem.ts";
 import { identifyGroup, type NamedGroup, type NamedSetting, namedGroup, positionsInCell } from "../symmetry/index.ts";
 import type { AtomSite } from "./atom-site.ts";
-import { completedCell } from "./completed-cell.ts";
+import { cellInOrder, completedCell } from "./completed-cell.ts";
 import { type Crystal, type CrystalOptions, checkedTolerance, crystalOf, POSITION_TOLERANCE } from "./crystal.ts";
 import { readLabel, readTypeSymbol } from "./elements.ts";
 import { FreeLabels } from "./free-labels.ts";
@@ -76,7 +76,8 @@ function groupOf({ group }: SiteTable): NamedGroup {
 
 function composedIn(setting: NamedSetting, table: SiteTable, tolerance: number): Crystal {
   const { group } = setting;
-  const metric = completedCell(table.cell.values, group, { groupName: setting.name, spans: table.cell.spans });
+  const { values, spans } = cellInOrder(table.cell, group, setting.name);
+  const metric = completedCell(values, group, { groupName: setting.name, spans });
   const identified = identifyGroup(group);
   const at: PlacingGroup = { identified, positions: positionsInCell(identified), metric, tolerance };
   const labels = new FreeLabels([]);

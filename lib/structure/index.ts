@@ -66,7 +66,7 @@ export {
   ISOTYPIC_STRAIN,
   OCCUPANCY_DIFFERENCE,
 } from "./comparison-limits.ts";
-export { type CellOrigin, completedCell } from "./completed-cell.ts";
+export { type CellOrigin, cellInOrder, completedCell } from "./completed-cell.ts";
 export { type ComposeAnswer, type ComposeResult, composeAnswer, type HigherSymmetry } from "./compose-answer.ts";
 export { type ComposedContents, composedContents } from "./composed-contents.ts";
 export { composedCrystal } from "./composed-crystal.ts";

@@ -104,7 +104,11 @@ function readSite(line: Line): TableSite {
 }
 
 function readCell(line: Line): WrittenCell {
-  const { values, spans } = placedIn(line, () => parseCellParameters(line.text));
+  const { values, spans, inOrder } = placedIn(line, () => parseCellParameters(line.text));
+  if (inOrder) {
+    const moved = inOrder.map(({ value, span }) => ({ value, span: movedBy(line.start, span) }));
+    return { values, spans, inOrder: moved };
+  }
   const moved = Object.entries(spans).map(([p, span]) => [p, movedBy(line.start, span)]);
   return { values, spans: Object.fromEntries(moved) };
 }
@@ -159,7 +163,7 @@ export function formatSiteTable({ name, group, cell, sites }: SiteTable): string
   const lines = [
     ...(name === "" ? [] : [`name ${name}`]),
     `group ${group.text}`,
-    `cell ${formatCellParameters(cell.values)}`,
+    `cell ${cell.inOrder?.map((e) => e.value).join(" ") ?? formatCellParameters(cell.values)}`,
     ...sites.map(formatSite),
   ];
   return `${lines.join("\n")}\n`;

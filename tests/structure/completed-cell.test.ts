@@ -3,6 +3,7 @@ import { describe, expect, it, test } from "vitest";
 import {
   type CellParameter,
   type CellParameters,
+  cellInOrder,
   cellOfMetric,
   completedCell,
   formatCellParameters,
@@ -46,13 +47,34 @@ describe("the text of a cell", () => {
   it.each([
     ["a=4.99 d=17", 7],
     ["a=x", 2],
-    ["5 6 7", 5],
+    ["5 6 x", 4],
+    ["5 6 7 90 100 90 1", 16],
     ["", 0],
     ["a=-5", 2],
     ["a=5 a=6", 4],
   ])("%j is refused at character %i", (text, start) => {
     const { code, span } = problemOf(() => parseCellParameters(text));
     expect([code, span!.start]).toEqual(["cell-unreadable", start]);
+  });
+});
+
+describe("numbers without names", () => {
+  const inOrder = (text: string, name: string) => cellInOrder(parseCellParameters(text), groupOf(name), name);
+
+  it.each([
+    ["5.64", "F m -3 m", { a: 5.64 }],
+    ["4.99 17.06", "R -3 c:H", { a: 4.99, c: 17.06 }],
+    ["6.36, 46.1", "R -3 c:R", { a: 6.36, alpha: 46.1 }],
+    ["7.5 5.4 9.1", "P b c a", { a: 7.5, b: 5.4, c: 9.1 }],
+    ["5.68 15.2 6.5 118.4", "C 2/c", { a: 5.68, b: 15.2, c: 6.5, beta: 118.4 }],
+  ])("%j in %s are the free parameters in order", (text, name, values) => {
+    expect(inOrder(text, name).values).toEqual(values);
+  });
+
+  it("are refused where they are not as many as the group leaves free", () => {
+    const { code, span, message } = problemOf(() => inOrder("5.6 5.6", "F m -3 m"));
+    expect([code, span]).toEqual(["cell-incomplete", { start: 0, end: 7 }]);
+    expect(message).toContain("leaves 1 free: a");
   });
 });
 
