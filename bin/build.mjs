@@ -41,7 +41,9 @@ try {
   compileLibrary();
   await writeSchema();
   await bundleCommandLine();
-  for (const name of readdirSync(join(fresh, "bin", "commands"))) await keepCompiledCode(name);
+  const commands = readdirSync(join(fresh, "bin", "commands"));
+  for (const name of commands) await keepCompiledCode(name);
+  for (const name of commands) asFunction(join(fresh, "bin", "commands", name));
   if (existsSync(target)) renameSync(target, old); // so that dist/ is missing for a moment only
   renameSync(fresh, target);
 } catch (error) {
@@ -134,7 +136,7 @@ async function bundleCommandLine() {
  */
 async function keepCompiledCode(name) {
   const file = join(fresh, "bin", "commands", name);
-  const script = new Script(Module.wrap(readFileSync(file, "utf8")), { filename: file });
+  const script = new Script(Module.wrap(readFileSync(file, "latin1")), { filename: file });
   const module = { exports: {} };
   script.runInThisContext()(module.exports, createRequire(file), module, file, dirname(file));
   const words = wordsOf(module.exports.spec.example.line).slice(2);
@@ -150,6 +152,11 @@ async function keepCompiledCode(name) {
     process.chdir(from);
     rmSync(unseen, { force: true });
   }
+}
+
+/** Writes a bundle as the function that Node makes of a module, so that nothing has to be joined when it is loaded. */
+function asFunction(file) {
+  writeFileSync(file, Module.wrap(readFileSync(file, "latin1")));
 }
 
 /** Words of a command line as a shell splits them; quotes may hold blanks. */

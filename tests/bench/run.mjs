@@ -1,8 +1,12 @@
-/** `npm run bench`: bundles the benches named, or all of them, into one temporary file and runs it. */
+/**
+ * `npm run bench`: bundles the benches named, or all of them, into one temporary file and runs each in a process of its
+ * own, so that none finds the memory and the compiled code of another.
+ */
+import { spawnSync } from "node:child_process";
 import { mkdtempSync, readdirSync, rmSync } from "node:fs";
-import { tmpdir } from "node:os";
+import { cpus, tmpdir } from "node:os";
 import { join } from "node:path";
-import { fileURLToPath, pathToFileURL } from "node:url";
+import { fileURLToPath } from "node:url";
 import { build } from "esbuild";
 
 const here = fileURLToPath(new URL(".", import.meta.url));
@@ -22,7 +26,7 @@ if (unknown.length > 0) {
     const outfile = join(folder, "bench.mjs");
     const imports = chosen.map((name, i) => `import { measure as m${i} } from "./${name}.ts";`);
     const list = chosen.map((name, i) => `[${JSON.stringify(name)}, m${i}]`);
-    const contents = `import { report } from "./run.ts";\n${imports.join("\n")}\nreport([${list.join(", ")}]);\n`;
+    const contents = `import { report } from "./run.ts";\n${imports.join("\n")}\nreport([${list.join(", ")}], process.argv[2]);\n`;
     await build({
       stdin: { contents, resolveDir: here, loader: "ts" },
       outfile,
@@ -32,7 +36,12 @@ if (unknown.length > 0) {
       target: "node20",
       logLevel: "warning",
     });
-    await import(pathToFileURL(outfile).href);
+    const processors = cpus();
+    console.log(`Node ${process.versions.node}, ${processors.length} x ${processors[0]?.model ?? "unknown processor"}`);
+    for (const name of chosen) {
+      const { status } = spawnSync(process.execPath, [outfile, name], { stdio: "inherit" });
+      if (status !== 0) process.exitCode = 1;
+    }
   } finally {
     rmSync(folder, { recursive: true, force: true });
   }

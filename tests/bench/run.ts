@@ -1,13 +1,10 @@
-import { cpus } from "node:os";
 import { consumed, type Measurement } from "./ratio.ts";
 
 type Bench = readonly [name: string, measure: () => readonly Measurement[]];
 
-/** Runs the benches one after the other and prints each result as it is there. */
-export function report(benches: readonly Bench[]): void {
-  const processor = cpus();
-  console.log(`Node ${process.versions.node}, ${processor.length} x ${processor[0]?.model ?? "unknown processor"}`);
-  for (const [name, measure] of benches) {
+/** Runs the bench of a name and prints its results. */
+export function report(benches: readonly Bench[], wanted: string | undefined): void {
+  for (const [name, measure] of benches.filter(([n]) => n === wanted)) {
     console.log(`\n${name}`);
     for (const row of measure()) console.log(line(row));
   }

@@ -1,21 +1,19 @@
 import { mkdtempSync, readFileSync, rmSync } from "node:fs";
-import { createRequire } from "node:module";
 import { tmpdir } from "node:os";
 import { join } from "node:path";
 import { fileURLToPath } from "node:url";
 import { conclusionOf } from "../../bin/conclusion.ts";
-import type { Command } from "../../bin/load-command.ts";
+import { loadCommand } from "../../bin/load-command.ts";
 import type { Outcome } from "./run-command.ts";
 
 const BUILT = fileURLToPath(new URL("../../dist/bin/commands", import.meta.url));
-const require = createRequire(import.meta.url);
 
 /** Runs commands in this process from their bundles, which are faster than sources under test. */
 export class BuiltCommands {
   readonly #folder = mkdtempSync(join(tmpdir(), "sitefold-built-"));
 
   async run(name: string, words: readonly string[]): Promise<Outcome> {
-    const command: Command = require(join(BUILT, `${name}.js`));
+    const command = loadCommand(name, BUILT);
     const answer = join(this.#folder, "answer");
     const err: string[] = [];
     const write = process.stderr.write;
