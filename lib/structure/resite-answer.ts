@@ -21,6 +21,7 @@ import { type CellNumbers, cellNumbers } from "./reduce-answer.ts";
 import { type SiteAnswer, sitesAnswer } from "./sites-answer.ts";
 import { type StandardisationAnswer, standardisationAnswer } from "./standardisation-answer.ts";
 import { standardisedCrystal } from "./standardised-crystal.ts";
+import { UNITS_IN_CELL, unitsInCell } from "./units-in-cell.ts";
 
 /** The setting wanted: that of International Tables, one by name or change of axes, by Hall symbol, the standard one. */
 export type ResiteRequest =
@@ -71,7 +72,7 @@ export interface Resited {
 }
 
 /**
- * A crystal in another setting. S.u. and displacement parameters go with the atoms; those of the cell are not known here.
+ * A crystal in another setting, its units in the new cell (`unitsInCell`). S.u. and displacement parameters go with the atoms; those of the cell are not known here.
  * @throws InputProblem `setting-unknown`, `hall-unreadable`, and as `changeOfCell`
  * @example
  * ```ts
@@ -85,8 +86,9 @@ export interface Resited {
 export function resited(crystal: Crystal, request: ResiteRequest): Resited {
   if (request.kind === "standardised") return standardised(crystal, request.eitherHand === true);
   const { transformation, note } = wanted(crystal, request);
-  const { crystal: changed, rotations } = changeOfCell(crystal, transformation);
-  const notes = note === null ? [] : [note];
+  const { crystal: carried, rotations } = changeOfCell(crystal, transformation);
+  const changed = unitsInCell(carried);
+  const notes = note === null ? [UNITS_IN_CELL] : [note, UNITS_IN_CELL];
   if (rotations.after < rotations.before) {
     notes.push(
       `the new cell holds ${rotations.after} of the ${rotations.before} rotation parts of the space group; the others do not keep its shape`,

@@ -6,6 +6,7 @@ import { compareStructures } from "./comparison-answer.ts";
 import type { ComparisonOptions } from "./comparison-limits.ts";
 import { type Crystal, crystalOf } from "./crystal.ts";
 import { labelsOf, type Resited, resiteAnswer, uncertaintyNotes } from "./resite-answer.ts";
+import { UNITS_IN_CELL, unitsInCell } from "./units-in-cell.ts";
 
 /**
  * A structure compared with another, and where the two agree, written on the axes and origin of the other.
@@ -33,7 +34,8 @@ export function resitedOnto(crystal: Crystal, other: Crystal, options: Compariso
   const { origin, shift } = match.exact;
   try {
     const change: Transformation = { P: match.P, p: origin };
-    const { crystal: changed, rotations } = changeOfCell(shifted(crystal, shift), change);
+    const { crystal: carried, rotations } = changeOfCell(shifted(crystal, shift), change);
+    const changed = unitsInCell(carried);
     const labels = labelsOf(crystal, changed);
     const notes =
       rotations.after < rotations.before
@@ -41,7 +43,7 @@ export function resitedOnto(crystal: Crystal, other: Crystal, options: Compariso
             `on the axes of the second file ${rotations.after} of the ${rotations.before} rotation parts of its space group are left`,
           ]
         : [];
-    notes.push(...uncertaintyNotes(crystal, change));
+    notes.push(UNITS_IN_CELL, ...uncertaintyNotes(crystal, change));
     return {
       crystal: changed,
       answer: { ...resiteAnswer(crystal, changed, change, shift, labels), comparison },
