@@ -20,7 +20,8 @@ export const spec: CommandSpec = {
     cell: {
       type: "string",
       value: "CELL",
-      describe: 'with --group: the cell, "a=4.99 c=17.06", so that nearness can be judged; exact without it',
+      describe:
+        'with --group: the cell, "a=4.99 c=17.06" or "4.99 17.06", so that nearness can be judged; exact without it',
     },
     orbit: { type: "boolean", describe: "with --group: list all equivalent positions" },
   },
