@@ -118,13 +118,13 @@ function withOptions(words: readonly string[], spec: CommandSpec): Parsed {
   return parsed;
 }
 
-/** Values may begin with a minus, `--at -0.1,0,0`, which the parser would take for options. */
+/** Values may begin with a minus, `--at -0.1,0,0`, or be one, `--to -`, which the parser would take for options. */
 function withValues(words: readonly string[], spec: CommandSpec): string[] {
   const joined: string[] = [];
   for (let i = 0; i < words.length; i++) {
     const [word, next] = [words[i]!, words[i + 1]];
     const takesValue = word.startsWith("--") && (spec.options[word.slice(2)]?.type ?? "boolean") !== "boolean";
-    if (takesValue && next !== undefined && /^-[^-]/.test(next) && !isOption(next, spec)) {
+    if (takesValue && next !== undefined && /^-([^-]|$)/.test(next) && !isOption(next, spec)) {
       joined.push(`${word}=${next}`);
       i++;
     } else joined.push(word);

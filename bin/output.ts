@@ -24,7 +24,7 @@ function refuseNonFinite(key: string, value: unknown): unknown {
 }
 
 /**
- * Writes an answer to the terminal, or to --output: first beside it, then moved into place, so that a failure leaves
+ * Writes an answer to the terminal (`--output -` too), or to --output: first beside it, then moved into place, so that a failure leaves
  * an older file as it was.
  * @param input a file that was read and is no operand, if any
  * @throws UsageProblem if that would overwrite what was read
@@ -32,7 +32,7 @@ function refuseNonFinite(key: string, value: unknown): unknown {
 export async function deliver(text: string, args: Arguments, input: string | null): Promise<void> {
   const target = args.text("output");
   const whole = text.endsWith("\n") ? text : `${text}\n`;
-  if (target === null) {
+  if (target === null || target === "-") {
     printOut(whole);
     return;
   }

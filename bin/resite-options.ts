@@ -26,7 +26,11 @@ export const RESITE: CommandSpec = {
       describe:
         "with --standardised: of a structure without improper operations take the mirror image if it comes first",
     },
-    to: { type: "string", value: "FILE", describe: "compare with FILE, and write the structure on its axes" },
+    to: {
+      type: "string",
+      value: "FILE",
+      describe: "compare with FILE (- for standard input), and write the structure on its axes",
+    },
     "to-block": { type: "string", value: "NAME", describe: "data block of that file" },
     displacement: {
       type: "number",

@@ -27,7 +27,16 @@ describe("a CIF that resite writes", () => {
   });
 
   it("cannot be asked for with two files from standard input", async () => {
-    const { status, err } = await runCommand("resite", ["-", "--to=-"]);
-    expect([status, err]).toEqual([2, expect.stringContaining("only one of the two files can be standard input")]);
+    for (const to of [["--to=-"], ["--to", "-"]]) {
+      const { status, err } = await runCommand("resite", ["-", ...to]);
+      expect([status, err]).toEqual([2, expect.stringContaining("only one of the two files can be standard input")]);
+    }
+  });
+});
+
+describe("a lone minus as the value of an option", () => {
+  it("is standard output for --output", async () => {
+    const { status, out } = await runCommand("resite", ["fixtures/halite.cif", "--output", "-"]);
+    expect([status, out.includes("F m -3 m")]).toEqual([0, true]);
   });
 });
