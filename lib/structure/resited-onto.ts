@@ -5,6 +5,7 @@ import { changeOfCell } from "./change-of-cell.ts";
 import { compareStructures } from "./comparison-answer.ts";
 import type { ComparisonOptions } from "./comparison-limits.ts";
 import { type Crystal, crystalOf } from "./crystal.ts";
+import { polarSenseNotes } from "./polar-sense.ts";
 import { labelsOf, type Resited, resiteAnswer, uncertaintyNotes } from "./resite-answer.ts";
 import { UNITS_IN_CELL, unitsInCell } from "./units-in-cell.ts";
 
@@ -21,10 +22,11 @@ import { UNITS_IN_CELL, unitsInCell } from "./units-in-cell.ts";
  */
 export function resitedOnto(crystal: Crystal, other: Crystal, options: ComparisonOptions = {}): Resited {
   const { answer: comparison, match } = compareStructures(crystal, other, options);
+  const sense = match && comparison.verdict !== "different" ? polarSenseNotes(crystal, other, match.P) : [];
   const stay = (note: string[]): Resited => ({
     crystal,
     answer: { ...unchanged(crystal), comparison },
-    notes: note,
+    notes: [...sense, ...note],
   });
   if (!match || comparison.verdict === "different") return stay([]);
   if (comparison.hand === "other")
@@ -43,7 +45,7 @@ export function resitedOnto(crystal: Crystal, other: Crystal, options: Compariso
             `on the axes of the second file ${rotations.after} of the ${rotations.before} rotation parts of its space group are left`,
           ]
         : [];
-    notes.push(UNITS_IN_CELL, ...uncertaintyNotes(crystal, change));
+    notes.push(...sense, UNITS_IN_CELL, ...uncertaintyNotes(crystal, change));
     return {
       crystal: changed,
       answer: { ...resiteAnswer(crystal, changed, change, shift, labels), comparison },
