@@ -3,7 +3,7 @@ import { tmpdir } from "node:os";
 import { join } from "node:path";
 import { fileURLToPath } from "node:url";
 import { conclusionOf } from "../../bin/conclusion.ts";
-import { loadCommand } from "../../bin/load-command.ts";
+import { type Command, loadCommand } from "../../bin/load-command.ts";
 import type { Outcome } from "./run-command.ts";
 
 const BUILT = fileURLToPath(new URL("../../dist/bin/commands", import.meta.url));
@@ -11,9 +11,10 @@ const BUILT = fileURLToPath(new URL("../../dist/bin/commands", import.meta.url))
 /** Runs commands in this process from their bundles, which are faster than sources under test. */
 export class BuiltCommands {
   readonly #folder = mkdtempSync(join(tmpdir(), "sitefold-built-"));
+  readonly #loaded = new Map<string, Command>();
 
   async run(name: string, words: readonly string[]): Promise<Outcome> {
-    const command = loadCommand(name, BUILT);
+    const command = this.#command(name);
     const answer = join(this.#folder, "answer");
     const err: string[] = [];
     const write = process.stderr.write;
@@ -27,6 +28,12 @@ export class BuiltCommands {
     } finally {
       process.stderr.write = write;
     }
+  }
+
+  #command(name: string): Command {
+    const command = this.#loaded.get(name) ?? loadCommand(name, BUILT);
+    this.#loaded.set(name, command);
+    return command;
   }
 
   remove(): void {
