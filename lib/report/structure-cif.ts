@@ -84,8 +84,11 @@ const COLUMNS: readonly SiteColumn[] = [
   },
   {
     name: "U_iso_or_equiv",
-    value: ({ displacement: d }) => (d?.kind === "isotropic" ? numberWithSu(d.iso, d.su, 5) : UNKNOWN),
-    wanted: (s) => s.displacement?.kind === "isotropic",
+    value: ({ displacement: d, equivalent }) => {
+      if (d?.kind === "isotropic") return numberWithSu(d.iso, d.su, 5);
+      return equivalent === null ? UNKNOWN : numberWithSu(equivalent, null, 5);
+    },
+    wanted: (s) => s.displacement !== null,
   },
   { name: "disorder_assembly", value: (s) => s.assembly ?? INAPPLICABLE, wanted: (s) => s.assembly !== null },
   { name: "disorder_group", value: (s) => s.disorderGroup ?? INAPPLICABLE, wanted: (s) => s.disorderGroup !== null },

@@ -5,6 +5,7 @@ import { listedAtoms } from "./atom-model.ts";
 import { floatMatrix } from "./atom-set.ts";
 import type { AtomSite } from "./atom-site.ts";
 import { carriedAtom } from "./carried-atom.ts";
+import { equivalentDisplacement } from "./coordinate-list.ts";
 import type { Crystal } from "./crystal.ts";
 import { FreeLabels } from "./free-labels.ts";
 import { type CellNumbers, cellNumbers } from "./reduce-answer.ts";
@@ -17,6 +18,8 @@ export interface ListedSite extends Omit<AtomSite, "span"> {
   readonly wyckoff: string | null;
   /** Order of the site-symmetry group; 1 where the list has no symmetry. */
   readonly order: number;
+  /** Equivalent isotropic U, square angstrom, the same in every setting; null where the site has no displacement. */
+  readonly equivalent: number | null;
 }
 
 /** A structure as an atom list with its symmetry: what a CIF holds. Plain data. */
@@ -61,9 +64,11 @@ export function listedStructure(model: AtomModel): ListedStructure {
         from: crystal.metric,
         to: metric,
       });
-      const { images, symmetry: own } = crystal.sites[site]!;
+      const { images, symmetry: own, displacement } = crystal.sites[site]!;
       const multiplicity = isKept ? images.length : 1;
-      row = { ...atom, multiplicity, wyckoff: letters[site] ?? null, order: isKept ? own.operations.length : 1 };
+      const equivalent = equivalentDisplacement(displacement, crystal.metric);
+      const order = isKept ? own.operations.length : 1;
+      row = { ...atom, multiplicity, wyckoff: letters[site] ?? null, order, equivalent };
       carried.set(key, row);
     }
     return { ...row, position, label: labels.claim(crystal.sites[site]!.label) };
