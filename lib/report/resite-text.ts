@@ -55,8 +55,8 @@ function handText({ hand, mirrored }: StandardisationAnswer): string {
     return "the group has no operation of the second kind: the hand of the structure is kept, its mirror image was not tried";
   }
   return mirrored
-    ? "the mirror image of the structure in the file is described: its hand was left open, and this one comes first"
-    : "the hand of the structure was left open; its mirror image does not come first";
+    ? "the mirror image of the structure in the file is described: its hand was left open, and this one comes first (lower space-group number, else smaller gamma)"
+    : "the hand of the structure was left open; its mirror image does not come first (lower space-group number, else smaller gamma)";
 }
 
 function plural(n: number, word: string): string {
