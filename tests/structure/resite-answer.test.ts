@@ -58,7 +58,16 @@ describe("a structure in another setting", () => {
         expect(farthestModuloCells(points(there.crystal), expectedPoints)).toBeLessThan(1e-9);
         const way = parseTransformation(`${there.answer.P};${there.answer.p}`);
         const back = resited(there.crystal, { kind: "setting", text: formatTransformation(reverse(way)) });
-        expect(farthestModuloCells(points(back.crystal), points(crystal))).toBeLessThan(1e-9);
+        const expectedBack = carried(points(there.crystal), back.answer.P, back.answer.p);
+        expect(farthestModuloCells(points(back.crystal), expectedBack)).toBeLessThan(1e-9);
+        // whole cells of a primitive setting are centring translations of a centred one
+        points(back.crystal).forEach((x, k) => {
+          const apart = crystal.group.centrings.map(({ n, d }) => {
+            const centred = x.map((e, i) => e + n[i]! / d) as unknown as Vec3;
+            return farthestModuloCells([centred], [points(crystal)[k]!]);
+          });
+          expect(Math.min(...apart)).toBeLessThan(1e-9);
+        });
         expect(
           farthest(
             [Object.values(back.crystal.metric.g) as unknown as Vec3],
