@@ -3,25 +3,15 @@ import { type CifLoop, findLoop } from "../cif/index.ts";
 import {
   type AtomSite,
   type CrystalSite,
+  EIGHT_PI_SQUARED,
   type Mat3,
   type Metric,
   multiply3,
+  reciprocalLengths,
   symmetricEigen,
 } from "../structure/index.ts";
-import { TENSOR_COMPONENTS } from "../symmetry/index.ts";
+import { TENSOR_COMPONENTS, TENSOR_PAIRS } from "../symmetry/index.ts";
 import { type AuditInput, parameterRounding, rowNumber, rowText, type StatedNumber } from "./audit-input.ts";
-
-/** Row and column of each component, in the order of TENSOR_COMPONENTS. */
-const PAIRS = [
-  [0, 0],
-  [1, 1],
-  [2, 2],
-  [0, 1],
-  [0, 2],
-  [1, 2],
-] as const;
-/** U = B / 8 pi^2. */
-const EIGHT_PI_SQUARED = 8 * Math.PI * Math.PI;
 
 /** Six numbers: 11 22 33 12 13 23. */
 export type Six = readonly number[];
@@ -67,16 +57,11 @@ function readTensor(loop: CifLoop, row: number, letter: string, divisor: number)
   };
 }
 
-/** Lengths of the reciprocal axes, by which U_ij are scaled. */
-function reciprocalLengths({ toFractional: m }: Metric): readonly [number, number, number] {
-  return [Math.hypot(m[0], m[1], m[2]), Math.hypot(m[3], m[4], m[5]), Math.hypot(m[6], m[7], m[8])];
-}
-
 /** U_ij as a tensor on the axes of the cell: mean squares of fractional displacements. */
 function contravariant(metric: Metric, u: Six): Mat3 {
   const r = reciprocalLengths(metric);
   const m = new Array<number>(9).fill(0);
-  PAIRS.forEach(([i, j], k) => {
+  TENSOR_PAIRS.forEach(([i, j], k) => {
     m[3 * i + j] = u[k]! * r[i] * r[j];
     m[3 * j + i] = m[3 * i + j]!;
   });
@@ -85,7 +70,7 @@ function contravariant(metric: Metric, u: Six): Mat3 {
 
 function covered(metric: Metric, m: Mat3): Six {
   const r = reciprocalLengths(metric);
-  return PAIRS.map(([i, j]) => m[3 * i + j]! / (r[i] * r[j]));
+  return TENSOR_PAIRS.map(([i, j]) => m[3 * i + j]! / (r[i] * r[j]));
 }
 
 function transposed(m: Mat3 | IntMat3): Mat3 {

@@ -1,22 +1,8 @@
 import type { IntMat3 } from "../algebra/index.ts";
+import { TENSOR_PAIRS } from "../symmetry/index.ts";
 import type { AtomSite } from "./atom-site.ts";
-import { type Mat3, type Metric, multiply3, type Vec3 } from "./cell.ts";
+import { type Mat3, type Metric, multiply3, reciprocalLengths, type Vec3 } from "./cell.ts";
 import type { DisplacementTensor } from "./displacement.ts";
-
-/** Order of the six components of a displacement tensor. */
-const PAIRS = [
-  [0, 0],
-  [1, 1],
-  [2, 2],
-  [0, 1],
-  [0, 2],
-  [1, 2],
-] as const;
-
-/** Lengths of the reciprocal axes, 1 / angstrom. */
-function reciprocalLengths({ toFractional: r }: Metric): Vec3 {
-  return [Math.hypot(r[0], r[1], r[2]), Math.hypot(r[3], r[4], r[5]), Math.hypot(r[6], r[7], r[8])];
-}
 
 /**
  * A displacement tensor on other axes. U_ij a*_i a*_j transforms as products of coordinates do.
@@ -33,8 +19,8 @@ export function carriedDisplacement(
   const [p, q] = [reciprocalLengths(from), reciprocalLengths(to)];
   // U'_ij = sum over k, l of t_ik t_jl U_kl
   const t = M.map((e, k) => (e * p[k % 3]!) / q[Math.floor(k / 3)]!);
-  const rows = PAIRS.map(([i, j]) =>
-    PAIRS.map(([k, l]) => {
+  const rows = TENSOR_PAIRS.map(([i, j]) =>
+    TENSOR_PAIRS.map(([k, l]) => {
       const direct = t[3 * i + k]! * t[3 * j + l]!;
       return k === l ? direct : direct + t[3 * i + l]! * t[3 * j + k]!;
     }),

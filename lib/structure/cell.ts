@@ -111,13 +111,18 @@ export function lengthOf(metric: Metric, v: Vec3): number {
   return Math.sqrt(Math.max(0, square));
 }
 
+/** Lengths of the reciprocal axes a*, b*, c*, 1 / angstrom: one over the spacings of the lattice planes x, y, z = 1. */
+export function reciprocalLengths({ toFractional: r }: Metric): Vec3 {
+  return [Math.hypot(r[0], r[1], r[2]), Math.hypot(r[3], r[4], r[5]), Math.hypot(r[6], r[7], r[8])];
+}
+
 /**
  * How far two points within a distance (angstrom) of each other may differ in each coordinate: the distance over the
  * spacings of the lattice planes x, y, z = 1. A last bit is added, so that rounding excludes no point.
  */
-export function planeReach({ toFractional: m }: Metric, distance: number): Vec3 {
-  const along = (i: number) => Math.hypot(m[3 * i]!, m[3 * i + 1]!, m[3 * i + 2]!) * distance + ROUNDING;
-  return [along(0), along(1), along(2)];
+export function planeReach(metric: Metric, distance: number): Vec3 {
+  const [a, b, c] = reciprocalLengths(metric);
+  return [a * distance + ROUNDING, b * distance + ROUNDING, c * distance + ROUNDING];
 }
 
 /** Larger than what sums of a few products of coordinates lose in the last bit. */

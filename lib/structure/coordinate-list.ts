@@ -1,5 +1,5 @@
 import type { AtomModel } from "./atom-model.ts";
-import type { Metric, Vec3 } from "./cell.ts";
+import { type Metric, reciprocalLengths, type Vec3 } from "./cell.ts";
 import type { DisplacementTensor } from "./displacement.ts";
 import { type CellNumbers, cellNumbers } from "./reduce-answer.ts";
 import { symmetryCode } from "./symmetry-code.ts";
@@ -88,13 +88,11 @@ export function coordinateList(model: AtomModel): CoordinateList {
 }
 
 /** A third of the trace of the tensor on Cartesian axes. Source: R. X. Fischer and E. Tillmanns, Acta Cryst. C44 (1988) 775. */
-export function equivalentDisplacement(
-  tensor: DisplacementTensor | null,
-  { g, toFractional: r }: Metric,
-): number | null {
+export function equivalentDisplacement(tensor: DisplacementTensor | null, metric: Metric): number | null {
   if (tensor === null) return null;
   if (tensor.kind === "isotropic") return tensor.iso;
-  const [p, q, s] = [0, 3, 6].map((i) => Math.hypot(r[i]!, r[i + 1]!, r[i + 2]!)) as [number, number, number];
+  const { g } = metric;
+  const [p, q, s] = reciprocalLengths(metric);
   const [u11, u22, u33, u12, u13, u23] = tensor.u;
   const diagonal = u11 * p * p * g[0] + u22 * q * q * g[4] + u33 * s * s * g[8];
   return (diagonal + 2 * (u12 * p * q * g[1] + u13 * p * s * g[2] + u23 * q * s * g[5])) / 3;

@@ -14,7 +14,7 @@ export type DisplacementTensor =
     };
 
 /** U = B / 8 pi^2. */
-const EIGHT_PI_SQUARED = 8 * Math.PI * Math.PI;
+export const EIGHT_PI_SQUARED = 8 * Math.PI * Math.PI;
 
 /**
  * Displacement parameters by row of the atom list (key: row number): anisotropic ones where the block has

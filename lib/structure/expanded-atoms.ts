@@ -2,7 +2,7 @@ import { type IntVec3, inverseRatMat, lcm, RAT_IDENTITY, type RatMat3 } from "..
 import { InputProblem } from "../problem.ts";
 import { IDENTITY_TRANSFORMATION, type Transformation } from "../symmetry/index.ts";
 import { floatMatrix } from "./atom-set.ts";
-import { apply3, type Metric, type Vec3 } from "./cell.ts";
+import { apply3, type Metric, reciprocalLengths, type Vec3 } from "./cell.ts";
 import { AtomAction, type CellAtom, cellAtoms, type LatticeAtom } from "./cell-atoms.ts";
 import { axesInPrimitive, type CellTranslations, translationsBetween } from "./cell-lattice.ts";
 import { metricIn } from "./change-of-cell.ts";
@@ -107,9 +107,8 @@ interface Box {
 
 function boxOf({ range, boundary = "in" }: ExpansionOptions, metric: Metric): Box {
   if (!range) return { low: [0, 0, 0], high: [1, 1, 1], isCell: true };
-  const r = metric.toFractional;
   const sign = boundary === "in" ? 1 : -1;
-  const margin = [0, 3, 6].map((i) => sign * ON_BOUNDARY * Math.hypot(r[i]!, r[i + 1]!, r[i + 2]!));
+  const margin = reciprocalLengths(metric).map((e) => sign * ON_BOUNDARY * e);
   const empty = range.findIndex(([lo, hi]) => !(lo <= hi));
   if (empty >= 0) {
     const [lo, hi] = range[empty]!;

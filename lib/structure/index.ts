@@ -36,6 +36,7 @@ export {
   metricOf,
   multiply3,
   planeReach,
+  reciprocalLengths,
   type Vec3,
 } from "./cell.ts";
 export { AtomAction, type CellAtom, cellAtoms, type LatticeAtom } from "./cell-atoms.ts";
@@ -115,7 +116,7 @@ export {
 export { DALTON_PER_CUBIC_ANGSTROM, massOf } from "./density.ts";
 export type { Deviation } from "./deviation.ts";
 export { type ComponentChoice, chooseComponents } from "./disorder.ts";
-export type { DisplacementTensor } from "./displacement.ts";
+export { type DisplacementTensor, EIGHT_PI_SQUARED } from "./displacement.ts";
 export { type Element, element, readLabel, readTypeSymbol, type SpeciesReading } from "./elements.ts";
 export { type ExpandedAtom, type ExpansionOptions, expandedAtoms, type Interval } from "./expanded-atoms.ts";
 export { type Formula, formatFormula, hillOrder, parseFormula } from "./formula-text.ts";

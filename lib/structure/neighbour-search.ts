@@ -1,4 +1,4 @@
-import type { Metric, Vec3 } from "./cell.ts";
+import { type Metric, reciprocalLengths, type Vec3 } from "./cell.ts";
 
 /** Boxes per atom that still pay; a nearly empty cell is not cut finer. */
 const BOXES_PER_ATOM = 2;
@@ -107,7 +107,7 @@ class BoxGrid {
 
   constructor(metric: Metric, points: readonly Vec3[], reach: number) {
     const n = points.length;
-    const thickness = [0, 1, 2].map((i) => 1 / Math.hypot(...metric.toFractional.slice(3 * i, 3 * i + 3)));
+    const thickness = reciprocalLengths(metric).map((e) => 1 / e);
     this.counts = boxCounts(thickness, reach, n);
     this.spans = [0, 1, 2].map((i) => Math.ceil((reach * this.counts[i]!) / thickness[i]! - 1e-12)) as unknown as [
       number,

@@ -1,4 +1,4 @@
-import { lengthOf, type Metric, planeReach, type Vec3 } from "./cell.ts";
+import { lengthOf, type Metric, reciprocalLengths, type Vec3 } from "./cell.ts";
 
 /** More boxes along an axis would only spread the points thinner. */
 const MOST_BOXES = 128;
@@ -18,7 +18,7 @@ export class PeriodicPoints {
   constructor(metric: Metric, reach: number) {
     this.metric = metric;
     this.reach = reach;
-    const thickness = planeReach(metric, 1).map((e) => 1 / e);
+    const thickness = reciprocalLengths(metric).map((e) => 1 / e);
     const count = (d: number) => Math.max(1, Math.min(MOST_BOXES, Math.floor(d / Math.max(reach, 1e-6))));
     this.boxes = [count(thickness[0]!), count(thickness[1]!), count(thickness[2]!)];
   }

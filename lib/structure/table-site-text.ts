@@ -1,12 +1,10 @@
 import P from "parsimmon";
 import { parseNumb } from "../cif/index.ts";
 import { InputProblem, type Span } from "../problem.ts";
-import type { DisplacementTensor } from "./displacement.ts";
+import { type DisplacementTensor, EIGHT_PI_SQUARED } from "./displacement.ts";
 import { type MeasuredNumber, PARAMETERS, type TableCoordinate, type TableSite } from "./site-table.ts";
 import { type CoordinateTerm, coordinateOf, formatCoordinate, formatMeasured } from "./table-coordinate.ts";
 
-/** U = B / 8 pi^2. */
-const EIGHT_PI_SQUARED = 8 * Math.PI * Math.PI;
 const TENSOR = ["U11", "U22", "U33", "U12", "U13", "U23"] as const;
 
 /** What a line says besides label, position and coordinates. */

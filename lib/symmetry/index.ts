@@ -88,7 +88,7 @@ export { rotationIndex, rotationParts, type SpaceGroup, spaceGroup } from "./spa
 export { type SpaceGroupType, spaceGroupType, spaceGroupTypes } from "./space-group-type.ts";
 export { type SpecialCondition, specialConditions } from "./special-reflection-conditions.ts";
 export { conventionalSetting, type IdentifiedGroup, identifyGroup, type SpaceGroupSummary } from "./summary.ts";
-export { TENSOR_COMPONENTS, type TensorConstraint, tensorConstraint } from "./tensor-constraint.ts";
+export { TENSOR_COMPONENTS, TENSOR_PAIRS, type TensorConstraint, tensorConstraint } from "./tensor-constraint.ts";
 export {
   chain,
   IDENTITY_TRANSFORMATION,

@@ -1,7 +1,7 @@
 import { gcd, hermiteRows, type IntMat3, lcm } from "../algebra/index.ts";
 
 /** Row and column of each component, in the order of TENSOR_COMPONENTS. */
-const PAIRS = [
+export const TENSOR_PAIRS = [
   [0, 0],
   [1, 1],
   [2, 2],
@@ -53,8 +53,8 @@ export function tensorConstraint(rotations: readonly IntMat3[]): TensorConstrain
 
 /** Adds the action of W on the six components: (W t W^T)_ij = sum over k, l of W_ik t_kl W_jl. */
 function addSquare(sum: number[], W: IntMat3): void {
-  PAIRS.forEach(([i, j], row) => {
-    PAIRS.forEach(([k, l], column) => {
+  TENSOR_PAIRS.forEach(([i, j], row) => {
+    TENSOR_PAIRS.forEach(([k, l], column) => {
       const direct = W[3 * i + k]! * W[3 * j + l]!;
       const crossed = k === l ? 0 : W[3 * i + l]! * W[3 * j + k]!;
       sum[6 * row + column]! += direct + crossed;
